@@ -7,8 +7,8 @@ export type StampKind = (typeof stampKinds)[number]
 
 /**
  * One stamp of one marking. Place and size are paper points on the page of `scriptPageId`. `x`, `y` is the stamp's anchor:
- * the corner of a tick, the middle of a cross, the top left of a ring's box, the left end of a line, the left end of a
- * note's first baseline. `w`, `h` only matter to rings and lines. `worth` is in half marks and stays what it was when pressed.
+ * the corner of a tick, the middle of a cross, the tip of a caret, the top left of a ring's box, the left end of a line, the left
+ * end of the first baseline of a note, a code or "seen", the middle of a typed mark, a nought or "nr". `w`, `h` only matter to rings and lines. `worth` is in half marks and stays what it was when pressed.
  */
 export const Stamp = z.object({
   id: z.uuid(),

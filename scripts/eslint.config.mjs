@@ -7,7 +7,7 @@ const everything = ['lib/core', ...arrows, 'lib/infra', 'lib/tasks', 'db', 'comp
 const mayImport = {
   'lib/core': [],
   ...Object.fromEntries(arrows.map((arrow) => [arrow, ['lib/core']])),
-  'lib/infra': ['lib/core', 'db'],
+  'lib/infra': ['lib/core'],
   db: ['lib/core', 'lib/infra'],
   'lib/tasks': ['lib/core', ...arrows, 'lib/infra', 'db'],
   components: ['lib/core'],

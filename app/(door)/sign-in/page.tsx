@@ -1,0 +1,12 @@
+import type { Metadata } from 'next'
+import { redirect } from 'next/navigation'
+import { currentActor } from '@/app/_door/require-actor'
+import { SignInForm } from '@/components/door/sign-in-form'
+import { env } from '@/lib/infra/env'
+
+export const metadata: Metadata = { title: 'Sign in' }
+
+export default async function SignInPage() {
+  if (await currentActor()) redirect('/')
+  return <SignInForm school={env.schoolName} demo={env.demo} />
+}

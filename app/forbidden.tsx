@@ -1,0 +1,5 @@
+import Link from 'next/link'
+
+export default function Forbidden() {
+  return <main className="page"><h1>Not yours to open</h1><p className="my-3">Your account may not do this here. Ask the paper’s owner or the school’s admin.</p><Link className="btn" href="/">To your papers</Link></main>
+}

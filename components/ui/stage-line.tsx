@@ -1,18 +1,20 @@
 import Link from 'next/link'
 import { Fragment } from 'react'
+import type { StageName } from '@/lib/core/paper-stages'
 
-export type Stage = Readonly<{ name: 'Set' | 'Scan' | 'Sort' | 'Mark' | 'Second-mark' | 'Hand back'; href: string; left: string }>
+/** `href` null: this person may not open the stage, only read how it stands. */
+export type Stage = Readonly<{ name: StageName; href: string | null; left: string }>
 
 /** What is left at each stage in plain words and counts, leading to the next thing to do. */
-export function StageLine({ stages, now }: { stages: readonly Stage[]; now?: Stage['name'] }) {
+export function StageLine({ stages, now }: { stages: readonly Stage[]; now?: StageName }) {
   return (
     <nav className="stages" aria-label="Stages of this paper">
-      {stages.map((stage, k) => (
-        <Fragment key={stage.name}>
+      {stages.map(({ name, href, left }, k) => (
+        <Fragment key={name}>
           {k > 0 && <i aria-hidden />}
-          <Link href={stage.href} aria-current={stage.name === now ? 'page' : undefined}>
-            <b>{stage.name}</b> <span>{stage.left}</span>
-          </Link>
+          {href === null
+            ? <span className="stage"><b>{name}</b> <span>{left}</span></span>
+            : <Link className="stage" href={href} aria-current={name === now ? 'page' : undefined}><b>{name}</b> <span>{left}</span></Link>}
         </Fragment>
       ))}
     </nav>

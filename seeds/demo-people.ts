@@ -1,0 +1,17 @@
+import type { Role } from '@/lib/core/actor'
+
+/** Everyone's password in the demo school. */
+export const demoPassword = 'quietpaper'
+
+export type DemoPerson = Readonly<{ userName: string; givenName: string; familyName: string; roles: readonly Role[]; says: string }>
+
+/** Staff of our own invented Kestrel Bay School. */
+export const demoStaff: readonly DemoPerson[] = [
+  { userName: 'r.adeyemi', givenName: 'Ruth', familyName: 'Adeyemi', roles: ['teacher', 'marker'], says: 'teacher: owns the papers' },
+  { userName: 'm.osei', givenName: 'Marcus', familyName: 'Osei', roles: ['marker'], says: 'marker: marks some questions' },
+  { userName: 'k.lindqvist', givenName: 'Karin', familyName: 'Lindqvist', roles: ['moderator', 'marker'], says: 'moderator: second-marks a sample' },
+  { userName: 'a.whitcombe', givenName: 'Ada', familyName: 'Whitcombe', roles: ['admin'], says: 'admin: people, classes, settings' },
+]
+
+/** A student of the class set that is handed back; the user name is the candidate number. */
+export const demoStudent = { userName: '6113', says: 'student: a returned script' } as const

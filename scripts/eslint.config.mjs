@@ -24,7 +24,7 @@ const houseRule = Object.keys(mayImport).map((folder) => ({
   rules: { 'no-restricted-imports': ['error', { patterns: [...(folder === 'app' ? [] : [{ group: ['../*'], message: 'use @/ outside the folder' }]), ...forbid(folder)] }] },
 }))
 
-export default [
+const config = [
   { ignores: ['.next*/**', 'data/**', 'node_modules/**', 'public/**', 'tests/results/**', 'tests/report/**', 'next-env.d.ts'] },
   ...next,
   {
@@ -41,3 +41,5 @@ export default [
   { files: ['app/**/*.{ts,tsx}', 'components/**/*.{ts,tsx}', 'lib/**/*.ts', 'db/**/*.ts'], ignores: ['lib/infra/env.ts'], rules: { 'no-restricted-properties': ['error', { object: 'process', property: 'env', message: 'read lib/infra/env.ts' }] } },
   ...houseRule,
 ]
+
+export default config

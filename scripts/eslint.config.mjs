@@ -40,6 +40,8 @@ const config = [
   // The environment is read once, through zod.
   { files: ['app/**/*.{ts,tsx}', 'components/**/*.{ts,tsx}', 'lib/**/*.ts', 'db/**/*.ts'], ignores: ['lib/infra/env.ts'], rules: { 'no-restricted-properties': ['error', { object: 'process', property: 'env', message: 'read lib/infra/env.ts' }] } },
   ...houseRule,
+  // A test beside its subject may use what tests share, as the tests folder itself may.
+  { files: ['**/*.test.{ts,tsx}'], rules: { 'no-restricted-imports': ['error', { patterns: [{ group: ['../*'], message: 'use @/ outside the folder' }] }] } },
 ]
 
 export default config

@@ -69,6 +69,6 @@ export type Paper = Readonly<{
 }>
 
 /** The most a paper can give: withdrawn-out questions left out. */
-export function paperMaximum(questions: readonly Question[]): HalfMarks {
+export function paperMaximum(questions: readonly Pick<Question, 'maximum' | 'withdrawn'>[]): HalfMarks {
   return questions.reduce((total, question) => (question.withdrawn?.as === 'out' ? total : total + question.maximum), 0) as HalfMarks
 }

@@ -28,9 +28,13 @@ export type User = Readonly<{
 async function withRoles(db: Db, row: UserRow | undefined): Promise<User | null> {
   if (!row) return null
   const roles = await db<{ user_id: string; role: Role }>('user_roles').where({ user_id: row.id }).pluck('role')
+  return toUser(row, roles as Role[])
+}
+
+function toUser(row: UserRow, roles: readonly Role[]): User {
   return {
     id: row.id, email: row.email, userName: row.user_name, givenName: row.given_name, familyName: row.family_name,
-    passwordHash: row.password_hash, sessionNumber: row.session_number, disabledAt: row.disabled_at, roles: roles as Role[],
+    passwordHash: row.password_hash, sessionNumber: row.session_number, disabledAt: row.disabled_at, roles,
   }
 }
 
@@ -89,4 +93,27 @@ export async function countUsers(db: Db): Promise<number> {
 export async function studentIdOfUser(db: Db, userId: string): Promise<string | null> {
   const row = await db('students').where({ user_id: userId }).first<{ id: string } | undefined>('id')
   return row?.id ?? null
+}
+
+type NameChange = Readonly<{ email: string | null; userName: string | null; givenName: string; familyName: string }>
+
+export async function setNames(db: Db, userId: string, to: NameChange): Promise<void> {
+  await db<UserRow>('users').where({ id: userId }).update({
+    email: to.email?.toLowerCase() ?? null, user_name: to.userName?.toLowerCase() ?? null, given_name: to.givenName, family_name: to.familyName,
+  })
+}
+
+/** Admins who can sign in: enabled and with a password. */
+export async function listWorkingAdmins(db: Db): Promise<string[]> {
+  return db('users').join('user_roles', 'user_roles.user_id', 'users.id')
+    .where({ role: 'admin' }).whereNull('disabled_at').whereNotNull('password_hash').pluck('users.id')
+}
+
+/** Everyone holding one of the roles, by family name. */
+export async function listUsers(db: Db, having: readonly Role[]): Promise<User[]> {
+  const rows = await db<UserRow>('users').whereIn('id', db('user_roles').whereIn('role', [...having]).select('user_id')).orderBy(['family_name', 'given_name', 'id'])
+  const held = await db<{ user_id: string; role: Role }>('user_roles').select('user_id', 'role')
+  const rolesOf = new Map<string, Role[]>()
+  for (const { user_id, role } of held) rolesOf.set(user_id, [...(rolesOf.get(user_id) ?? []), role])
+  return rows.map((row) => toUser(row, rolesOf.get(row.id) ?? []))
 }

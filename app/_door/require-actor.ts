@@ -4,6 +4,7 @@ import { redirect } from 'next/navigation'
 import type { Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
 import { actorOfSession } from '@/lib/tasks/actor-of-session'
+import { schoolIsEmpty } from '@/lib/tasks/school-is-empty'
 import { authOptions } from './auth-options'
 
 /** Who asks, or null when nobody is signed in. One look-up a request. */
@@ -20,9 +21,9 @@ export async function requireActor(): Promise<Actor> {
   return actor
 }
 
-/** For pages: leads to the sign-in page. */
+/** For pages: leads to the sign-in page, in an empty school to where its first admin is made. */
 export async function actorOrSignIn(): Promise<Actor> {
   const actor = await currentActor()
-  if (!actor) redirect('/sign-in')
+  if (!actor) redirect((await schoolIsEmpty()) ? '/first-admin' : '/sign-in')
   return actor
 }

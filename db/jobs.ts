@@ -45,3 +45,8 @@ export async function finishJob(db: Db, id: string, worker: string, error: strin
 export async function postponeJob(db: Db, id: string, worker: string, delayMs: number, error: string): Promise<void> {
   await db<JobRow>('jobs').where({ id, worker }).update({ state: 'waiting', run_after: Date.now() + delayMs, error_code: error, lease_until: null })
 }
+
+/** Gives a job back that a worker stopped half way on purpose: this try does not count. */
+export async function releaseJob(db: Db, id: string, worker: string): Promise<void> {
+  await db<JobRow>('jobs').where({ id, worker, state: 'running' }).update({ state: 'waiting', run_after: Date.now(), lease_until: null, attempts: db.raw('attempts - 1') })
+}

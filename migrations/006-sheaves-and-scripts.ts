@@ -48,13 +48,15 @@ const statements = [
   ) strict`,
   `create unique index script_pages_once on script_pages(script_id, paper_page) where paper_page is not null`,
   `create unique index script_pages_leaf on script_pages(leaf_id) where leaf_id is not null`,
-  // Position counts from 0 in the sheaf. Width and height are pixels of the stored image. "set_aside": kept but not used.
+  // Position counts from 0 in the sheaf. "glance" is what the leaf shows by itself, before its neighbours are known. Width and height are pixels of the stored image. "set_aside": kept but not used.
   `create table leaves (
     id text primary key,
     sheaf_id text not null references sheaves(id),
     position integer not null,
     half integer check (half in (0, 1)),
     state text not null default 'read' check (state in ('read', 'placed', 'loose', 'blank', 'set_aside')),
+    glance text not null default 'clear' check (glance in ('clear', 'unclear', 'empty', 'unreadable')),
+    read_at integer not null default 0,
     width integer, height integer,
     turn integer not null default 0 check (turn in (0, 90, 180, 270)),
     homography text check (homography is null or json_valid(homography)),
@@ -69,6 +71,19 @@ const statements = [
   `create unique index leaves_once on leaves(sheaf_id, position, coalesce(half, 0))`,
   `create index leaves_script_page on leaves(script_page_id)`,
   `create index leaves_state on leaves(sheaf_id, state)`,
+  // What a person decided at the sorting table: the rows it touched as they were and as they became, so that it can be undone.
+  `create table sorting_decisions (
+    id text primary key,
+    number integer not null unique,
+    paper_id text not null references papers(id),
+    act text not null,
+    before text not null check (json_valid(before)),
+    after text not null check (json_valid(after)),
+    decided_by text not null references users(id),
+    decided_at integer not null,
+    undone_at integer
+  ) strict`,
+  `create index sorting_decisions_last on sorting_decisions(paper_id, decided_by, number)`,
 ]
 
 export async function up(knex: Knex): Promise<void> {
@@ -76,5 +91,5 @@ export async function up(knex: Knex): Promise<void> {
 }
 
 export async function down(knex: Knex): Promise<void> {
-  for (const table of ['leaves', 'script_pages', 'scripts', 'sheaf_class_sets', 'sheaves']) await knex.schema.dropTable(table)
+  for (const table of ['sorting_decisions', 'leaves', 'script_pages', 'scripts', 'sheaf_class_sets', 'sheaves']) await knex.schema.dropTable(table)
 }

@@ -19,6 +19,10 @@ export const errorStatus = {
   own_first_marking: 403,
   question_withdrawn: 409,
   not_marked_yet: 409,
+  nothing_stamped: 409,
+  nought_with_marks: 422,
+  base_missing: 422,
+  begun_by_other: 409,
   // setting a paper
   paper_invalid: 422,
   has_stamps: 409,

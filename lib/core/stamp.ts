@@ -40,3 +40,7 @@ export function penOf(round: Round): Pen {
   if (round === 'second' || round === 'third' || round === 'review') return 'second'
   return round === 'agreed' ? 'agreed' : 'first'
 }
+
+/** A stamp as it comes from the desk: it names its response and round, and the server finds or begins the marking. */
+export const PressedStamp = Stamp.omit({ markingId: true }).extend({ responseId: z.string().min(1), round: z.enum(rounds) })
+export type PressedStamp = z.infer<typeof PressedStamp>

@@ -1,0 +1,77 @@
+import type { Homography, Turn } from './paper-space'
+
+/**
+ * How a page's scan picture is kept in the sheaf. `jpeg` and `g4` are one image stream of the file, decoded as it is;
+ * `rendered` pages (strips, layers, forms, other codings) are drawn by a PDF engine.
+ * Width and height are pixels of the *stored image*: the frame that homographies and rotations speak of. It is the image's
+ * own pixels for a page that one image covers, however it is coded, and the page before its /Rotate otherwise, drawn at
+ * the resolution of its images (strips: as if stacked). `shownTurn` is how far the PDF turns the stored image clockwise to show it.
+ */
+export type PageImage = Readonly<{
+  encoding: 'jpeg' | 'g4' | 'rendered'
+  width: number
+  height: number
+  dpiX: number
+  dpiY: number
+  shownTurn: Turn
+}>
+
+/** What keeps a leaf from being read at all. */
+export type LeafProblem = 'page_unreadable' | 'page_too_large' | 'page_empty'
+
+/** A page of the blank paper that a leaf may be, with how the leaf lies on it. `confidence` runs from 0 to 1, alike for grey, colour and 1-bit scans. */
+export type PageGuess = Readonly<{ paperPage: number; rotation: Turn; homography: Homography; confidence: number }>
+
+/**
+ * What one leaf shows by itself, whatever its neighbours are: stored leaf by leaf, so that reading can be taken up again.
+ * `guesses` are best first. `clear` says that the first is certain: its print is there and no other page explains it as well.
+ * `ink` is the writing on the first guess's page (see InkMap), for telling a second scan of a page from another student's.
+ */
+export type LeafReading = Readonly<{
+  index: number
+  half?: 0 | 1
+  image: PageImage | null
+  empty: boolean
+  guesses: readonly PageGuess[]
+  clear: boolean
+  ink: InkMap | null
+  problem?: LeafProblem
+}>
+
+/** The reading of a leaf that shows nothing, and why. */
+export function unread(index: number, problem: LeafProblem): LeafReading {
+  return { index, image: null, empty: false, guesses: [], clear: false, ink: null, problem }
+}
+
+/** How much was written in each 3 mm square of a page, 0 to 255, base64 of row after row. */
+export type InkMap = string
+export const inkCellPoints = (3 * 72) / 25.4
+
+/** Why a leaf is where it is, in words for programs; the sorting table says them as sentences. */
+export type LeafReason =
+  | 'unreadable'
+  | 'unlike_paper'
+  | 'not_clear'
+  | 'duplicate_page'
+  | 'two_page_ones'
+  | 'two_of_a_page'
+  | 'page_missing'
+  | 'order_unclear'
+  | 'pages_swapped'
+
+/** Where a leaf goes. `script` is a running number from 1. `missing` names the pages that its script lacks. */
+export type LeafFinding = Readonly<{
+  index: number
+  half?: 0 | 1
+  kind: 'script' | 'blank' | 'loose'
+  script: number | null
+  paperPage: number | null
+  rotation: Turn
+  homography: Homography | null
+  confidence: number
+  /** The likeliest pages, best first, at most three. */
+  guesses: readonly PageGuess[]
+  reasons: readonly LeafReason[]
+  missing: readonly number[]
+  problem?: LeafProblem
+}>

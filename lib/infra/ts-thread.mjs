@@ -1,0 +1,8 @@
+// First code of a thread: lets it load TypeScript, then hands over to the module named in its workerData.
+import { workerData } from 'node:worker_threads'
+import { register } from 'tsx/esm/api'
+
+register()
+const { module: file } = workerData
+const module = await import(file)
+export default module.default

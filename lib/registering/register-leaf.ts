@@ -1,0 +1,127 @@
+import type { GreyPicture } from '@/lib/core/grey-picture'
+import type { LeafReading, PageGuess, PageImage } from '@/lib/core/leaf'
+import { turnOf, type Homography, type Turn } from '@/lib/core/paper-space'
+import { blockFit } from './block-fit'
+import { bestShift, marginsFor, uprightInk, type CoarsePlace } from './coarse'
+import { printFound, shareFound } from './confirm'
+import { isEmpty } from './empty-leaf'
+import { fineFit } from './fine'
+import { inkMap } from './ink-map'
+import { level, type Levelled } from './level'
+import type { Cv } from './opencv'
+import { scanDensity } from './scan-density'
+import { boxShrink, shrinkTo, type Shrunk } from './shrink'
+import { skews } from './skew'
+import type { Template } from './template'
+import { confidences, type Rival } from './weigh'
+
+type Candidate = CoarsePlace & Readonly<{ template: Template }>
+/** A leaf made ready for being compared: levelled at 100 dpi. */
+type Ready = Readonly<{ shrunk: Shrunk; levelled: Levelled; ink12: GreyPicture }>
+
+/** A share of print found from which no further look is needed, when no other page comes near. */
+const plainlyFound = 0.5
+const rivalLikeness = 0.6
+const mostTried = 4
+
+export const clearFrom = 0.5
+
+/**
+ * What one leaf shows by itself: which page of the paper it is, how it lies, whether it is empty.
+ * Tries every page both ways up (and sideways when its shape asks for it), no printed marks needed.
+ */
+export function registerLeaf(cv: Cv, image: PageImage, picture: GreyPicture, paper: readonly Template[]): Omit<LeafReading, 'index'> {
+  const ready = prepare(cv, image, picture, paper)
+  const empty = isEmpty(ready.levelled.ink)
+  let rivals = empty ? [] : tryCandidates(cv, ready, paper, skewsOf(ready))
+  if (!empty && (rivals[0]?.share ?? 0) < 0.35) rivals = [...rivals, ...tryCandidates(cv, ready, paper, () => [-3, -1.5, 0, 1.5, 3])].sort((a, b) => b.share - a.share)
+  const weighed = confidences(rivals)
+  const guesses = weighed.slice(0, 3).map((rival) => guessOf(rival, ready))
+  const best = weighed[0]
+  return {
+    image, empty: empty && !best, guesses, clear: best !== undefined && best.confidence >= clearFrom,
+    ink: best && best.share >= 0.3 ? inkMap(ready.levelled.white, best.template, best.map) : null,
+  }
+}
+
+/** Registers a leaf to the page a person says it is. Null when its print cannot be found there. */
+export function registerToPage(cv: Cv, image: PageImage, picture: GreyPicture, page: Template): PageGuess | null {
+  const ready = prepare(cv, image, picture, [page])
+  const tries = [skewsOf(ready), () => [-4, -2.5, -1, 0, 1, 2.5, 4]]
+  for (const degrees of tries) {
+    const best = tryCandidates(cv, ready, [page], degrees)[0]
+    if (best && best.share >= 0.2) return guessOf({ ...best, confidence: Math.min(1, best.share * 1.5) }, ready)
+  }
+  return null
+}
+
+function prepare(cv: Cv, image: PageImage, picture: GreyPicture, paper: readonly Template[]): Ready {
+  const { dpiX, dpiY } = scanDensity(image, paper.map((t) => t.page))
+  const shrunk = shrinkTo(cv, picture, dpiX, dpiY, 100)
+  const levelled = level(cv, shrunk.picture)
+  return { shrunk, levelled, ink12: boxShrink(levelled.ink, 2) }
+}
+
+function skewsOf({ levelled }: Ready): (sideways: boolean) => number[] {
+  return (sideways) => skews(levelled.ink, sideways)
+}
+
+/** Looks for every page in every likely turn, then fits the likeliest exactly. Best first. */
+function tryCandidates(cv: Cv, ready: Ready, paper: readonly Template[], degrees: (sideways: boolean) => readonly number[]): Rival[] {
+  const candidates = [false, true].flatMap((sideways) => {
+    const fitting = paper.filter((template) => fits(ready.ink12, template, sideways))
+    return fitting.length ? coarsePlaces(ready, fitting, sideways, degrees(sideways)) : []
+  })
+  candidates.sort((a, b) => b.likeness - a.likeness)
+  const rivals: Rival[] = []
+  for (const candidate of candidates.slice(0, mostTried)) {
+    const enough = rivals.length > 0 && Math.max(...rivals.map((r) => r.share)) >= plainlyFound
+    if (enough && candidate.likeness < rivalLikeness * candidates[0]!.likeness) break
+    const rival = fitExactly(cv, ready, candidate)
+    if (rival) rivals.push(rival)
+  }
+  return rivals.sort((a, b) => b.share - a.share)
+}
+
+/** A leaf is looked at sideways only when it is shaped that way; a square one both ways. */
+function fits(ink: GreyPicture, { ink12 }: Template, sideways: boolean): boolean {
+  const leaf = ink.width / ink.height
+  const page = ink12.width / ink12.height
+  const upright = Math.abs(Math.log(leaf / page))
+  const turned = Math.abs(Math.log(leaf * page))
+  return sideways ? turned < upright + 0.12 : upright < turned + 0.12
+}
+
+function coarsePlaces({ ink12 }: Ready, paper: readonly Template[], sideways: boolean, skewed: readonly number[]): Candidate[] {
+  const turns: Turn[] = sideways ? [90, 270] : [0, 180]
+  return paper.flatMap((template) =>
+    turns.map((turn) => {
+      const margin = marginsFor(ink12, template.ink12, sideways)
+      const places = skewed.map((skew) => {
+        const degrees = skew - turn
+        const canvas = uprightInk(ink12, degrees, template.ink12.width + 2 * margin.x, template.ink12.height + 2 * margin.y)
+        return { template, turn, degrees, ...bestShift(canvas, template.ink12, margin) }
+      })
+      return places.reduce((a, b) => (b.likeness > a.likeness ? b : a))
+    }),
+  )
+}
+
+function fitExactly(cv: Cv, { levelled }: Ready, { template, ...place }: Candidate): Rival | null {
+  const near = blockFit(levelled.ink, template.ink25, place)
+  const map = fineFit(cv, levelled.white, template, near.map)
+  if (!map) return null
+  const found = printFound(levelled.white, template, map)
+  return { template, map, found, share: shareFound(found) }
+}
+
+/** From pixels of 100 dpi on both sides to paper points and pixels of the stored image. */
+function guessOf({ template, map, confidence }: Rival & { confidence: number }, { shrunk }: Ready): PageGuess {
+  const { widthPoints, heightPoints, page } = template.page
+  const k = 100 / 72
+  const by = [shrunk.byX, shrunk.byY, 1]
+  const rows = map.map(([a, b, c], row) => [a * k * by[row]!, b * k * by[row]!, c * by[row]!] as const)
+  const homography = rows.map((row) => row.map((v) => v / rows[2]![2]!)) as unknown as Homography
+  const rotation = turnOf(homography, { x: widthPoints / 2, y: heightPoints / 2 })
+  return { paperPage: page, rotation, homography, confidence }
+}

@@ -1,0 +1,39 @@
+import type { BlankPage } from '@/lib/core/grey-picture'
+import type { LeafFinding, LeafReading } from '@/lib/core/leaf'
+import { placeLeaves } from '@/lib/placing/place-leaves'
+import { openLeaves, readLeaves } from './read-leaves'
+
+export type SheafInput = Readonly<{
+  sheaf: Uint8Array | string
+  paper: readonly BlankPage[]
+  threads?: number
+  /** Readings stored before: those leaves are not read again. */
+  stored?: readonly LeafReading[]
+  /** Called with each leaf as it is read, and how many of how many are done; what it returns is waited for, so it may store. */
+  onLeaf?: (reading: LeafReading, done: number, of: number) => Promise<void> | void
+}>
+export type SheafResult = Readonly<{ readings: readonly LeafReading[]; findings: readonly LeafFinding[]; startupSeconds: number; leavesSeconds: number }>
+
+/**
+ * The whole way from a sheaf to scripts: every leaf read and registered by itself, then one decision over all of them.
+ * The command and the worker use this one engine; the worker stores each reading and may stop and go on at any leaf.
+ * Throws the file errors of openLeaves.
+ */
+export async function ingestSheaf({ sheaf, paper, threads = 1, stored = [], onLeaf }: SheafInput): Promise<SheafResult> {
+  const reader = await openLeaves(sheaf, paper, threads)
+  try {
+    await reader.ready()
+    const started = performance.now()
+    const readings = new Map(stored.map((reading) => [reading.index, reading]))
+    const take = async (reading: LeafReading): Promise<void> => {
+      readings.set(reading.index, reading)
+      await onLeaf?.(reading, readings.size, reader.pageCount)
+    }
+    await readLeaves(reader, (index) => readings.has(index), take, threads)
+    const inOrder = [...readings.values()].sort((a, b) => a.index - b.index)
+    const findings = placeLeaves(inOrder, paper.length)
+    return { readings: inOrder, findings, startupSeconds: started / 1000, leavesSeconds: (performance.now() - started) / 1000 }
+  } finally {
+    await reader.close()
+  }
+}

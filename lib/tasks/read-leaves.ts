@@ -1,0 +1,72 @@
+import { readFile } from 'node:fs/promises'
+import type { BlankPage } from '@/lib/core/grey-picture'
+import { unread, type LeafReading, type PageGuess } from '@/lib/core/leaf'
+import { newId } from '@/lib/core/ids'
+import { threadPool } from '@/lib/infra/thread-pool'
+import { openSheaf } from '@/lib/reading/open-sheaf'
+import type { LeafAnswer, LeafJob } from './leaf-thread'
+
+/** A page that takes longer than this is given up, in milliseconds; its thread with it. */
+const longest = 90_000
+
+/** Reads leaves of one sheaf against one blank paper, on threads of its own. Close it after use. */
+export type LeafReader = Readonly<{
+  pageCount: number
+  /** Loads the threads' engines ahead of the first leaf. */
+  ready: () => Promise<void>
+  /** One leaf, from 0. Never throws for what is wrong with the page: that is a reading with a problem. */
+  read: (index: number) => Promise<LeafReading>
+  /** Registers a leaf to the page (from 1) that a person says it is; null when its print is not found. */
+  readOnto: (index: number, paperPage: number) => Promise<PageGuess | null>
+  close: () => Promise<void>
+}>
+
+/**
+ * Opens a sheaf for reading leaf by leaf. Throws the file errors: file_empty, file_not_pdf, file_encrypted, file_damaged, file_no_pages, too_many_pages.
+ * @param sheaf its bytes, or the path of its file
+ * @param paper the blank paper's pages, as openBlankPaper gives them
+ */
+export async function openLeaves(sheaf: Uint8Array | string, paper: readonly BlankPage[], threads = 1): Promise<LeafReader> {
+  const bytes = shared(typeof sheaf === 'string' ? await readFile(sheaf) : sheaf)
+  const open = await openSheaf(bytes)
+  const pool = threadPool('lib/tasks/leaf-thread.ts', threads)
+  const pages = paper.map((page) => ({ ...page, picture: { ...page.picture, data: shared(page.picture.data) } }))
+  const paperKey = newId()
+  const common = { sheaf: bytes, paperKey, paper: pages }
+  const run = async (index: number, onto?: number): Promise<LeafAnswer | null> => {
+    const job: LeafJob = { page: open.page(index), ...common, ...(onto === undefined ? {} : { onto }) }
+    // a page that kills its thread is reported like one that cannot be read
+    return (pool.run(job, { signal: AbortSignal.timeout(longest) }) as Promise<LeafAnswer>).catch(() => null)
+  }
+  return {
+    pageCount: open.pageCount,
+    ready: async () => {
+      await Promise.all(Array.from({ length: threads }, () => pool.run({ page: null, ...common } satisfies LeafJob)))
+    },
+    read: async (index) => (await run(index))?.reading ?? unread(index, 'page_unreadable'),
+    readOnto: async (index, paperPage) => (await run(index, paperPage))?.onto ?? null,
+    close: () => pool.destroy(),
+  }
+}
+
+/**
+ * Reads the leaves of an open sheaf that `known` does not hold yet, a few at a time, and hands each over as it is done.
+ * @param threads how many leaves are in work at once
+ */
+export async function readLeaves(reader: LeafReader, known: (index: number) => boolean, onLeaf: (reading: LeafReading) => Promise<void> | void, threads = 1): Promise<void> {
+  let next = 0
+  const lane = async (): Promise<void> => {
+    while (next < reader.pageCount) {
+      const index = next++
+      if (!known(index)) await onLeaf(await reader.read(index))
+    }
+  }
+  await Promise.all(Array.from({ length: threads + 1 }, lane))
+}
+
+/** A copy in memory that threads can see. */
+function shared(bytes: Uint8Array): Uint8Array {
+  const copy = new Uint8Array(new SharedArrayBuffer(bytes.length))
+  copy.set(bytes)
+  return copy
+}

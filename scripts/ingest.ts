@@ -1,0 +1,67 @@
+import { readFile, writeFile } from 'node:fs/promises'
+import { join } from 'node:path'
+import { parseArgs } from 'node:util'
+import { z } from 'zod'
+import { AppError, type ErrorCode } from '@/lib/core/errors'
+import { ingestSheaf } from '@/lib/tasks/ingest-sheaf'
+
+// npm run -s ingest -- --paper PAPER_DIR --sheaf scan.pdf --out result.json [--threads 1]
+// Exit 0, or 2 with one line on standard error when the input cannot be used.
+
+const usage = 'usage: ingest --paper PAPER_DIR --sheaf scan.pdf --out result.json [--threads 1]'
+const sentences: Partial<Record<ErrorCode, string>> = {
+  file_empty: 'is empty; send the file again',
+  file_not_pdf: 'is not a PDF',
+  file_encrypted: 'asks for a password; save it without one and try again',
+  file_damaged: 'is damaged and cannot be opened; scan or send it again',
+  file_no_pages: 'has no pages',
+  too_many_pages: 'has too many pages; scan it in parts',
+  page_unreadable: 'has a page that cannot be drawn',
+}
+class BadInput extends Error {}
+
+/** Reads a file that must be there. */
+async function input(path: string): Promise<Buffer> {
+  return readFile(path).catch((error: NodeJS.ErrnoException) => {
+    throw new BadInput(`${path} ${error.code === 'ENOENT' ? 'does not exist' : error.code === 'EISDIR' ? 'is a folder, not a file' : 'cannot be read'}`)
+  })
+}
+
+/** What of a paper.json the engine needs. */
+const PaperFile = z.object({ pages: z.int().min(1).optional() })
+
+async function pagesSaid(path: string): Promise<number | undefined> {
+  const text = (await input(path)).toString('utf8')
+  const parsed = PaperFile.safeParse(await Promise.resolve(text).then(JSON.parse).catch(() => null))
+  if (!parsed.success) throw new BadInput(`${path} is not a paper description`)
+  return parsed.data.pages
+}
+
+async function main(): Promise<void> {
+  const { values } = parseArgs({ options: { paper: { type: 'string' }, sheaf: { type: 'string' }, out: { type: 'string' }, threads: { type: 'string', default: '1' } } })
+  const threads = Number(values.threads)
+  if (!values.paper || !values.sheaf || !values.out || !Number.isInteger(threads) || threads < 1) throw new BadInput(usage)
+  const paperFile = join(values.paper, 'paper.pdf')
+  const said = await pagesSaid(join(values.paper, 'paper.json'))
+  const named = <T>(path: string, work: Promise<T>): Promise<T> =>
+    work.catch((error) => {
+      throw error instanceof AppError ? new BadInput(`${path} ${sentences[error.code] ?? `cannot be used (${error.code})`}`) : error
+    })
+  const { openBlankPaper } = await import('@/lib/reading/open-blank-paper')
+  const paper = await named(paperFile, input(paperFile).then((bytes) => openBlankPaper(bytes)))
+  if (said !== undefined && said !== paper.length) throw new BadInput(`${paperFile} has ${paper.length} pages, paper.json says ${said}`)
+  const result = await named(values.sheaf, input(values.sheaf).then((bytes) => ingestSheaf({ sheaf: bytes, paper, threads })))
+  const pages = result.findings.map(({ index, half, kind, script, paperPage, rotation, homography, confidence, reasons, problem }) => ({
+    index, ...(half === undefined ? {} : { half }), kind, script, paper_page: paperPage, rotation, homography, confidence: Number(confidence.toFixed(3)), reasons, ...(problem ? { problem } : {}),
+  }))
+  const timings = { startup_s: result.startupSeconds, leaves_s: result.leavesSeconds }
+  await writeFile(values.out, `${JSON.stringify({ pages, timings }, null, 1)}\n`).catch(() => {
+    throw new BadInput(`${values.out} cannot be written`)
+  })
+}
+
+main().catch((error: unknown) => {
+  const known = error instanceof BadInput || (error instanceof TypeError && 'code' in error && String(error.code).startsWith('ERR_PARSE_ARGS'))
+  console.error(known ? `ingest: ${(error as Error).message.split('\n')[0]}` : error)
+  process.exitCode = known ? 2 : 1
+})

@@ -3,6 +3,6 @@ import { workerData } from 'node:worker_threads'
 import { register } from 'tsx/esm/api'
 
 register()
-const { module: file } = workerData
-const module = await import(file)
-export default module.default
+const { module: task } = workerData
+const loaded = await import(task)
+export default loaded.default

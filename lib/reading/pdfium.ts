@@ -55,13 +55,13 @@ export async function openDocument(bytes: Uint8Array): Promise<Readonly<{ engine
   return { engine, document, close }
 }
 
-/** Lends `floats` 32-bit numbers of the engine's memory to `use`, which gets their address and a reader. */
-export function withFloats<T>(engine: Pdfium, values: readonly number[], use: (at: number, read: () => number[]) => T): T {
+/** Lends `floats` 32-bit numbers of the engine's memory to `work`, which gets their address and a reader. */
+export function withFloats<T>(engine: Pdfium, values: readonly number[], work: (at: number, read: () => number[]) => T): T {
   const at = engine.wasmExports.malloc(values.length * 4)
   const view = () => new DataView(engine.HEAPU8.buffer, at, values.length * 4)
   values.forEach((value, k) => view().setFloat32(k * 4, value, true))
   try {
-    return use(at, () => values.map((_, k) => view().getFloat32(k * 4, true)))
+    return work(at, () => values.map((_, k) => view().getFloat32(k * 4, true)))
   } finally {
     engine.wasmExports.free(at)
   }

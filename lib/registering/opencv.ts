@@ -25,11 +25,11 @@ async function load(): Promise<{ cv: Cv }> {
   return { cv }
 }
 
-/** Runs `use` with a pen for Mats: whatever it is handed is deleted afterwards. C++ errors, which come as bare numbers, get their text. */
-export function withMats<T>(cv: Cv, use: (keep: <M extends { delete(): void }>(mat: M) => M) => T): T {
+/** Runs `work` with a pen for Mats: whatever it is handed is deleted afterwards. C++ errors, which come as bare numbers, get their text. */
+export function withMats<T>(cv: Cv, work: (keep: <M extends { delete(): void }>(mat: M) => M) => T): T {
   const kept: { delete(): void }[] = []
   try {
-    return use((mat) => {
+    return work((mat) => {
       kept.push(mat)
       return mat
     })

@@ -1,4 +1,4 @@
-import { inverse, toPixels, type Homography, type PaperRect } from '@/lib/core/paper-space'
+import { toPaper, toPixels, type Homography, type PaperRect } from '@/lib/core/paper-space'
 
 export type TruthPage = Readonly<{
   index: number
@@ -104,11 +104,10 @@ function regions(truth: Truth, page: number): PaperRect[] {
 }
 
 function cornerErrors(truth: Homography, found: Homography, at: readonly PaperRect[]): number[] {
-  const back = inverse(truth)
   return at.flatMap(({ x, y, w, h }) =>
     [x, x + w].flatMap((px) =>
       [y, y + h].map((py) => {
-        const seen = toPixels(back, toPixels(found, { x: px, y: py }))
+        const seen = toPaper(truth, toPixels(found, { x: px, y: py }))
         return Math.min(Math.hypot(seen.x - px, seen.y - py) * mmPerPoint, 999)
       }),
     ),

@@ -54,8 +54,7 @@ export async function addPaper(db: Db, paper: NewPaper): Promise<void> {
 
 export async function setBlankPaper(db: Db, paperId: string, fileId: string, pages: readonly PaperPage[]): Promise<void> {
   await db('papers').where({ id: paperId }).update({ blank_file_id: fileId })
-  await db('paper_pages').where({ paper_id: paperId }).delete()
-  await db('paper_pages').insert(pages.map((page) => ({ paper_id: paperId, ...page })))
+  await setPaperPages(db, paperId, pages)
 }
 
 export async function setPaperBoxes(db: Db, paperId: string, boxes: readonly PaperBox[]): Promise<void> {
@@ -68,4 +67,34 @@ export async function setGradeScale(db: Db, paperId: string, oddHalf: OddHalf, b
   await db('papers').where({ id: paperId }).update({ odd_half: oddHalf })
   await db('grade_boundaries').where({ paper_id: paperId }).delete()
   if (boundaries.length > 0) await db('grade_boundaries').insert(boundaries.map((boundary) => ({ paper_id: paperId, ...boundary })))
+}
+
+export type PaperDetails = Readonly<{ title: string; keepUntil: string; namesHidden: boolean; sampleSize: number | null; solutionsReleased: boolean }>
+
+export async function putPaperDetails(db: Db, paperId: string, details: PaperDetails): Promise<void> {
+  await db<PaperRow>('papers').where({ id: paperId }).update({
+    title: details.title, keep_until: details.keepUntil, names_hidden: details.namesHidden ? 1 : 0, sample_size: details.sampleSize, solutions_released: details.solutionsReleased ? 1 : 0,
+  })
+}
+
+/** The marking step and the tolerance, both in half marks. */
+export async function putMarkingRules(db: Db, paperId: string, step: MarkingStep, tolerance: HalfMarks): Promise<void> {
+  await db<PaperRow>('papers').where({ id: paperId }).update({ marking_step: step, tolerance })
+}
+
+/** Sizes of pages that are known before the blank paper itself is. */
+export async function setPaperPages(db: Db, paperId: string, pages: readonly PaperPage[]): Promise<void> {
+  await db('paper_pages').where({ paper_id: paperId }).delete()
+  if (pages.length > 0) await db('paper_pages').insert(pages.map((page) => ({ paper_id: paperId, ...page })))
+}
+
+/** Whether a paper's scripts have pages in paper space already. */
+export async function hasScripts(db: Db, paperId: string): Promise<boolean> {
+  return Boolean(await db('scripts').join('class_sets', 'class_sets.id', 'scripts.class_set_id').where('class_sets.paper_id', paperId).first<unknown>('scripts.id'))
+}
+
+/** Who made a paper; null when there is none. */
+export async function paperMaker(db: Db, id: string): Promise<string | null> {
+  const row = await db<PaperRow>('papers').where({ id }).first('created_by')
+  return row?.created_by ?? null
 }

@@ -86,3 +86,46 @@ export async function putQuestion(db: Db, paperId: string, question: Omit<Questi
     }
   }
 }
+
+/** Takes questions away with the empty responses that wait for them. Only for questions without stamps: see `touchedByMarking`. */
+export async function dropQuestions(db: Db, ids: readonly string[]): Promise<void> {
+  await db('responses').whereIn('question_id', ids).delete()
+  await db('mark_points').whereIn('question_id', ids).update({ depends_on: null })
+  await db('questions').whereIn('id', ids).delete()
+}
+
+export async function dropSpaces(db: Db, ids: readonly string[]): Promise<void> {
+  await db('answer_spaces').whereIn('id', ids).delete()
+}
+
+/** Only for points no stamp names. */
+export async function dropPoints(db: Db, ids: readonly string[]): Promise<void> {
+  await db('mark_points').whereIn('depends_on', ids).update({ depends_on: null })
+  await db('mark_points').whereIn('id', ids).delete()
+}
+
+/** Frees every label of a paper for a moment, so that two questions may swap theirs in one save. */
+export async function parkLabels(db: Db, paperId: string): Promise<void> {
+  await db('questions').where({ paper_id: paperId }).update({ label: db.raw(`'~' || id`) })
+}
+
+/** Which of the ids name rows of another paper: a save may not reach over. */
+export async function idsOfOtherPapers(db: Db, paperId: string, ids: Readonly<{ questions: readonly string[]; points: readonly string[]; spaces: readonly string[] }>): Promise<string[]> {
+  const questions = (await db('questions').whereIn('id', ids.questions).whereNot({ paper_id: paperId }).pluck('id')) as string[]
+  const inside = async (table: 'mark_points' | 'answer_spaces', wanted: readonly string[]) =>
+    (await db(table).join('questions', 'questions.id', `${table}.question_id`).whereIn(`${table}.id`, wanted).whereNot('questions.paper_id', paperId).pluck(`${table}.id`)) as string[]
+  return [...questions, ...(await inside('mark_points', ids.points)), ...(await inside('answer_spaces', ids.spaces))]
+}
+
+type Withdrawn = Readonly<{ by: string; reason: string; as: 'out' | 'full' }>
+
+/** Null brings the question back. */
+export async function setQuestionWithdrawn(db: Db, id: string, withdrawn: Withdrawn | null): Promise<void> {
+  await db<QuestionRow>('questions').where({ id }).update({
+    withdrawn_at: withdrawn && Date.now(), withdrawn_by: withdrawn?.by ?? null, withdrawn_reason: withdrawn?.reason ?? null, withdrawn_as: withdrawn?.as ?? null,
+  })
+}
+
+export async function setPointWithdrawn(db: Db, id: string, withdrawn: Omit<Withdrawn, 'as'> | null): Promise<void> {
+  await db('mark_points').where({ id }).update({ withdrawn_at: withdrawn && Date.now(), withdrawn_by: withdrawn?.by ?? null, withdrawn_reason: withdrawn?.reason ?? null })
+}

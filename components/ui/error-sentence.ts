@@ -22,6 +22,8 @@ const sentences: Record<ErrorCode | 'failed', string | ((detail: ErrorDetail) =>
   paper_invalid: 'The paper cannot be used as it is. See the lines below.',
   has_stamps: 'Marks have been given here, so it is kept. Withdraw it instead.',
   pages_differ: 'This PDF has another number of pages, or another size, than the answer spaces were drawn for.',
+  class_set_used: 'Something has been scanned or sampled for this class, so it stays.',
+  last_owner: 'A paper needs an owner. Share it with someone first.',
   file_empty: 'This file is empty. Scan or save it again and choose the new file.',
   file_too_large: ({ limitMb }) => `This file is larger than ${limitMb ?? 500} MB. Scan in grey at 200 dpi, or in two parts.`,
   file_not_pdf: 'This is not a PDF. Set the copier to save as PDF, and choose that file.',

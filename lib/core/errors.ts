@@ -27,6 +27,8 @@ export const errorStatus = {
   paper_invalid: 422,
   has_stamps: 409,
   pages_differ: 422,
+  class_set_used: 409,
+  last_owner: 409,
   // files
   file_empty: 422,
   file_too_large: 413,

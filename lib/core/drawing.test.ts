@@ -19,8 +19,9 @@ describe('a stamp is drawn', () => {
     const [ink] = drawStamp(aStamp({}))
     expect(pathData(pathOf(ink))).toMatch(/^M94.23 193.66C/)
     const box = boundsOfStamp(aStamp({}))!
-    expect(box.x).toBeCloseTo(100 - 6.7 + 0.69, 2)
-    expect(box.y + box.h).toBeCloseTo(200 + 17.6 - 16.3, 1)
+    // From the design's drawing: its short arm begins .25 left of (1, 9.6), its corner ends about 1.1 under (6.7, 16.3).
+    expect(box.x).toBeCloseTo(100 - 6.7 + 0.75, 2)
+    expect(box.y + box.h).toBeCloseTo(201.15, 1)
   })
 
   it.each([
@@ -120,20 +121,20 @@ describe('the mark in the margin', () => {
   })
 
   it('stands beside its answer space, on the page, and never on another', () => {
-    const page = { width: 595, height: 842 }
+    const page = { x: 20, y: 15, w: 560, h: 820 }
     const spaces = [{ x: 48, y: 100, w: 240, h: 80 }, { x: 300, y: 100, w: 240, h: 80 }, { x: 48, y: 800, w: 500, h: 42 }, { x: 48, y: 2, w: 500, h: 12 }]
     const places = ringPlaces(spaces, page)
     for (const [k, place] of places.entries()) {
       const box = boundsOf(ringOfMark(halves(3), 'agreed', place))!
-      expect(box.x + box.w).toBeLessThanOrEqual(page.width)
-      expect(box.y).toBeGreaterThanOrEqual(0)
-      expect(box.y + box.h).toBeLessThanOrEqual(page.height)
+      expect(box.x + box.w).toBeLessThanOrEqual(page.x + page.w)
+      expect(box.y).toBeGreaterThanOrEqual(page.y)
+      expect(box.y + box.h).toBeLessThanOrEqual(page.y + page.h)
       for (const other of places.slice(k + 1)) expect(Math.abs(other.y - place.y)).toBeGreaterThanOrEqual(30)
     }
   })
 
   it('and the mark of the page stays on the page', () => {
-    const box = boundsOf(pageTotal(halves(21), 'agreed', { width: 595, height: 842 }))!
+    const box = boundsOf(pageTotal(halves(21), 'agreed', { x: 0, y: 0, w: 595, h: 842 }))!
     expect(box.x + box.w).toBeLessThanOrEqual(595)
     expect(box.y + box.h).toBeLessThanOrEqual(842)
   })

@@ -19,7 +19,7 @@ const mostTicks = 3
  */
 export function drawStamp(stamp: Stamp): readonly Ink[] {
   const at = { x: stamp.x, y: stamp.y }
-  if (stamp.kind === 'tick' || stamp.kind === 'half') return ticks(at, stamp.worth)
+  if (stamp.kind === 'tick' || stamp.kind === 'half') return drawTicks(at, stamp.worth)
   if (stamp.kind === 'mark') return typedMark(at, stamp.worth)
   if (stamp.kind === 'nought') return [figure('0', at, 13)]
   return withWorth(remark(stamp, at), stamp.worth)
@@ -31,7 +31,7 @@ export function boundsOfStamp(stamp: Stamp): PaperRect | null {
 }
 
 /** Ticks and a half tick adding up to the worth, the first held at `at`; beyond three, one tick and its worth as a figure. */
-function ticks(at: PaperPoint, worth: HalfMarks): Ink[] {
+export function drawTicks(at: PaperPoint, worth: HalfMarks): readonly Ink[] {
   const whole = Math.floor(worth / 2)
   if (worth === 0 || Math.ceil(worth / 2) > mostTicks) return [...tick(tickShape, at), worthBy(sayMark(worth), at)]
   const next = { x: at.x + whole * tickPitch, y: at.y }

@@ -56,6 +56,8 @@ export const errorStatus = {
   // handing back
   checks_open: 409,
   not_released: 404,
+  page_shared: 422,
+  sheaf_missing: 409,
 } as const
 
 export type ErrorCode = keyof typeof errorStatus

@@ -47,7 +47,7 @@ export function runWidth(run: Pick<TextInk, 'text' | 'font' | 'size' | 'spacing'
   return widthOf(run.text, run.font, run.size) + run.spacing * [...run.text].length
 }
 
-/** The box round some ink in paper points, line widths and letters included; null when there is none. Control points count. */
+/** The box round some ink in paper points, line widths and letters included; null when there is none. */
 export function boundsOf(inks: readonly Ink[]): PaperRect | null {
   const boxes = inks.map(boxOf).filter((box) => box !== null)
   if (boxes.length === 0) return null
@@ -62,12 +62,27 @@ function boxOf(ink: Ink): PaperRect | null {
     const left = ink.anchor === 'start' ? 0 : ink.anchor === 'middle' ? w / 2 : w
     return { x: ink.at.x - left, y: ink.at.y - 0.8 * ink.size, w, h: 1.05 * ink.size }
   }
-  const numbers = ink.path.flatMap((step) => step.slice(1) as number[])
-  if (numbers.length === 0) return null
-  const xs = numbers.filter((_, k) => k % 2 === 0)
-  const ys = numbers.filter((_, k) => k % 2 === 1)
+  const points = pointsOn(ink.path)
+  if (points.length === 0) return null
   const pad = ink.kind === 'line' ? ink.width / 2 : 0
-  const x = xs.reduce((a, b) => Math.min(a, b)) - pad
-  const y = ys.reduce((a, b) => Math.min(a, b)) - pad
-  return { x, y, w: xs.reduce((a, b) => Math.max(a, b)) + pad - x, h: ys.reduce((a, b) => Math.max(a, b)) + pad - y }
+  const least = (of: (point: PaperPoint) => number): number => points.reduce((a, b) => Math.min(a, of(b)), Infinity) - pad
+  const most = (of: (point: PaperPoint) => number): number => points.reduce((a, b) => Math.max(a, of(b)), -Infinity) + pad
+  const [x, y] = [least((p) => p.x), least((p) => p.y)]
+  return { x, y, w: most((p) => p.x) - x, h: most((p) => p.y) - y }
+}
+
+/** Points along a path: ends of steps, and eight on each curve, which is true to well under a line's width. */
+function pointsOn(path: readonly Step[]): PaperPoint[] {
+  const points: PaperPoint[] = []
+  for (const step of path) {
+    const from = points.at(-1)
+    if (step[0] === 'M' || step[0] === 'L') points.push({ x: step[1], y: step[2] })
+    else if (step[0] === 'C' && from) for (let k = 1; k <= 8; k++) points.push(onCurve(from, step, k / 8))
+  }
+  return points
+}
+
+function onCurve(from: PaperPoint, [, ax, ay, bx, by, x, y]: Extract<Step, readonly ['C', ...number[]]>, t: number): PaperPoint {
+  const blend = (p: number, a: number, b: number, q: number): number => (1 - t) ** 3 * p + 3 * (1 - t) ** 2 * t * a + 3 * (1 - t) * t ** 2 * b + t ** 3 * q
+  return { x: blend(from.x, ax, bx, x), y: blend(from.y, ay, by, y) }
 }

@@ -78,6 +78,15 @@ export function corners({ x, y, w, h }: PaperRect): readonly [PaperPoint, PaperP
   return [{ x, y }, { x: x + w, y }, { x: x + w, y: y + h }, { x, y: y + h }]
 }
 
+/** The part of a paper (points) that a scan of `image` pixels shows: the largest upright box clear of the scan's slanted edges, nearly. */
+export function shownPaper(h: Homography, image: Readonly<{ width: number; height: number }>, paper: Readonly<{ width: number; height: number }>): PaperRect {
+  const edges = corners({ x: 0, y: 0, w: image.width, h: image.height }).map(({ x, y }) => toPaper(h, { x, y }))
+  const xs = edges.map(({ x }) => x).sort((a, b) => a - b)
+  const ys = edges.map(({ y }) => y).sort((a, b) => a - b)
+  const [x, y] = [Math.max(0, xs[1]!), Math.max(0, ys[1]!)]
+  return { x, y, w: Math.min(paper.width, xs[2]!) - x, h: Math.min(paper.height, ys[2]!) - y }
+}
+
 /** The homography that takes four paper points to four pixels (both clockwise from top left): eight linear equations. */
 export function homographyFrom(paper: readonly PaperPoint[], pixels: readonly PixelPoint[]): Homography | null {
   const rows: number[][] = []

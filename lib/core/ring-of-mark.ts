@@ -21,24 +21,29 @@ export function ringOfMark(mark: HalfMarks, pen: Pen, at: PaperPoint): readonly 
   return [ring, ...around, ...figureWithHalf(mark, { x: at.x + 22, y: at.y + (long ? 20 : 21) }, long ? 14 : 17)]
 }
 
-/** The mark of a page, right-aligned at its foot: a figure between two thin lines, as under a column of figures. */
-export function pageTotal(mark: HalfMarks, pen: Pen, page: Readonly<{ width: number; height: number }>): readonly Ink[] {
-  const middle = page.width - overrun - markRingBox.w / 2
-  const baseline = page.height - 18
+/** The mark of a page at the foot of its right margin: a figure between two thin lines, as under a column of figures. `shown` as below. */
+export function pageTotal(mark: HalfMarks, pen: Pen, shown: PaperRect): readonly Ink[] {
+  const middle = shown.x + shown.w - overrun - markRingBox.w / 2
+  const baseline = shown.y + shown.h - 14
   const rule = (y: number): Ink => line([['M', middle - 15, y], ['L', middle + 15, y]], 0.8, pen === 'second' ? [6, 3.4] : null)
   return [rule(baseline - 15), rule(baseline + 4), ...(pen === 'agreed' ? [rule(baseline + 6.2)] : []), ...figureWithHalf(mark, { x: middle, y: baseline }, 14)]
 }
 
-/** Where the rings go: in the right margin beside the foot of each answer space, in order, moved down until none lies on another. */
-export function ringPlaces(spaces: readonly PaperRect[], page: Readonly<{ width: number; height: number }>): PaperPoint[] {
-  const x = page.width - markRingBox.w - overrun
+/**
+ * Where the rings of a page go: in the right margin beside the foot of each answer space, in order, moved until none lies on another.
+ * `shown` is the part of the paper that can be drawn on, in points: all of it, or what a scan shows of it.
+ */
+export function ringPlaces(spaces: readonly PaperRect[], shown: PaperRect): PaperPoint[] {
+  const x = shown.x + shown.w - markRingBox.w - overrun
   const pitch = markRingBox.h + 2 * overrun
+  const [highest, lowest] = [shown.y + overrun, shown.y + shown.h - markRingBox.h - overrun]
   const taken: number[] = []
   const free = (y: number): boolean => taken.every((other) => Math.abs(other - y) >= pitch)
   return spaces.map((space) => {
-    const wanted = Math.min(space.y + space.h - markRingBox.h - overrun, page.height - pitch)
-    const places = Array.from({ length: 60 }, (_, k) => wanted + (k % 2 === 0 ? 1 : -1) * Math.ceil(k / 2) * (pitch / 4))
-    const y = places.find((place) => place >= overrun && place <= page.height - pitch && free(place)) ?? Math.max(overrun, wanted)
+    const wanted = Math.max(highest, Math.min(space.y + space.h - markRingBox.h - overrun, lowest))
+    // Looks down and up in turn, a quarter of a ring at a time; a page too full for its rings gets this one over another.
+    const places = Array.from({ length: 200 }, (_, k) => wanted + (k % 2 === 0 ? -1 : 1) * Math.ceil(k / 2) * (pitch / 4))
+    const y = places.find((place) => place >= highest && place <= lowest && free(place)) ?? wanted
     taken.push(y)
     return { x, y }
   })

@@ -1,0 +1,58 @@
+import { PDFDocument } from 'pdf-lib'
+import { AppError } from '@/lib/core/errors'
+import { ObjectCopier } from './object-copier'
+import { addReturnedPage, type ScriptPage } from './returned-page'
+import { Structure } from './structure'
+import type { Summary } from './summary'
+import { addSummary } from './summary-page'
+import { Typesetter } from './typesetter'
+
+/** One student's script to hand back. `builtAt` is written into the file, so that the same script built again is the same file. */
+export type ScriptToReturn = Readonly<{ summary: Summary; pages: readonly ScriptPage[]; builtAt: Date }>
+/** Sheaves as loaded once for all students, by the name that pages give. */
+export type LoadedSheaves = ReadonlyMap<string, PDFDocument>
+
+/** Loads a sheaf for building; do it once for all its students. Throws what pdf-lib throws on a file it cannot read. */
+export async function loadSheaf(bytes: Uint8Array): Promise<PDFDocument> {
+  return PDFDocument.load(bytes, { updateMetadata: false, throwOnInvalidObject: false })
+}
+
+/**
+ * The returned script of one student as PDF bytes: the summary, then the student's own pages with their images byte for byte and the
+ * marking over them as vectors. Nothing else of a sheaf gets in: no other student's image, no metadata, attachments, annotations or
+ * actions. Throws sheaf_missing, not_found for a page the sheaf has not, page_shared and page_unreadable.
+ */
+export async function buildReturnedScript(sheaves: LoadedSheaves, { summary, pages, builtAt }: ScriptToReturn): Promise<Uint8Array> {
+  const pdf = await PDFDocument.create({ updateMetadata: false })
+  describe(pdf, summary, builtAt)
+  const type = await Typesetter.for(pdf.context)
+  const structure = new Structure()
+  addSummary(pdf, summary, pages.length, type, structure)
+  const copiers = new Map<PDFDocument, ObjectCopier>()
+  for (const page of pages) {
+    const source = sheafOf(sheaves, page)
+    const copier = copiers.get(source) ?? new ObjectCopier(source.context, pdf.context)
+    copiers.set(source, copier)
+    addReturnedPage(pdf, source, page, copier, type, structure)
+  }
+  structure.store(pdf)
+  await type.embed()
+  // The writer would pause after each 50 objects, for the sake of screens: that is most of the time of so small a file.
+  return pdf.save({ addDefaultPage: false, updateFieldAppearances: false, objectsPerTick: Infinity })
+}
+
+function sheafOf(sheaves: LoadedSheaves, { sheaf, index }: ScriptPage): PDFDocument {
+  const source = sheaves.get(sheaf)
+  if (!source) throw new AppError('sheaf_missing')
+  if (index < 0 || index >= source.getPageCount()) throw new AppError('not_found', { page: index + 1 })
+  return source
+}
+
+function describe(pdf: PDFDocument, { title, student }: Summary, builtAt: Date): void {
+  pdf.setTitle(`${title}, ${student}`, { showInWindowTitleBar: true })
+  pdf.setLanguage('en-GB')
+  pdf.setCreator('Sheafmark')
+  pdf.setProducer('Sheafmark')
+  pdf.setCreationDate(builtAt)
+  pdf.setModificationDate(builtAt)
+}

@@ -1,0 +1,45 @@
+import type { HalfMarks } from '@/lib/core/marks'
+import type { Pen } from '@/lib/core/stamp'
+
+/** A mark point as the student reads it: what it asked for, what it gave. */
+export type PointResult = Readonly<{ says: string; earned: HalfMarks; worth: HalfMarks }>
+
+/** One question's line. `mark` is null while it is not to be shown as a figure (withdrawn); `remark` says "nothing written" and the like. */
+export type QuestionResult = Readonly<{
+  label: string
+  points: readonly PointResult[]
+  remark: string | null
+  comments: readonly string[]
+  mark: HalfMarks | null
+  maximum: HalfMarks
+}>
+
+/** A signed change beside the raw mark, with its reason as a sentence. */
+export type AdjustmentLine = Readonly<{ says: string; by: HalfMarks }>
+
+/**
+ * All that the summary page says; it works nothing out. `total` is the final one, adjustments counted. Sentences (`about`, `gradeSays`,
+ * `asking`) come ready, dates in words.
+ */
+export type Summary = Readonly<{
+  title: string
+  /** "Kestrel Bay School, class 8K, spring test" */
+  where: string
+  student: string
+  candidateNumber: string
+  /** "handed back 18 March, marked by R. Adeyemi, sample second-marked" */
+  about: string
+  total: HalfMarks
+  ticks: HalfMarks
+  adjustments: readonly AdjustmentLine[]
+  maximum: HalfMarks
+  percent: number | null
+  grade: string | null
+  gradeSays: string
+  pen: Pen
+  questions: readonly QuestionResult[]
+  next: readonly string[]
+  /** Text codes drawn on the pages, each with its meaning. */
+  codes: readonly Readonly<{ code: string; means: string }>[]
+  asking: string
+}>

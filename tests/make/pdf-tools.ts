@@ -1,0 +1,73 @@
+import { execFileSync } from 'node:child_process'
+import { mkdtempSync, readFileSync, readdirSync, writeFileSync } from 'node:fs'
+import { tmpdir } from 'node:os'
+import { join } from 'node:path'
+
+/** A file of these bytes in a folder of its own, for tools that read files. */
+export function asFile(bytes: Uint8Array): string {
+  const path = join(mkdtempSync(join(tmpdir(), 'sheafmark-pdf-')), 'file.pdf')
+  writeFileSync(path, bytes)
+  return path
+}
+
+function run(tool: string, ...args: string[]): string {
+  return execFileSync(tool, args, { encoding: 'utf8', maxBuffer: 1e9, stdio: ['ignore', 'pipe', 'pipe'] })
+}
+
+/** Throws with qpdf's words when the file is not clean. */
+export function assertClean(file: string): void {
+  run('qpdf', '--check', file)
+}
+
+/** Every object in the file, as qpdf writes it in JSON. */
+export function objectsOf(file: string): string[] {
+  const { qpdf } = JSON.parse(run('qpdf', '--json', file)) as { qpdf: [unknown, Record<string, unknown>] }
+  return Object.entries(qpdf[1]).filter(([name]) => name.startsWith('obj:')).map(([, value]) => JSON.stringify(value))
+}
+
+/** How many image objects lie in the file, drawn or not. */
+export function imageCount(file: string): number {
+  return objectsOf(file).filter((object) => object.includes('"/Subtype":"/Image"')).length
+}
+
+/** The image streams as they are coded in the file, page by page. */
+export function codedImages(file: string, first = 1, last = 1000): Buffer[] {
+  const folder = mkdtempSync(join(tmpdir(), 'sheafmark-images-'))
+  run('pdfimages', '-all', '-f', String(first), '-l', String(last), file, join(folder, 'image'))
+  return readdirSync(folder).sort().map((name) => readFileSync(join(folder, name)))
+}
+
+export function wordsOf(file: string, page: number): string {
+  return run('pdftotext', '-layout', '-f', String(page), '-l', String(page), file, '-')
+}
+
+export function fontLines(file: string): string[] {
+  return run('pdffonts', file).split('\n').slice(2).filter((line) => line !== '')
+}
+
+export function pageCountOf(file: string): number {
+  return Number(run('qpdf', '--show-npages', file))
+}
+
+/** Where green ink lies on a page drawn at 200 dpi, in pixels, and how large the picture is; edges are pixel edges. */
+export function greenInk(file: string, page: number): { left: number; right: number; top: number; bottom: number; lowestX: number; width: number; height: number } {
+  const folder = mkdtempSync(join(tmpdir(), 'sheafmark-drawn-'))
+  run('pdftoppm', '-r', '200', '-f', String(page), '-l', String(page), '-singlefile', file, join(folder, 'page'))
+  const { data, width, height } = pixelsOf(readFileSync(join(folder, 'page.ppm')))
+  const seen: { x: number; y: number }[] = []
+  for (let k = 0; k < width * height; k++) {
+    if (data[3 * k + 1]! - data[3 * k]! > 45) seen.push({ x: k % width, y: Math.floor(k / width) })
+  }
+  const xs = seen.map(({ x }) => x)
+  const ys = seen.map(({ y }) => y)
+  const bottom = Math.max(...ys)
+  const lowest = seen.filter(({ y }) => y === bottom)
+  const lowestX = lowest.reduce((total, { x }) => total + x, 0) / lowest.length
+  return { left: Math.min(...xs), right: Math.max(...xs) + 1, top: Math.min(...ys), bottom: bottom + 1, lowestX, width, height }
+}
+
+/** The pixels of a PPM file: "P6", width, height, 255, then red, green, blue. */
+function pixelsOf(ppm: Buffer): { data: Buffer; width: number; height: number } {
+  const [head, width, height] = /^P6\s+(\d+)\s+(\d+)\s+255\s/.exec(ppm.toString('latin1', 0, 40))!
+  return { data: ppm.subarray(head.length), width: Number(width), height: Number(height) }
+}

@@ -31,3 +31,14 @@ export async function listSittingClasses(db: Db, paperId: string): Promise<Sitti
       db('class_set_students').whereRaw('class_set_students.class_set_id = class_sets.id').count('*').as('students'))) as { id: string; name: string; sat_on: string; students: number }[]
   return rows.map((row) => ({ classSetId: row.id, className: row.name, satOn: row.sat_on, students: row.students }))
 }
+
+export async function getAttendance(db: Db, classSetId: string, studentId: string): Promise<Attendance | null> {
+  const row = await db<Row>('class_set_students').where({ class_set_id: classSetId, student_id: studentId }).first('attendance')
+  return row?.attendance ?? null
+}
+
+/** The paper of a class set; null when there is no such class set. */
+export async function paperOfClassSet(db: Db, classSetId: string): Promise<string | null> {
+  const row = await db('class_sets').where({ id: classSetId }).first<{ paper_id: string } | undefined>('paper_id')
+  return row?.paper_id ?? null
+}

@@ -97,3 +97,28 @@ export async function dropScriptPage(db: Db, pageId: string): Promise<void> {
 export async function dropScript(db: Db, scriptId: string): Promise<void> {
   await db<ScriptRow>('scripts').where({ id: scriptId }).delete()
 }
+
+/** Puts a script back as it was, whether it is still there or not. */
+export async function putScript(db: Db, script: Script): Promise<void> {
+  const there = await db<ScriptRow>('scripts').where({ id: script.id }).first('id')
+  if (there) await setScriptName(db, script.id, script)
+  else await addScript(db, script)
+}
+
+/** Puts a script page back as it was, without its leaf: see `setCurrentLeaf`. */
+export async function putScriptPage(db: Db, page: ScriptPage): Promise<void> {
+  const there = await db<PageRow>('script_pages').where({ id: page.id }).first('id')
+  if (there) await db<PageRow>('script_pages').where({ id: page.id }).update({ script_id: page.scriptId, paper_page: page.paperPage, extra: page.extra ? 1 : 0, position: page.position })
+  else await addScriptPage(db, { ...page, leafId: null })
+}
+
+/** The pages of one script. */
+export async function listPagesOfScript(db: Db, scriptId: string): Promise<ScriptPage[]> {
+  return (await db<PageRow>('script_pages').where({ script_id: scriptId }).orderBy('position')).map(toPage)
+}
+
+/** The script that bears a student's name in a class set. */
+export async function findScriptOfStudent(db: Db, classSetId: string, studentId: string): Promise<Script | null> {
+  const row = await db<ScriptRow>('scripts').where({ class_set_id: classSetId, student_id: studentId }).first()
+  return row ? toScript(row) : null
+}

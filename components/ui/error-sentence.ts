@@ -35,6 +35,7 @@ const sentences: Record<ErrorCode | 'failed', string | ((detail: ErrorDetail) =>
   page_unreadable: 'This page cannot be read. Scan that sheet again.',
   place_taken: 'There is a page in that place already. Take it out first, or make this one an extra page.',
   no_registration: 'The printed lines do not fit that page. Drag its four corners to show where the page lies.',
+  name_taken: ({ script }) => `Script ${script ?? 'elsewhere'} bears this name already. Look at both name boxes: one of them is someone else’s.`,
   email_taken: 'Another account has this e-mail address.',
   user_name_taken: 'Another account has this user name.',
   link_used: 'This link has been used, or its time is over. Ask for a new one.',

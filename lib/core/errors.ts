@@ -42,6 +42,7 @@ export const errorStatus = {
   // placing
   place_taken: 409,
   no_registration: 422,
+  name_taken: 409,
   // people
   email_taken: 409,
   user_name_taken: 409,

@@ -1,0 +1,113 @@
+import type { LeafFinding, LeafReading } from '@/lib/core/leaf'
+import type { Homography, Turn } from '@/lib/core/paper-space'
+import { newId } from '@/lib/core/ids'
+import type { Db } from './knex'
+
+export type LeafState = 'read' | 'placed' | 'loose' | 'blank' | 'set_aside'
+export type LeafGlance = 'clear' | 'unclear' | 'empty' | 'unreadable'
+
+type LeafRow = {
+  id: string; sheaf_id: string; position: number; half: 0 | 1 | null; state: LeafState; glance: LeafGlance; read_at: number; width: number | null; height: number | null; turn: Turn
+  homography: string | null; paper_page: number | null; confidence: number | null; problem: string | null; finding: string; script_page_id: string | null
+  decided_by: string | null; decided_at: number | null
+}
+
+/** A scanned page where it stands now. `position` counts from 0 in its sheaf; sizes are pixels of the stored image. */
+export type Leaf = Readonly<{
+  id: string; sheafId: string; position: number; half: 0 | 1 | null; state: LeafState; glance: LeafGlance; readAt: number; width: number | null; height: number | null; turn: Turn
+  homography: Homography | null; paperPage: number | null; confidence: number | null; problem: string | null; scriptPageId: string | null
+  decidedBy: string | null; decidedAt: number | null
+}>
+/** What the engine saw on a leaf, and where it put it once its neighbours were known. */
+export type LeafEvidence = Readonly<{ reading: LeafReading; placed: LeafFinding | null }>
+
+const nothingSeen = { guesses: [], image: null, empty: false, clear: false, ink: null } as const
+/** A finding that is not there (a leaf made by hand) is one that shows nothing. */
+function toEvidence(row: Pick<LeafRow, 'finding' | 'position'>): LeafEvidence {
+  const { reading, placed } = JSON.parse(row.finding) as Partial<LeafEvidence>
+  return { reading: reading ?? { index: row.position, ...nothingSeen }, placed: placed ?? null }
+}
+
+const light = ['id', 'sheaf_id', 'position', 'half', 'state', 'glance', 'read_at', 'width', 'height', 'turn', 'homography', 'paper_page', 'confidence', 'problem', 'script_page_id', 'decided_by', 'decided_at']
+  .map((column) => `leaves.${column}`)
+
+function toLeaf(row: LeafRow): Leaf {
+  return {
+    id: row.id, sheafId: row.sheaf_id, position: row.position, half: row.half, state: row.state, glance: row.glance, readAt: row.read_at, width: row.width, height: row.height, turn: row.turn,
+    homography: row.homography ? (JSON.parse(row.homography) as Homography) : null, paperPage: row.paper_page, confidence: row.confidence, problem: row.problem,
+    scriptPageId: row.script_page_id, decidedBy: row.decided_by, decidedAt: row.decided_at,
+  }
+}
+
+function glanceOf(reading: LeafReading): LeafGlance {
+  if (reading.problem) return 'unreadable'
+  if (reading.empty) return 'empty'
+  return reading.clear ? 'clear' : 'unclear'
+}
+
+/** Keeps what one leaf showed. Read twice it stays one row: the first finding holds. */
+export async function addLeafReading(db: Db, sheafId: string, reading: LeafReading): Promise<void> {
+  const best = reading.guesses[0]
+  await db('leaves').insert({
+    id: newId(), sheaf_id: sheafId, position: reading.index, half: reading.half ?? null, state: 'read', glance: glanceOf(reading), read_at: Date.now(),
+    width: reading.image?.width ?? null, height: reading.image?.height ?? null, turn: best?.rotation ?? reading.image?.shownTurn ?? 0,
+    paper_page: reading.clear ? (best?.paperPage ?? null) : null, confidence: best?.confidence ?? null, problem: reading.problem ?? null,
+    finding: JSON.stringify({ reading, placed: null } satisfies LeafEvidence),
+  }).onConflict().ignore()
+}
+
+/** The positions of a sheaf that were read already. */
+export async function listReadPositions(db: Db, sheafId: string): Promise<number[]> {
+  return (await db<LeafRow>('leaves').where({ sheaf_id: sheafId }).orderBy('position').pluck('position')) as number[]
+}
+
+/** The leaves of a sheaf in order, each with what the engine saw. */
+export async function listLeavesWithEvidence(db: Db, sheafId: string): Promise<{ leaf: Leaf; evidence: LeafEvidence }[]> {
+  const rows = await db<LeafRow>('leaves').where({ sheaf_id: sheafId }).orderBy(['position', 'half'])
+  return rows.map((row) => ({ leaf: toLeaf(row), evidence: toEvidence(row) }))
+}
+
+/** Every leaf of a paper in order of sheaf and position, without the engine's findings. */
+export async function listLeavesOfPaper(db: Db, paperId: string): Promise<Leaf[]> {
+  const rows = (await db('leaves').join('sheaves', 'sheaves.id', 'leaves.sheaf_id').where('sheaves.paper_id', paperId)
+    .orderBy(['sheaves.created_at', 'leaves.sheaf_id', 'leaves.position', 'leaves.half']).select(light)) as LeafRow[]
+  return rows.map(toLeaf)
+}
+
+export async function getLeaf(db: Db, id: string): Promise<(Leaf & { paperId: string }) | null> {
+  const row = (await db('leaves').join('sheaves', 'sheaves.id', 'leaves.sheaf_id').where('leaves.id', id).select([...light, 'sheaves.paper_id']).first()) as (LeafRow & { paper_id: string }) | undefined
+  return row ? { ...toLeaf(row), paperId: row.paper_id } : null
+}
+
+/** What the engine saw, leaf by leaf. */
+export async function getLeafEvidence(db: Db, leafIds: readonly string[]): Promise<Map<string, LeafEvidence>> {
+  const found = new Map<string, LeafEvidence>()
+  for (let from = 0; from < leafIds.length; from += 400) {
+    const rows = await db<LeafRow>('leaves').whereIn('id', leafIds.slice(from, from + 400)).select('id', 'position', 'finding')
+    for (const row of rows) found.set(row.id, toEvidence(row))
+  }
+  return found
+}
+
+export type LeafPlace = Pick<Leaf, 'state' | 'turn' | 'homography' | 'paperPage' | 'scriptPageId' | 'decidedBy' | 'decidedAt'>
+
+/** Puts a leaf somewhere else. What is not named stays. */
+export async function moveLeaf(db: Db, id: string, to: Partial<LeafPlace & { confidence: number | null; evidence: LeafEvidence }>): Promise<void> {
+  const change: Partial<LeafRow> = {}
+  if (to.state !== undefined) change.state = to.state
+  if (to.turn !== undefined) change.turn = to.turn
+  if (to.homography !== undefined) change.homography = to.homography ? JSON.stringify(to.homography) : null
+  if (to.paperPage !== undefined) change.paper_page = to.paperPage
+  if (to.scriptPageId !== undefined) change.script_page_id = to.scriptPageId
+  if (to.decidedBy !== undefined) change.decided_by = to.decidedBy
+  if (to.decidedAt !== undefined) change.decided_at = to.decidedAt
+  if (to.confidence !== undefined) change.confidence = to.confidence
+  if (to.evidence !== undefined) change.finding = JSON.stringify(to.evidence)
+  await db<LeafRow>('leaves').where({ id }).update(change)
+}
+
+/** The newest other leaf of a script page: the scan that held before a later one took its place. */
+export async function findOlderLeaf(db: Db, scriptPageId: string, besides: string): Promise<Leaf | null> {
+  const row = await db<LeafRow>('leaves').where({ script_page_id: scriptPageId, state: 'placed' }).whereNot({ id: besides }).orderBy('decided_at', 'desc').first()
+  return row ? toLeaf(row) : null
+}

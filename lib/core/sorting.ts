@@ -1,0 +1,71 @@
+import type { LeafProblem, LeafReason } from './leaf'
+import type { Turn } from './paper-space'
+
+/** Where a leaf may be put: in a script, or in a new one of a student who has none. */
+export type PlaceTarget = Readonly<{ scriptId: string } | { classSetId: string; studentId: string }>
+
+/** Why a place is likely. `apart` counts leaves between the loose sheet and the nearest leaf of that script. */
+export type PlaceReason = 'follows' | 'precedes' | 'second_scan' | 'no_script'
+export type LikelyPlace = Readonly<{ target: PlaceTarget; reason: PlaceReason; apart: number }>
+
+export type SortStudent = Readonly<{
+  classSetId: string
+  className: string
+  studentId: string
+  candidateNumber: string
+  givenName: string
+  familyName: string
+  attendance: 'expected' | 'absent' | 'excused'
+  /** The script that bears this name. */
+  scriptId: string | null
+  /** Another student of these lists has the same name: read the number. */
+  sameName: boolean
+}>
+
+export type SortScriptPage = Readonly<{ id: string; paperPage: number | null; leafId: string | null }>
+/** A script on the sorting table. `student` is the confirmed name, `suggested` only a guess with its reason. */
+export type SortScript = Readonly<{
+  id: string
+  number: number
+  classSetId: string
+  studentId: string | null
+  suggestedStudentId: string | null
+  suggestionReason: string | null
+  pages: readonly SortScriptPage[]
+  missing: readonly number[]
+}>
+
+/** A leaf by the number a person counts from 1, in its sheaf. */
+export type LeafStub = Readonly<{ id: string; number: number; sheafName: string; turn: Turn }>
+export type LeafNeighbour = Readonly<{ number: number; state: 'placed' | 'loose' | 'blank' | 'set_aside' | 'read'; paperPage: number | null; scriptId: string | null }>
+
+export type LooseLeaf = LeafStub & Readonly<{
+  width: number | null
+  height: number | null
+  /** The page its print says it is; null when the print does not say. */
+  paperPage: number | null
+  guesses: readonly Readonly<{ paperPage: number; confidence: number }>[]
+  reasons: readonly LeafReason[]
+  problem: LeafProblem | null
+  before: LeafNeighbour | null
+  after: LeafNeighbour | null
+  places: readonly LikelyPlace[]
+}>
+
+/** Everything the sorting table shows. */
+export type SortingTable = Readonly<{
+  paperId: string
+  title: string
+  classes: readonly string[]
+  pages: readonly Readonly<{ page: number; width: number; height: number }>[]
+  /** The page with the name box; null when the paper has none. */
+  namePage: number | null
+  students: readonly SortStudent[]
+  scripts: readonly SortScript[]
+  loose: readonly LooseLeaf[]
+  setAside: readonly LeafStub[]
+  blank: readonly LeafStub[]
+  /** Sheaves still being read: more will come. */
+  reading: number
+  lastAct: string | null
+}>

@@ -1,0 +1,92 @@
+import type { Actor } from '@/lib/core/actor'
+import { AppError } from '@/lib/core/errors'
+import type { LeafNeighbour, LeafStub, LooseLeaf, PlaceTarget, SortScript, SortScriptPage, SortStudent, SortingTable } from '@/lib/core/sorting'
+import { listClassSetStudents, listSittingClasses, type SittingClass } from '@/db/class-set-students'
+import { db } from '@/db/knex'
+import { getLeafEvidence, listLeavesOfPaper, type Leaf, type LeafEvidence } from '@/db/leaves'
+import { getPaper } from '@/db/papers'
+import { listScriptPages, listScripts } from '@/db/scripts'
+import { listSheaves } from '@/db/sheaves'
+import { lastSortingDecision } from '@/db/sorting-decisions'
+import { likelyPlaces } from '@/lib/placing/likely-places'
+import { gatePaper } from './gate-paper'
+
+/** Loose sheets with what is known of them, names to confirm, and everyone's script: what the sorting table shows. */
+export async function readSortingTable(actor: Actor, paperId: string): Promise<SortingTable> {
+  await gatePaper(db(), actor, 'change', paperId)
+  const paper = await getPaper(db(), paperId)
+  if (!paper) throw new AppError('not_found')
+  const sheaves = await listSheaves(db(), paperId)
+  const names = new Map(sheaves.map((sheaf) => [sheaf.id, sheaf.name]))
+  const leaves = await listLeavesOfPaper(db(), paperId)
+  const loose = leaves.filter((leaf) => leaf.state === 'loose')
+  const evidence = await getLeafEvidence(db(), loose.map(({ id }) => id))
+  const classes = await listSittingClasses(db(), paperId)
+  const students = await studentsOf(classes)
+  const scripts = await scriptsOf(paperId, paper.pages.map(({ page }) => page))
+  const stub = (leaf: Leaf): LeafStub => ({ id: leaf.id, number: leaf.position + 1, sheafName: names.get(leaf.sheafId) ?? '', turn: leaf.turn })
+  const pile: Pile = { leaves, scripts, students }
+  return {
+    paperId, title: paper.title, classes: [...new Set(classes.map(({ className }) => className))], pages: paper.pages, students, scripts,
+    namePage: paper.boxes.find(({ kind }) => kind === 'name')?.page ?? paper.boxes[0]?.page ?? null,
+    loose: loose.map((leaf) => ({ ...stub(leaf), ...looseOf(leaf, evidence.get(leaf.id) ?? null, pile) })),
+    setAside: leaves.filter(({ state }) => state === 'set_aside').map(stub),
+    blank: leaves.filter(({ state }) => state === 'blank').map(stub),
+    reading: sheaves.filter(({ state }) => state === 'waiting' || state === 'reading').length,
+    lastAct: (await lastSortingDecision(db(), paperId, actor.userId))?.act ?? null,
+  }
+}
+
+type Pile = Readonly<{ leaves: readonly Leaf[]; scripts: readonly SortScript[]; students: readonly SortStudent[] }>
+
+async function studentsOf(classes: readonly SittingClass[]): Promise<SortStudent[]> {
+  const listed = await listClassSetStudents(db(), classes.map(({ classSetId }) => classSetId))
+  const called = (one: { givenName: string; familyName: string }) => `${one.givenName} ${one.familyName}`
+  return listed.map((one) => ({
+    ...one, className: classes.find(({ classSetId }) => classSetId === one.classSetId)?.className ?? '',
+    sameName: listed.some((other) => other.studentId !== one.studentId && called(other) === called(one)),
+  }))
+}
+
+async function scriptsOf(paperId: string, paperPages: readonly number[]): Promise<SortScript[]> {
+  const pages = new Map<string, SortScriptPage[]>()
+  for (const { id, scriptId, paperPage, leafId } of await listScriptPages(db(), paperId)) pages.set(scriptId, [...(pages.get(scriptId) ?? []), { id, paperPage, leafId }])
+  return (await listScripts(db(), paperId)).map((script) => {
+    const own = pages.get(script.id) ?? []
+    return {
+      id: script.id, number: script.position, classSetId: script.classSetId, studentId: script.studentId, suggestedStudentId: script.suggestedStudentId,
+      suggestionReason: script.suggestionReason, pages: own, missing: paperPages.filter((page) => !own.some(({ paperPage, leafId }) => paperPage === page && leafId !== null)),
+    }
+  })
+}
+
+function looseOf(leaf: Leaf, evidence: LeafEvidence | null, pile: Pile): Omit<LooseLeaf, keyof LeafStub> {
+  const reasons = evidence?.placed?.reasons ?? []
+  const guesses = (evidence?.reading.guesses ?? []).map(({ paperPage, confidence }) => ({ paperPage, confidence }))
+  const own = pile.leaves.filter(({ sheafId }) => sheafId === leaf.sheafId)
+  const at = own.findIndex(({ id }) => id === leaf.id)
+  const paperPage = leaf.paperPage ?? guesses[0]?.paperPage ?? null
+  return {
+    width: leaf.width, height: leaf.height, paperPage: leaf.paperPage, guesses, reasons, problem: evidence?.reading.problem ?? null,
+    before: neighbour(own[at - 1], pile), after: neighbour(own[at + 1], pile),
+    places: likelyPlaces({ position: leaf.position, paperPage, secondScan: reasons.includes('duplicate_page') }, piled(own, pile.scripts), withoutScript(pile)),
+  }
+}
+
+function neighbour(leaf: Leaf | undefined, { scripts }: Pile): LeafNeighbour | null {
+  if (!leaf) return null
+  const script = scripts.find(({ pages }) => pages.some(({ id }) => id === leaf.scriptPageId))
+  return { number: leaf.position + 1, state: leaf.state, paperPage: leaf.paperPage, scriptId: script?.id ?? null }
+}
+
+function piled(own: readonly Leaf[], scripts: readonly SortScript[]) {
+  const positions = new Map(own.map((leaf) => [leaf.id, leaf.position]))
+  return scripts.map(({ id, pages }) => ({ id, pages: pages.map(({ paperPage, leafId }) => ({ paperPage, position: positions.get(leafId ?? '') ?? null })) }))
+}
+
+/** Who has no script at all, not even a likely one. Those expected come first. */
+function withoutScript({ students, scripts }: Pile): PlaceTarget[] {
+  const likely = new Set(scripts.flatMap(({ suggestedStudentId }) => suggestedStudentId ?? []))
+  const free = students.filter(({ scriptId, studentId }) => scriptId === null && !likely.has(studentId))
+  return free.toSorted((a, b) => Number(a.attendance !== 'expected') - Number(b.attendance !== 'expected')).map(({ classSetId, studentId }) => ({ classSetId, studentId }))
+}

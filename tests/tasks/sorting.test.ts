@@ -13,9 +13,9 @@ import { placeLeaf } from '@/lib/tasks/place-leaf'
 import { placeSheaf } from '@/lib/tasks/place-sheaf'
 import { readSortingTable } from '@/lib/tasks/read-sorting-table'
 import { undoSorting } from '@/lib/tasks/undo-sorting'
-import { anActor, closeSchool, openSchool } from '../make/school'
-import { aClassSetPaper } from '../make/class-set'
-import { aWaitingSheaf } from '../make/sheaf'
+import { anActor, closeSchool, openSchool } from '@/tests/make/school'
+import { aClassSetPaper, classSetFile } from '@/tests/make/class-set'
+import { aWaitingSheaf } from '@/tests/make/sheaf'
 
 let teacher: Actor
 let paperId: string
@@ -31,7 +31,7 @@ const leaf = (index: number, page: number | null): LeafReading => page
 
 /** A sheaf whose leaves show these pages, read and placed by the engine's own rule. */
 async function placed(...pages: (number | null)[]): Promise<void> {
-  const sheafId = await aWaitingSheaf(paperId, classSetId, (await import('../make/class-set')).classSetFile('everyday', 'scan.pdf'), pages.length)
+  const sheafId = await aWaitingSheaf(paperId, classSetId, classSetFile('everyday', 'scan.pdf'), pages.length)
   await db().transaction(async (trx) => {
     await startSheaf(trx, sheafId, pages.length)
     for (const [index, page] of pages.entries()) await addLeafReading(trx, sheafId, leaf(index, page))

@@ -6,9 +6,9 @@ import { afterAll, beforeAll, expect, it } from 'vitest'
 import { db, putDb } from '@/db/knex'
 import { migrate } from '@/db/migrate'
 import { env } from '@/lib/infra/env'
-import { anActor } from '../make/school'
-import { aClassSetPaper } from '../make/class-set'
-import { aWaitingSheaf } from '../make/sheaf'
+import { anActor } from '@/tests/make/school'
+import { aClassSetPaper } from '@/tests/make/class-set'
+import { aWaitingSheaf } from '@/tests/make/sheaf'
 
 const workers: ChildProcess[] = []
 

@@ -8,9 +8,9 @@ const mostBlankPages = 40
 
 /**
  * Draws the pages of a blank paper in grey at `templateDpi`, as a reader shows them (CropBox and /Rotate respected), with
- * their sizes in points. Throws the file errors of openSheaf, and too_many_pages beyond 40.
+ * their sizes in points; `only` (from 1) draws that page alone. Throws the file errors of openSheaf, and too_many_pages beyond 40.
  */
-export async function openBlankPaper(bytes: Uint8Array, dpi = templateDpi): Promise<BlankPage[]> {
+export async function openBlankPaper(bytes: Uint8Array, dpi = templateDpi, only?: number): Promise<BlankPage[]> {
   if (bytes.length === 0) throw new AppError('file_empty')
   if (!Buffer.from(bytes.subarray(0, 1024)).includes('%PDF-')) throw new AppError('file_not_pdf')
   const { engine, document, close } = await openDocument(bytes)
@@ -18,7 +18,8 @@ export async function openBlankPaper(bytes: Uint8Array, dpi = templateDpi): Prom
     const count = engine._FPDF_GetPageCount(document)
     if (count === 0) throw new AppError('file_no_pages')
     if (count > mostBlankPages) throw new AppError('too_many_pages', { pages: count, most: mostBlankPages })
-    return Array.from({ length: count }, (_, index) => blankPage(engine, document, index, dpi))
+    const wanted = Array.from({ length: count }, (_, index) => index).filter((index) => only === undefined || index === only - 1)
+    return wanted.map((index) => blankPage(engine, document, index, dpi))
   } finally {
     close()
   }

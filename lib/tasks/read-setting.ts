@@ -1,26 +1,13 @@
 import type { Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
-import type { PaperPage, Withdrawal } from '@/lib/core/paper'
-import { settingOf, type Setting } from '@/lib/core/setting'
+import { settingOf } from '@/lib/core/setting'
+import type { SettingView } from '@/lib/core/setting-view'
 import { db } from '@/db/knex'
 import { getPaper } from '@/db/papers'
 import { touchedByMarking } from '@/db/touched-by-marking'
 import { gatePaper } from './gate-paper'
 
-/** A paper as the Set screen opens it. `stamped` are ids of questions and points that marking has touched. */
-export type SettingView = Readonly<{
-  paperId: string
-  title: string
-  version: number
-  /** Changes with each new blank paper; null: there is none yet. */
-  blank: string | null
-  pages: readonly PaperPage[]
-  setting: Setting
-  stamped: readonly string[]
-  withdrawnQuestions: Readonly<Record<string, Withdrawal>>
-  withdrawnPoints: readonly string[]
-}>
-
+/** All that the Set screen shows and changes. */
 export async function readSetting(actor: Actor, paperId: string): Promise<SettingView> {
   await gatePaper(db(), actor, 'change', paperId)
   const paper = await getPaper(db(), paperId)

@@ -1,0 +1,17 @@
+import type { PaperPage, Withdrawal } from './paper'
+import type { Setting } from './setting'
+
+/** A paper as the Set screen opens it. `stamped` are ids of questions and points that marking has touched. */
+export type SettingView = Readonly<{
+  paperId: string
+  title: string
+  /** The scheme's version: a save names the one it was made on. */
+  version: number
+  /** Changes with each new blank paper; null: there is none yet. */
+  blank: string | null
+  pages: readonly PaperPage[]
+  setting: Setting
+  stamped: readonly string[]
+  withdrawnQuestions: Readonly<Record<string, Withdrawal>>
+  withdrawnPoints: readonly string[]
+}>

@@ -2,7 +2,6 @@ import type { HalfMarks } from '@/lib/core/marks'
 import type { Attendance, MarkBookQuestion } from '@/lib/core/mark-book'
 import type { Db } from './knex'
 
-export type ClassSetOfPaper = Readonly<{ id: string; className: string; satOn: string }>
 export type StudentOfSet = Readonly<{ studentId: string; candidateNumber: string; givenName: string; familyName: string; attendance: Attendance }>
 export type ScriptOfSet = Readonly<{ scriptId: string; position: number; studentId: string | null; suggestedStudentId: string | null }>
 export type CellOfSet = Readonly<{
@@ -19,11 +18,6 @@ export type CellOfSet = Readonly<{
   flagged: 0 | 1
   adjustment: number
 }>
-
-export async function listClassSets(db: Db, paperId: string): Promise<ClassSetOfPaper[]> {
-  return db('class_sets').join('classes', 'classes.id', 'class_sets.class_id').where('class_sets.paper_id', paperId)
-    .orderBy(['class_sets.sat_on', 'classes.name']).select({ id: 'class_sets.id', className: 'classes.name', satOn: 'class_sets.sat_on' })
-}
 
 export async function listColumns(db: Db, paperId: string): Promise<MarkBookQuestion[]> {
   return db('questions').where({ paper_id: paperId }).orderBy('position').select('id', 'label', 'maximum', { withdrawn: 'withdrawn_as' })

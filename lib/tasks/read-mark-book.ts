@@ -1,8 +1,9 @@
 import { mayOnPaper, type Actor, type PaperStanding } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
 import type { MarkBook } from '@/lib/core/mark-book'
+import { listClassSets } from '@/db/class-sets'
 import { db } from '@/db/knex'
-import { listCells, listClassSets, listColumns, listScriptsOfSet, listStudentsOfSet, type CellOfSet } from '@/db/mark-book'
+import { listCells, listColumns, listScriptsOfSet, listStudentsOfSet, type CellOfSet } from '@/db/mark-book'
 import { getScale } from '@/db/grade-scales'
 import { blindResponseIds } from '@/db/samples'
 import { markBookOf, type Standing } from '@/lib/results/mark-book-of'
@@ -27,7 +28,7 @@ export async function readMarkBook(actor: Actor, paperId: string, classSetId?: s
   const standing = await gatePaper(db(), actor, 'see', paperId)
   const whole = mayOnPaper(actor, 'change', standing)
   if (!whole && !(actor.roles.includes('marker') && standing.marks.length > 0)) throw new AppError('not_allowed')
-  const classSets = await listClassSets(db(), paperId)
+  const classSets = (await listClassSets(db(), paperId)).map(({ id, className, satOn }) => ({ id, className, satOn }))
   const chosen = classSetId === undefined ? classSets[0] : classSets.find(({ id }) => id === classSetId)
   if (classSetId !== undefined && !chosen) throw new AppError('not_found')
   const questions = (await listColumns(db(), paperId)).filter(({ id }) => whole || marksQuestion(standing, id))

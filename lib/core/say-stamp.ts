@@ -2,7 +2,7 @@ import { sayMark, type HalfMarks } from './marks'
 import type { Stamp, StampKind } from './stamp'
 
 /** What the text codes stand for. A code that is not here is said as it is written. */
-const meaning: Readonly<Record<string, string>> = {
+const meaning: Readonly<Partial<Record<string, string>>> = {
   ft: 'follow through',
   ecf: 'error carried forward',
   isw: 'ignore subsequent working',
@@ -37,8 +37,13 @@ export function sayStamp(stamp: Pick<Stamp, 'kind' | 'worth' | 'text'>): string 
   return scores ? `${says}, ${sayWorth(stamp.worth)}` : says
 }
 
+/** What a text code stands for, whatever its capitals; null for a code of the school's own. */
+export function meaningOfCode(code: string): string | null {
+  return meaning[code.trim().toLowerCase()] ?? null
+}
+
 function sayCode(code: string): string {
-  const words = meaning[code.toLowerCase()]
+  const words = meaningOfCode(code)
   return words ? `Code ${code}, ${words}` : `Code ${code}`
 }
 

@@ -75,12 +75,11 @@ function uprightTurn(toPage: Homography): number {
 /** The page's own streams as they are, kept apart by q and Q, then the ink. */
 function drawOver(pdf: PDFDocument, to: PDFPage, from: PDFPage, copier: ObjectCopier, content: Uint8Array, ink: string, structure: Structure): void {
   const { opened, missing } = balance(content)
+  const opening = structure.opening(to)
   // A page with marked pieces of its own keeps their numbers, which mean nothing here; only the ink is a piece then.
-  const own = hasPieces(content)
-  const marked = structure.piece(to, own ? ink : '\u0000')
-  const [begin, end] = own ? ['', ''] : (marked.split('\u0000') as [string, string])
-  const before = packed(pdf.context, `${begin}${'q '.repeat(1 + missing)}\n`)
-  const after = packed(pdf.context, `\n${'Q '.repeat(1 + opened)}\n${own ? marked : ink + end}`)
+  const inkOnly = Buffer.from(content).includes('/MCID')
+  const before = packed(pdf.context, `${inkOnly ? '' : opening} ${'q '.repeat(1 + missing)}\n`)
+  const after = packed(pdf.context, `\n${'Q '.repeat(1 + opened)}\n${inkOnly ? opening : ''} ${ink} EMC`)
   const streams = from.node.Contents()
   const originals = streams instanceof PDFArray ? streams.asArray() : [from.node.get(PDFName.of('Contents'))].filter((one) => one !== undefined)
   const copies = originals.flatMap((original) => copier.copy(original) ?? [])
@@ -96,10 +95,6 @@ function balance(content: Uint8Array): { opened: number; missing: number } {
     lowest = Math.min(lowest, depth)
   }
   return { opened: depth - lowest, missing: -lowest }
-}
-
-function hasPieces(content: Uint8Array): boolean {
-  return Buffer.from(content).includes('/MCID')
 }
 
 function withFonts(own: PDFObject | undefined, added: PDFDict): PDFDict {

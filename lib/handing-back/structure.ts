@@ -27,11 +27,16 @@ export class Structure {
 
   /** Marks operators as a piece of the innermost open element. */
   piece(page: PDFPage, operators: string): string {
+    return `${this.opening(page)}\n${operators}\nEMC`
+  }
+
+  /** What begins a piece of the innermost open element; EMC ends it. */
+  opening(page: PDFPage): string {
     const id = this.counts.get(page) ?? 0
     this.counts.set(page, id + 1)
     const branch = this.open.at(-1)!
     branch.children.push({ page, id })
-    return `/${branch.tag} <</MCID ${id}>> BDC\n${operators}\nEMC`
+    return `/${branch.tag} <</MCID ${id}>> BDC`
   }
 
   /** Rules and other things that say nothing. */

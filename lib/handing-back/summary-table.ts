@@ -8,7 +8,7 @@ import { frame, leading, plain, small, type SummarySheets } from './summary-shee
 /** Where the table's columns lie, in points. `wholeEnd` is where whole figures end and the half hangs. */
 type Columns = Readonly<{ bodyLeft: number; bodyRight: number; marginLeft: number; wholeEnd: number; ofLeft: number }>
 /** A row ready to be drawn: its words broken into lines. */
-type Row = Readonly<{ label: string; points: readonly PointLine[]; comments: readonly string[]; says: string[]; mark: HalfMarks | null; signed: boolean; of: string; strong: boolean; height: number }>
+type Row = Readonly<{ label: string; points: readonly PointLine[]; comments: readonly string[]; says: string[]; mark: HalfMarks | null; signed: boolean; goesOn: boolean; of: string; strong: boolean; height: number }>
 
 const figure: Style = { face: 'sans-strong', size: 11.25, colour: ink.text }
 const label: Style = { face: 'book', size: 11.25, colour: ink.text }
@@ -17,7 +17,7 @@ const padding = 3.75
 /** What earned each mark, question by question, then the sum; goes on to further sheets under the same head. */
 export function drawTable(sheets: SummarySheets, summary: Summary): void {
   const columns = columnsFor(sheets, summary)
-  const rows = [...summary.questions.map((question) => questionRow(sheets, question, columns)), ...sumRows(sheets, summary, columns)]
+  const rows = [...summary.questions.flatMap((question) => broken(questionRow(sheets, question, columns))), ...sumRows(sheets, summary, columns)]
   sheets.structure.within('Table', () => {
     let top = drawHeads(sheets, columns)
     rows.forEach((row, k) => {
@@ -52,14 +52,23 @@ function questionRow({ type }: SummarySheets, question: QuestionResult, columns:
   const says = question.remark === null ? [] : type.lines(question.remark, 'sans', plain.size, room)
   const comments = question.comments.flatMap((comment) => comment.split('\n')).flatMap((comment) => type.lines(comment, 'book-italic', plain.size, room))
   const count = Math.max(1, points.length + says.length + comments.length)
-  return { label: question.label, points, comments, says, mark: question.mark, signed: false, of: `of ${sayMark(question.maximum)}`, strong: false, height: count * leading + 2 * padding }
+  return { label: question.label, points, comments, says, mark: question.mark, signed: false, goesOn: false, of: `of ${sayMark(question.maximum)}`, strong: false, height: count * leading + 2 * padding }
+}
+
+/** A row with more comments than a sheet holds goes on in rows without label and mark. */
+function broken(row: Row): Row[] {
+  const most = Math.max(5, 35 - row.points.length - row.says.length)
+  if (row.comments.length <= most) return [row]
+  const rest = row.comments.slice(most)
+  const first = { ...row, comments: row.comments.slice(0, most), height: row.height - rest.length * leading }
+  return [first, ...broken({ ...row, label: '', points: [], says: [], comments: rest, goesOn: true, height: rest.length * leading + 2 * padding })]
 }
 
 /** The sum of the ticks; where something was adjusted, each adjustment and what comes of it. */
 function sumRows({ type }: SummarySheets, { ticks, adjustments, total, maximum }: Summary, columns: Columns): Row[] {
   const row = (words: string, mark: HalfMarks, of: string, signed = false): Row => {
     const says = type.lines(words, 'sans-strong', plain.size, columns.bodyRight - columns.bodyLeft)
-    return { label: '', points: [], comments: [], says, mark, signed, of, strong: true, height: says.length * leading + 2 * padding }
+    return { label: '', points: [], comments: [], says, mark, signed, goesOn: false, of, strong: true, height: says.length * leading + 2 * padding }
   }
   const of = `of ${sayMark(maximum)}`
   const sum = row('The sum of the ticks on the pages that follow', ticks, adjustments.length === 0 ? of : '')
@@ -98,7 +107,7 @@ function drawRow(sheets: SummarySheets, row: Row, columns: Columns, summary: Sum
       for (const line of row.says) y = drawn(() => sheet.line(line, columns.bodyLeft, y, style), y)
       for (const line of row.comments) y = drawn(() => sheet.line(line, columns.bodyLeft, y, { face: 'book-italic', size: plain.size, colour: penColour[summary.pen] }), y)
     })
-    structure.within('TD', () => drawMark(sheets, row, columns, first, row.strong ? ink.text : penColour[summary.pen]))
+    structure.within('TD', () => !row.goesOn && drawMark(sheets, row, columns, first, row.strong ? ink.text : penColour[summary.pen]))
   })
   sheets.y += row.height
   if (!row.strong) sheet.rule(frame.left, sheets.y, frame.right, sheets.y, ink.rule)

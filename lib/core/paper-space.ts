@@ -87,6 +87,20 @@ export function shownPaper(h: Homography, image: Readonly<{ width: number; heigh
   return { x, y, w: Math.min(paper.width, xs[2]!) - x, h: Math.min(paper.height, ys[2]!) - y }
 }
 
+/** How far right, in points, a scan shows a paper at height `y`: the paper's edge, or where the scan's own slanted edge cuts it off. */
+export function shownRight(h: Homography, image: Readonly<{ width: number; height: number }>, paper: Readonly<{ width: number; height: number }>, y: number): number {
+  const { x, w } = shownPaper(h, image, paper)
+  let [inside, outside] = [x + w, paper.width]
+  for (let k = 0; k < 12; k++) {
+    const middle = (inside + outside) / 2
+    const at = toPixels(h, { x: middle, y })
+    const shows = at.x >= 0 && at.y >= 0 && at.x <= image.width && at.y <= image.height
+    if (shows) inside = middle
+    else outside = middle
+  }
+  return inside
+}
+
 /** The homography that takes four paper points to four pixels (both clockwise from top left): eight linear equations. */
 export function homographyFrom(paper: readonly PaperPoint[], pixels: readonly PixelPoint[]): Homography | null {
   const rows: number[][] = []

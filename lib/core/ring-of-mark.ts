@@ -31,10 +31,10 @@ export function pageTotal(mark: HalfMarks, pen: Pen, shown: PaperRect): readonly
 
 /**
  * Where the rings of a page go: in the right margin beside the foot of each answer space, in order, moved until none lies on another.
- * `shown` is the part of the paper that can be drawn on, in points: all of it, or what a scan shows of it.
+ * `shown` is the part of the paper that can be drawn on, in points: all of it, or what a scan shows of it; `rightAt` its right edge at a
+ * height, where that slants.
  */
-export function ringPlaces(spaces: readonly PaperRect[], shown: PaperRect): PaperPoint[] {
-  const x = shown.x + shown.w - markRingBox.w - overrun
+export function ringPlaces(spaces: readonly PaperRect[], shown: PaperRect, rightAt = (_y: number): number => shown.x + shown.w): PaperPoint[] {
   const pitch = markRingBox.h + 2 * overrun
   const [highest, lowest] = [shown.y + overrun, shown.y + shown.h - markRingBox.h - overrun]
   const taken: number[] = []
@@ -45,7 +45,8 @@ export function ringPlaces(spaces: readonly PaperRect[], shown: PaperRect): Pape
     const places = Array.from({ length: 200 }, (_, k) => wanted + (k % 2 === 0 ? -1 : 1) * Math.ceil(k / 2) * (pitch / 4))
     const y = places.find((place) => place >= highest && place <= lowest && free(place)) ?? wanted
     taken.push(y)
-    return { x, y }
+    const right = Math.min(rightAt(y - overrun), rightAt(y + markRingBox.h + overrun))
+    return { x: right - markRingBox.w - overrun, y }
   })
 }
 

@@ -1,6 +1,6 @@
 import { drawStamp } from '@/lib/core/drawing'
 import { sayMark, type HalfMarks } from '@/lib/core/marks'
-import { shownPaper, type Homography, type PaperRect } from '@/lib/core/paper-space'
+import { shownPaper, shownRight, type Homography, type PaperRect } from '@/lib/core/paper-space'
 import { pageTotal, ringOfMark, ringPlaces } from '@/lib/core/ring-of-mark'
 import { meaningOfCode, sayStamp } from '@/lib/core/say-stamp'
 import type { Pen, Stamp } from '@/lib/core/stamp'
@@ -24,11 +24,13 @@ export type MarkedPage = Readonly<{
 /** The page's drawings: stamps where they were pressed, then the marks in their rings and the page's sum, in the part the scan shows. */
 export function drawMarkedPage({ paper, image, homography, stamps, marks, total }: MarkedPage): Drawing[] {
   const shown = shownPaper(homography, image, paper)
-  const places = ringPlaces(marks.map(({ space }) => space), shown)
+  const rightAt = (y: number): number => shownRight(homography, image, paper, y)
+  const places = ringPlaces(marks.map(({ space }) => space), shown, rightAt)
+  const foot = shown.y + shown.h
   return [
     ...kept(stamps).map(({ stamp, pen }) => ({ pen, inks: drawStamp(stamp) })),
     ...marks.map(({ mark, pen }, k) => ({ pen, inks: ringOfMark(mark, pen, places[k]!) })),
-    ...(total ? [{ pen: total.pen, inks: pageTotal(total.mark, total.pen, shown) }] : []),
+    ...(total ? [{ pen: total.pen, inks: pageTotal(total.mark, total.pen, { ...shown, w: Math.min(rightAt(foot - 34), rightAt(foot)) - shown.x }) }] : []),
   ]
 }
 

@@ -1,17 +1,10 @@
-import { readFile } from 'node:fs/promises'
 import type { Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
-import { newId } from '@/lib/core/ids'
-import { addAuditLine } from '@/db/audit'
 import { listSittingClasses } from '@/db/class-set-students'
-import { addJob } from '@/db/jobs'
-import { db, transaction, type Db } from '@/db/knex'
-import { addSheaf, findSheafOfBytes } from '@/db/sheaves'
-import { addStoredFile } from '@/db/stored-files'
-import { keepFile } from '@/lib/infra/file-store'
-import { dropUpload, findUpload, type Upload } from '@/lib/infra/sheaf-uploads'
-import { openSheaf } from '@/lib/reading/open-sheaf'
+import { db, type Db } from '@/db/knex'
+import { dropUpload, findUpload } from '@/lib/infra/sheaf-uploads'
 import { gatePaper } from './gate-paper'
+import { keepSheaf } from './keep-sheaf'
 
 /**
  * Takes a complete upload over as a sheaf of the paper: looked at by its content, kept byte for byte, and put in the queue for
@@ -25,7 +18,7 @@ export async function receiveSheaf(actor: Actor, input: { paperId: string; uploa
   if (!upload || upload.userId !== actor.userId || upload.paperId !== input.paperId) throw new AppError('not_found')
   if (!upload.complete) throw new AppError('out_of_date')
   try {
-    const sheafId = await takeOver(actor, input.paperId, upload, classSetIds)
+    const sheafId = await keepSheaf(actor, { paperId: input.paperId, file: upload.file, name: upload.name, classSetIds })
     await dropUpload(upload.id)
     return { sheafId }
   } catch (error) {
@@ -33,25 +26,6 @@ export async function receiveSheaf(actor: Actor, input: { paperId: string; uploa
     if (error instanceof AppError) await dropUpload(upload.id)
     throw error
   }
-}
-
-async function takeOver(actor: Actor, paperId: string, upload: Upload, classSetIds: readonly string[]): Promise<string> {
-  const leafCount = await pagesOf(upload.file)
-  const { sha256, size } = await keepFile(upload.file)
-  return transaction(async (trx) => {
-    if (await findSheafOfBytes(trx, paperId, sha256)) throw new AppError('file_same')
-    const fileId = newId()
-    const sheafId = newId()
-    await addStoredFile(trx, { id: fileId, sha256, size, mediaType: 'application/pdf', originalName: upload.name, createdBy: actor.userId })
-    await addSheaf(trx, { id: sheafId, paperId, fileId, leafCount, classSetIds, createdBy: actor.userId })
-    await addJob(trx, 'read-sheaf', sheafId)
-    await addAuditLine(trx, actor, { act: 'sheaf.received', objectKind: 'sheaf', objectId: sheafId, paperId, to: sha256 })
-    return sheafId
-  })
-}
-
-async function pagesOf(file: string): Promise<number> {
-  return (await openSheaf(await readFile(file))).pageCount
 }
 
 async function chosenClassSets(db: Db, paperId: string, chosen: readonly string[]): Promise<string[]> {

@@ -1,0 +1,56 @@
+import { db } from '@/db/knex'
+import { listSittingClasses } from '@/db/class-set-students'
+import type { Actor } from '@/lib/core/actor'
+import { newId } from '@/lib/core/ids'
+import { addClass } from '@/lib/tasks/add-class'
+import { assignMarker } from '@/lib/tasks/assign-marker'
+import { createPaper } from '@/lib/tasks/create-paper'
+import { importRoster } from '@/lib/tasks/import-roster'
+import { readClassSetFile, type ClassSetName } from './class-set-files'
+import { markDemoResponses } from './demo-marking'
+import { addDemoStaff, type DemoStaff } from './demo-staff'
+import { confirmDemoNames, scanDemoSheaf } from './demo-scan'
+
+type Sat = Readonly<{ set: ClassSetName; classId: string; satOn: string; title?: string }>
+type Made = Readonly<{ paperId: string; classSetId: string; set: ClassSetName; name: string }>
+
+/** Fills an empty school with papers at five stages. Every leaf goes through the real ingest, every mark through the desk's tasks. */
+export async function fillDemoSchool(say: (line: string) => void): Promise<void> {
+  const staff = await addDemoStaff()
+  const teacher = staff['r.adeyemi']!
+  const classes = await addDemoClasses(staff)
+  await sitPaper(teacher, { set: 'one-page', classId: classes['6A']!, satOn: '2026-11-24', title: 'Quick quiz, to try the scan' })
+  say('  a paper waits for its sheaf')
+  const loose = await sitPaper(teacher, { set: 'booklet', classId: classes['7D']!, satOn: '2026-11-19' })
+  await scanDemoSheaf(teacher, loose)
+  await confirmDemoNames(teacher, loose, 8)
+  say('  a paper has loose sheets to sort')
+  await halfMarked(staff, await sitPaper(teacher, { set: 'everyday', classId: classes['8K']!, satOn: '2026-11-12' }))
+  say('  a paper is half marked')
+}
+
+async function addDemoClasses(staff: DemoStaff): Promise<Record<string, string>> {
+  const lists = { '6A': 'one-page', '7D': 'booklet', '8K': 'everyday', '9B': 'bitonal' } as const
+  const ids: Record<string, string> = {}
+  for (const [name, set] of Object.entries(lists)) {
+    ids[name] = (await addClass(staff['r.adeyemi']!, name)).classId
+    await importRoster(staff['r.adeyemi']!, ids[name]!, readClassSetFile(set, 'roster.csv'))
+  }
+  return ids
+}
+
+async function sitPaper(teacher: Actor, { set, classId, satOn, title = '' }: Sat): Promise<Made> {
+  const paperFile = JSON.parse(readClassSetFile(set, 'paper.json').toString('utf8')) as unknown
+  const { paperId } = await createPaper(teacher, { id: newId(), title, step: 1, classSets: [{ classId, satOn }], blank: { bytes: readClassSetFile(set, 'paper.pdf'), name: 'paper.pdf' }, paperFile })
+  const [sitting] = await listSittingClasses(db(), paperId)
+  return { paperId, classSetId: sitting!.classSetId, set, name: `${sitting!.className} ${satOn}.pdf` }
+}
+
+async function halfMarked({ 'r.adeyemi': teacher, 'm.osei': marker }: DemoStaff, made: Made): Promise<void> {
+  await scanDemoSheaf(teacher!, made)
+  await confirmDemoNames(teacher!, made)
+  await assignMarker(teacher!, { paperId: made.paperId, userId: marker!.userId, questionIds: null })
+  await markDemoResponses(marker!, { ...made, round: 'first', questions: (label) => label === '1a' || label === '2' })
+  await markDemoResponses(teacher!, { ...made, round: 'first', questions: (label) => label === '1b' || label === '3a' || label === '3b' })
+  await markDemoResponses(teacher!, { ...made, round: 'first', questions: (label) => label === '4', most: 12 })
+}

@@ -52,9 +52,16 @@ export async function countingMarkingId(db: Db, responseId: string): Promise<str
   return row?.marking_id ?? null
 }
 
+type Decision = Readonly<{ responseId: string; markingId: string; reason: string; decidedBy: string }>
+
 /** Decides, with its date, which marking counts; the decision before it stays on record. The same marking again changes nothing. */
-export async function decideCounting(db: Db, decision: Readonly<{ responseId: string; markingId: string; reason: string; decidedBy: string }>): Promise<void> {
+export async function decideCounting(db: Db, decision: Decision): Promise<void> {
   if ((await countingMarkingId(db, decision.responseId)) === decision.markingId) return
+  await decideAnew(db, decision)
+}
+
+/** A decision of its own date and reason even when the marking that counts stays the same: after comparing, "the first mark stands" is one. */
+export async function decideAnew(db: Db, decision: Decision): Promise<void> {
   const at = Date.now()
   await db<DecisionRow>('counting_decisions').where({ response_id: decision.responseId }).whereNull('superseded_at').update({ superseded_at: at })
   await db<DecisionRow>('counting_decisions').insert({

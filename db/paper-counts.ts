@@ -44,9 +44,9 @@ const statement = `
     (select count(*) from sampled) as sampled,
     (select count(*) from sampled where not exists (
       select 1 from responses join own_questions on own_questions.id = responses.question_id and own_questions.withdrawn_as is null
+      join markings first on first.response_id = responses.id and first.round = 'first' and first.state = 'settled' and first.marker_id <> sampled.moderator_id
       where responses.script_id = sampled.script_id and not exists (
-        select 1 from markings where response_id = responses.id
-        and ((round = 'second' and marker_id = sampled.moderator_id and state = 'settled') or (round = 'first' and marker_id = sampled.moderator_id))))) as sampleRead,
+        select 1 from markings where response_id = responses.id and round = 'second' and marker_id = sampled.moderator_id and state = 'settled'))) as sampleRead,
     (select count(distinct returned_scripts.script_id) from class_sets join releases on releases.class_set_id = class_sets.id and releases.state = 'released'
       join returned_scripts on returned_scripts.release_id = releases.id where class_sets.paper_id = :paper) as returned`
 

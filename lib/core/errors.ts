@@ -19,6 +19,10 @@ export const errorStatus = {
   own_first_marking: 403,
   question_withdrawn: 409,
   not_marked_yet: 409,
+  // second marking
+  moderator_not_blind: 409,
+  sample_closed: 409,
+  moderation_open: 409,
   nothing_stamped: 409,
   nought_with_marks: 422,
   base_missing: 422,

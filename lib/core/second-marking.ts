@@ -26,8 +26,13 @@ export type PersonChoice = Readonly<{ userId: string; name: string }>
 /** A class set as it stands before a sample is drawn: `toMark` answers still lack a mark. */
 export type SampleOffer = Readonly<{ classSetId: string; className: string; scripts: number; toMark: number; size: number; defaultSize: number; moderators: readonly PersonChoice[] }>
 
-/** A script of a sample. `read`: answers the moderator has settled, of `answers`. `name` only for an owner. */
-export type SampledScript = Readonly<{ scriptId: string; number: number; name: string | null; drawnAs: 'highest' | 'lowest' | 'spread' | 'added'; read: number; answers: number }>
+export type DrawnAs = 'highest' | 'lowest' | 'spread' | 'added'
+
+/**
+ * A script of a sample. `read`: answers the moderator has settled, of `answers`. `name` and
+ * `drawnAs` only for an owner: why a script was drawn tells about its first marks.
+ */
+export type SampledScript = Readonly<{ scriptId: string; number: number; name: string | null; drawnAs: DrawnAs | null; read: number; answers: number }>
 
 /** One answer with both marks. `decided` null: nobody has decided, the first mark counts meanwhile. */
 export type ComparedAnswer = Readonly<{
@@ -53,7 +58,6 @@ export type SampleView = Readonly<{
   defaultSize: number
   drawnAt: number
   closedAt: number | null
-  /** Before the moderator has read all: why each script was drawn would tell about first marks, so only an owner has `drawnAs`. */
   scripts: readonly SampledScript[]
   /** Scripts of the class set that may still be added, by running number. */
   addable: readonly { scriptId: string; number: number }[]

@@ -1,4 +1,5 @@
 import type { HalfMarks } from '@/lib/core/marks'
+import type { AgreementFigures } from '@/lib/core/second-marking'
 
 /** One response with both marks, in halves, and the tolerance it is held to. */
 export type MarkPair = Readonly<{ first: HalfMarks; second: HalfMarks; tolerance: HalfMarks }>
@@ -16,19 +17,8 @@ export function withinTolerance(pair: MarkPair): boolean {
   return Math.abs(differenceOf(pair)) <= pair.tolerance
 }
 
-/** How far two blind markings agree. `meanDifference` (first minus second) is in halves; null without pairs. */
-export type Agreement = Readonly<{
-  n: number
-  exact: number
-  within: number
-  meanDifference: number | null
-  few: boolean
-  /** How often each difference occurs, from the lowest, in halves. */
-  differences: readonly { difference: number; times: number }[]
-}>
-
 /** Agreement over pairs of one kind: blind and seen second marks are never handed in together. */
-export function agreementOf(pairs: readonly MarkPair[]): Agreement {
+export function agreementOf(pairs: readonly MarkPair[]): AgreementFigures {
   const differences = pairs.map(differenceOf)
   const times = new Map<number, number>()
   for (const difference of differences) times.set(difference, (times.get(difference) ?? 0) + 1)

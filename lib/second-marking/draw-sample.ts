@@ -1,9 +1,9 @@
 import { createHash } from 'node:crypto'
 import type { HalfMarks } from '@/lib/core/marks'
+import type { DrawnAs } from '@/lib/core/second-marking'
 
 /** A script that may be drawn: its total, and who marked which question of it, as one key each. */
 export type Candidate = Readonly<{ scriptId: string; total: HalfMarks; markedBy: readonly string[] }>
-export type DrawnAs = 'highest' | 'lowest' | 'spread' | 'added'
 export type Drawn = Readonly<{ scriptId: string; drawnAs: DrawnAs }>
 
 // Each script draws one lot from the seed: the same seed gives the same lots whatever the order the scripts come in.

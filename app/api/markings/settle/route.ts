@@ -1,0 +1,8 @@
+import { MarkingAsked } from '@/app/_door/marking-asked'
+import { requireActor } from '@/app/_door/require-actor'
+import { respond } from '@/lib/infra/respond'
+import { settleMarking } from '@/lib/tasks/settle-marking'
+
+export async function POST(request: Request): Promise<Response> {
+  return respond(request, async () => settleMarking(await requireActor(), MarkingAsked.parse(await request.json().catch(() => null))))
+}

@@ -19,7 +19,8 @@ const sideways = 26
  */
 export function placeByHabit(habit: StampPlace | undefined, spaces: readonly PaperRect[], taken: readonly StampPlace[], rank: number, of: number): StampPlace {
   const space = habit && spaces[habit.space] ? habit.space : 0
-  const rect = spaces[space]!
+  const rect = spaces[space]
+  if (!rect) return { space: 0, at: habit?.at ?? { x: 0, y: 0 } }
   const wanted = habit && spaces[habit.space] ? habit.at : { x: rect.x + rect.w * 0.62, y: rect.y + (rect.h * (rank + 1)) / (of + 1) }
   for (let k = 0; k < 12; k++) {
     const at = within(rect, { x: wanted.x + k * sideways, y: wanted.y })

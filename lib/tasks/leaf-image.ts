@@ -1,22 +1,37 @@
-import { PDFDocument, PDFName, PDFRawStream, PDFDict } from 'pdf-lib'
+import sharp from 'sharp'
 import { AppError } from '@/lib/core/errors'
 import { keptPicture } from '@/lib/infra/cut-store'
 import { readKept } from '@/lib/infra/file-store'
+import { drawStoredPage, sharpOf } from '@/lib/reading/decode-page'
+import { openSheaf, type OpenSheaf } from '@/lib/reading/open-sheaf'
 import type { Db } from '@/db/knex'
 import { getLeafSource } from '@/db/leaf-sources'
 
-let held: { sha256: string; open: Promise<PDFDocument> } | null = null
+type Held = Readonly<{ sha256: string; bytes: Buffer; sheaf: OpenSheaf }>
+// The sheaf last cut from stays open: a run goes through one sheaf leaf by leaf.
+let held: { sha256: string; work: Promise<Held> } | null = null
 
-/** The stored image of a leaf as a file a picture program reads, its pixels as the sheaf holds them. Throws not_found or page_unreadable. */
+function open(sha256: string): Promise<Held> {
+  if (held?.sha256 === sha256) return held.work
+  const work = readKept(sha256).then(async (bytes) => ({ sha256, bytes, sheaf: await openSheaf(bytes) }))
+  held = { sha256, work }
+  work.catch(() => { held = null })
+  return work
+}
+
+/**
+ * The stored image of a leaf as a file a picture program reads, its pixels as the sheaf holds them: a JPEG page's own bytes, any other page as PNG. Taken out of the sheaf once.
+ * Throws not_found or page_unreadable.
+ */
 export async function leafImage(db: Db, leafId: string): Promise<Buffer> {
   const source = await getLeafSource(db, leafId)
   if (!source) throw new AppError('not_found')
   return keptPicture(`${leafId}-leaf`, async () => {
-    if (held?.sha256 !== source.sha256) held = { sha256: source.sha256, open: readKept(source.sha256).then((bytes) => PDFDocument.load(bytes, { updateMetadata: false })) }
-    const page = (await held.open).getPage(source.index)
-    const images = page.node.Resources()?.lookup(PDFName.of('XObject'), PDFDict)
-    const [only] = (images?.entries() ?? []).map(([, ref]) => page.doc.context.lookup(ref))
-    if (!(only instanceof PDFRawStream)) throw new AppError('page_unreadable')
-    return Buffer.from(only.contents)
+    const { sheaf, bytes } = await open(source.sha256)
+    const page = sheaf.page(source.index)
+    if (page.image !== null && page.image.encoding === 'jpeg' && !page.inverted) return Buffer.from(page.bytes)
+    if (page.image) return sharpOf(page).png({ compressionLevel: 3 }).toBuffer()
+    const { picture } = await drawStoredPage(bytes, source.index, 3)
+    return sharp(picture.data, { raw: { width: picture.width, height: picture.height, channels: 3 } }).png({ compressionLevel: 3 }).toBuffer()
   })
 }

@@ -25,7 +25,7 @@ export type DeskState = Readonly<{
   selected: string | null
   /** The stamp taken up from the tray with the mouse: it goes where the page is clicked. */
   pen: StampKind | null
-  /** Where the pointer last was on the strip in hand since a stamp was placed. */
+  /** A place on the strip in hand that was pressed: the next stamp goes there. */
   pointer: Spot | null
   habits: Readonly<Record<string, StampPlace>>
   done: readonly Change[]
@@ -118,8 +118,9 @@ function learned({ habits }: DeskState, strip: Strip, stamps: readonly Stamp[]):
 /** Opened before it is changed; what goes before what comes, so that the server never sees too much; settled last. */
 function savesOf(round: Round, { responseId, stamps, from, to }: Change): Save[] {
   const pressed = (stamp: Stamp): Save => {
-    const { markingId: _marking, ...rest } = stamp
-    return { kind: 'stamp', stamp: { ...rest, responseId, round } }
+    const sent: PressedStamp & { markingId?: string } = { ...stamp, responseId, round }
+    delete sent.markingId
+    return { kind: 'stamp', stamp: sent }
   }
   const less = ({ before, after }: Change['stamps'][number]): number => (after.removed ? 0 : after.worth) - (before && !before.removed ? before.worth : 0)
   const sorted = [...stamps].sort((a, b) => less(a) - less(b) || Number(b.after.removed) - Number(a.after.removed))

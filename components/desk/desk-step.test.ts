@@ -141,8 +141,7 @@ describe('any sequence of events', () => {
         const at = server.get(save.kind === 'stamp' ? save.stamp.responseId : save.responseId)!
         if (save.kind === 'stamp') {
           expect(at.state).toBe('open')
-          const { responseId: _r, round: _round, ...pressed } = save.stamp
-          const stamp: Stamp = { ...pressed, markingId: '' }
+          const stamp: Stamp = { ...save.stamp, markingId: '' }
           const old = at.stamps.find((other) => other.id === stamp.id)
           expect(old?.version ?? 0).toBeLessThan(stamp.version)
           at.stamps = [...at.stamps.filter((other) => other.id !== stamp.id), stamp]

@@ -106,11 +106,18 @@ function pressPoint(state: DeskState, strip: Strip, { pointId, part }: Extract<D
 /** A stamp that belongs to no point: a plain tick or half tick, or a sign without a mark. */
 function pressFree(state: DeskState, strip: Strip, { kind, at, size, text }: Extract<DeskEvent, { type: 'stamp' }>, newId: () => string): Stepped {
   const worth = kind === 'tick' ? 2 : kind === 'half' ? 1 : 0
-  const points = state.run.question.points.length
-  const spot = at ?? state.pointer ?? spotOf(strip, placeByHabit(state.habits[habitOf({ kind, markPointId: null })], rects(strip), takenPlaces(strip), points, points + 1))
+  const spot = at ?? freeSpot(state, kind)
   const stamp = { ...newStamp(newId, kind, worth, spot), ...(size ?? {}), text: text?.trim() ?? '' }
   const done = commit(state, [...(worth > 0 ? noughts(strip) : []), stamp])
   return done.saves.length === 0 ? done : { ...done, state: { ...done.state, selected: stamp.id } }
+}
+
+/** Where a stamp without a point goes on the strip in hand: the place that was pressed, or where the last one of its kind went. */
+export function freeSpot(state: DeskState, kind: StampKind): Spot {
+  const strip = state.strips[state.hand]
+  if (state.pointer || !strip) return state.pointer ?? { scriptPageId: null, x: 0, y: 0 }
+  const points = state.run.question.points.length
+  return spotOf(strip, placeByHabit(state.habits[habitOf({ kind, markPointId: null })], rects(strip), takenPlaces(strip), points, points + 1))
 }
 
 function changed(state: DeskState, strip: Strip, id: string | null, change: (stamp: Stamp) => Partial<Stamp>): Stepped {

@@ -6,8 +6,11 @@ import { planRoster, type KnownStudent, type RosterPlan } from '@/lib/setting/pl
 import { readRoster } from '@/lib/setting/read-roster'
 import { gateClass } from './gate-class'
 
+/** The plan as its screen reads it. */
+export type RosterCheck = RosterPlan
+
 /** What importing this file would do, and each faulty line. Changes nothing. */
-export async function checkRoster(actor: Actor, classId: string, bytes: Uint8Array): Promise<RosterPlan> {
+export async function checkRoster(actor: Actor, classId: string, bytes: Uint8Array): Promise<RosterCheck> {
   await gateClass(db(), actor, classId)
   return planFor(db(), actor, classId, bytes)
 }

@@ -42,7 +42,7 @@ export function RosterImport({ back, check, bringIn }: RosterImportProps) {
     <>
       <p className="mb-4 max-w-[40rem]">A CSV file with the columns <i>candidate_number</i>, <i>given_name</i>, <i>family_name</i> and, if you have them, <i>email</i>. Known candidate numbers are updated; nobody is doubled, and nobody is taken out.</p>
       <div className="flex flex-wrap items-center gap-3">
-        <label className={`btn ${plan && plan.faults.length === 0 && !done ? '' : 'lead'} focus-within:outline-2 focus-within:outline-offset-2 focus-within:outline-ink`}>{file ? 'Choose another file' : 'Choose the class list'}<input className="vh" type="file" accept=".csv,.txt,.tsv,text/csv,text/plain" onChange={choose} /></label>
+        <label className={`btn ${done || plan?.faults.length === 0 ? '' : 'lead'} focus-within:outline-2 focus-within:outline-offset-2 focus-within:outline-ink`}>{file ? 'Choose another file' : 'Choose the class list'}<input className="vh" type="file" accept=".csv,.txt,.tsv,text/csv,text/plain" onChange={choose} /></label>
         {file && <span className="soft break-all">{file.name}</span>}
       </div>
       <div className="mt-4" aria-live="polite">

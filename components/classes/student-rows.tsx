@@ -19,9 +19,9 @@ export function StudentRows({ students, busy, onGive, onTakeOut }: StudentRowsPr
               <td className="whitespace-nowrap"><b className="font-semibold">{student.familyName}</b>, {student.givenName}</td>
               <td className="break-all">{student.email ?? <span className="soft">none</span>}</td>
               <td className="whitespace-nowrap">{says[student.account]}{student.signsInAs !== null && student.signsInAs !== student.email && <span className="soft">, as {student.signsInAs}</span>}</td>
-              <td className="text-right whitespace-nowrap">
+              <td className="pr-0 text-right whitespace-nowrap">
                 {student.account !== 'disabled' && <button className="btn plain" aria-label={`${student.account === 'none' ? 'Give account' : 'New link or slip'} to ${student.givenName} ${student.familyName}, ${student.candidateNumber}`} onClick={() => onGive(student)}>{student.account === 'none' ? 'Give account' : 'New link or slip'}</button>}
-                <button className="btn plain ml-2" disabled={busy} aria-label={`Take out ${student.givenName} ${student.familyName}, ${student.candidateNumber}`} onClick={() => onTakeOut(student)}>Take out</button>
+                <button className="btn plain ml-4" disabled={busy} aria-label={`Take out ${student.givenName} ${student.familyName}, ${student.candidateNumber}`} onClick={() => onTakeOut(student)}>Take out</button>
               </td>
             </tr>
           ))}

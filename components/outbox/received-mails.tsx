@@ -23,5 +23,15 @@ export function ReceivedMails({ mails, home }: { mails: readonly Mail[]; home: s
 }
 
 function Linked({ text, home }: { text: string; home: string }) {
-  return text.split(/(https?:\/\/\S+)/).map((part, k) => <Fragment key={k}>{part.startsWith(`${home}/`) ? <a href={part.slice(home.length)}>{part}</a> : part}</Fragment>)
+  return text.split(/(https?:\/\/\S+)/).map((part, k) => {
+    const path = pathHere(part, home)
+    return <Fragment key={k}>{path ? <a className="break-all" href={path}>{part}</a> : part}</Fragment>
+  })
+}
+
+/** A link of this school opens at whatever address the reader is at now, also when it was written while another was in use. */
+function pathHere(part: string, home: string): string | null {
+  const url = part.startsWith('http') && URL.canParse(part) ? new URL(part) : null
+  if (!url || (url.origin !== new URL(home).origin && url.hostname !== 'localhost')) return null
+  return `${url.pathname}${url.search}`
 }

@@ -32,7 +32,7 @@ export function PeopleTable({ people, self, acts }: PeopleTableProps) {
   }
   return (
     <>
-      <div className="min-h-6" aria-live="polite">{trouble ? <Alarm code={trouble.code} detail={trouble.detail} /> : <p className="line">{said}</p>}</div>
+      <div aria-live="polite">{trouble ? <Alarm code={trouble.code} detail={trouble.detail} /> : <p className="line">{said}</p>}</div>
       <div className="overflow-x-auto" tabIndex={0} role="region" aria-label="Accounts">
         <table className="tbl">
           <thead><tr><th>Name</th><th>Signs in as</th><th>Roles</th><th>Stands</th><th><span className="vh">What can be done</span></th></tr></thead>
@@ -40,13 +40,13 @@ export function PeopleTable({ people, self, acts }: PeopleTableProps) {
             {people.map((person) => (
               <tr key={person.userId}>
                 <td className="whitespace-nowrap"><b className="font-semibold">{person.familyName}</b>, {person.givenName}{person.userId === self && <span className="soft"> (you)</span>}</td>
-                <td>{[person.email, person.userName].filter(Boolean).join(', ')}</td>
+                <td className="break-words">{[person.email, person.userName].filter(Boolean).join(', ')}</td>
                 <td>{person.roles.join(', ')}</td>
                 <td className="whitespace-nowrap">{standing(person)}</td>
-                <td className="text-right whitespace-nowrap">
+                <td className="pr-0 text-right whitespace-nowrap">
                   {!person.roles.includes('student') && <button className="btn plain" disabled={busy} aria-label={`Change ${person.givenName} ${person.familyName}`} onClick={() => setChanging(person)}>Change</button>}
-                  {!person.disabled && <button className="btn plain ml-2" disabled={busy} aria-label={`${linkWords(person)} for ${person.givenName} ${person.familyName}`} onClick={() => send(person)}>{linkWords(person)}</button>}
-                  <button className="btn plain ml-2" disabled={busy} aria-label={`${person.disabled ? 'Enable' : 'Disable'} ${person.givenName} ${person.familyName}`} onClick={() => void run(person.disabled ? acts.enable(person.userId) : acts.disable(person.userId), () => setSaid(''))}>{person.disabled ? 'Enable' : 'Disable'}</button>
+                  {!person.disabled && <button className="btn plain ml-4" disabled={busy} aria-label={`${linkWords(person)} for ${person.givenName} ${person.familyName}`} onClick={() => send(person)}>{linkWords(person)}</button>}
+                  <button className="btn plain ml-4" disabled={busy} aria-label={`${person.disabled ? 'Enable' : 'Disable'} ${person.givenName} ${person.familyName}`} onClick={() => void run(person.disabled ? acts.enable(person.userId) : acts.disable(person.userId), () => setSaid(''))}>{person.disabled ? 'Enable' : 'Disable'}</button>
                 </td>
               </tr>
             ))}

@@ -7,7 +7,7 @@ import { AppError } from '@/lib/core/errors'
 import { newId } from '@/lib/core/ids'
 import { now } from '@/lib/infra/clock'
 
-export const ClassName = z.string().trim().min(1, 'is missing').max(40, 'is too long')
+export const ClassName = z.string().trim().min(1, 'Write a name').max(40, 'Use at most 40 letters')
 
 /** A new class; whoever makes it as a teacher teaches it. Throws already_there for a name that is taken. */
 export async function addClass(actor: Actor, name: string): Promise<{ classId: string }> {

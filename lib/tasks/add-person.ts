@@ -7,17 +7,17 @@ import { AppError } from '@/lib/core/errors'
 import { newId } from '@/lib/core/ids'
 import { issueCode, issueLink } from './issue-link'
 
-const name = z.string().trim().min(1, 'is missing').max(80, 'is too long')
+const name = z.string().trim().min(1, 'Write this down').max(80, 'Use at most 80 letters')
 export const staffRoles = ['teacher', 'marker', 'moderator', 'admin'] as const
 
 /** What is written down for a person of the staff. One of e-mail and user name is enough. */
 export const PersonForm = z.object({
   givenName: name,
   familyName: name,
-  email: z.union([z.literal('').transform(() => null), z.string().trim().toLowerCase().pipe(z.email('is not an e-mail address')), z.null()]),
-  userName: z.union([z.literal('').transform(() => null), z.string().trim().toLowerCase().regex(/^[a-z0-9][a-z0-9._-]{1,38}$/, 'takes 2 to 39 letters, figures, dots or dashes'), z.null()]),
-  roles: z.array(z.enum(staffRoles)).min(1, 'needs at least one role'),
-}).refine((person) => person.email !== null || person.userName !== null, { path: ['email'], message: 'or a user name is needed' })
+  email: z.union([z.literal('').transform(() => null), z.string().trim().toLowerCase().pipe(z.email('This is not an e-mail address')), z.null()]),
+  userName: z.union([z.literal('').transform(() => null), z.string().trim().toLowerCase().regex(/^[a-z0-9][a-z0-9._-]{1,38}$/, 'Use 2 to 39 letters, figures, dots or dashes'), z.null()]),
+  roles: z.array(z.enum(staffRoles)).min(1, 'Choose at least one role'),
+}).refine((person) => person.email !== null || person.userName !== null, { path: ['email'], message: 'Write this down, or a user name' })
 export type PersonForm = z.output<typeof PersonForm>
 
 /** A new account of the staff. With an e-mail address an invitation goes out; without one the code to hand over comes back, once. */

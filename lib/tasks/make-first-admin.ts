@@ -13,9 +13,9 @@ import { assertPassword } from './set-password-by-link'
 
 export const FirstAdminForm = z.object({
   code: z.string().max(80),
-  givenName: z.string().trim().min(1, 'is missing').max(80),
-  familyName: z.string().trim().min(1, 'is missing').max(80),
-  email: z.string().trim().toLowerCase().pipe(z.email('is not an e-mail address')),
+  givenName: z.string().trim().min(1, 'Write this down').max(80),
+  familyName: z.string().trim().min(1, 'Write this down').max(80),
+  email: z.string().trim().toLowerCase().pipe(z.email('This is not an e-mail address')),
   password: z.string().max(400),
 })
 

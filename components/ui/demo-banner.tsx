@@ -1,4 +1,4 @@
-/** Says plainly that this is the demo school, so that nobody puts real scripts in it. */
+/** Says plainly that this is the demo school, so that nobody puts real scripts in it. It lies in the top bar where there is room. */
 export function DemoBanner() {
-  return <aside aria-label="Demo school"><p className="border-b border-rule bg-desk px-6 py-1 text-center text-[length:var(--t-0)] leading-5 text-ink-2">Demo school: everyone and everything here is made up. Do not put real scripts in.</p></aside>
+  return <p className="demo-banner">Demo school: everyone here is made up. <span>Do not put real scripts in.</span></p>
 }

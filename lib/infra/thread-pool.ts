@@ -10,7 +10,7 @@ import { Piscina } from 'piscina'
 export function threadPool(module: string, threads: number): Piscina {
   return new Piscina({
     filename: join(process.cwd(), 'lib/infra/ts-thread.mjs'),
-    workerData: { module: pathToFileURL(join(process.cwd(), module)).href },
+    workerData: { module: pathToFileURL(join(/* turbopackIgnore: true */ process.cwd(), module)).href },
     minThreads: threads,
     maxThreads: threads,
     idleTimeout: 30_000,

@@ -25,7 +25,8 @@ export type PageGuess = Readonly<{ paperPage: number; rotation: Turn; homography
 /**
  * What one leaf shows by itself, whatever its neighbours are: stored leaf by leaf, so that reading can be taken up again.
  * `guesses` are best first. `clear` says that the first is certain: its print is there and no other page explains it as well.
- * `ink` is the writing on the first guess's page (see InkMap), for telling a second scan of a page from another student's.
+ * `ink` is the writing on the first guess's page (see InkMap), for telling a second scan of a page from another student's;
+ * `pen` is what it was written with.
  */
 export type LeafReading = Readonly<{
   index: number
@@ -35,17 +36,21 @@ export type LeafReading = Readonly<{
   guesses: readonly PageGuess[]
   clear: boolean
   ink: InkMap | null
+  pen: PenTrace | null
   problem?: LeafProblem
 }>
 
 /** The reading of a leaf that shows nothing, and why. */
 export function unread(index: number, problem: LeafProblem): LeafReading {
-  return { index, image: null, empty: false, guesses: [], clear: false, ink: null, problem }
+  return { index, image: null, empty: false, guesses: [], clear: false, ink: null, pen: null, problem }
 }
 
-/** How much was written in each 3 mm square of a page, 0 to 255, base64 of row after row. */
+/** What a page was written with, as it looks: brightness of the strokes' middle (0 to 255, of levelled paper) and their width in pixels of 100 dpi. */
+export type PenTrace = Readonly<{ core: number; width: number }>
+
+/** How much was written in each 2 mm square of a page, 0 to 255, row after row, deflated, as base64. */
 export type InkMap = string
-export const inkCellPoints = (3 * 72) / 25.4
+export const inkCellPoints = (2 * 72) / 25.4
 
 /** Why a leaf is where it is, in words for programs; the sorting table says them as sentences. */
 export type LeafReason =

@@ -1,10 +1,13 @@
 import { costs, otherOrderCost, scriptCost, tangleCost, type Seen } from './script-cost'
 
 /** Neighbouring leaves (positions of the sequence) taken together. `margin` is by how much every explanation that parts or joins them otherwise is dearer. */
-export type Block = Readonly<{ kind: 'script' | 'tangle' | 'stray'; leaves: readonly number[]; cost: number; margin: number }>
+export type Block = Readonly<{ kind: 'script' | 'tangle' | 'stray'; leaves: readonly number[]; disordered: boolean; margin: number }>
 
 type Option = Readonly<{ kind: Block['kind']; from: number; to: number; cost: number; key: string }>
 type Direction = Readonly<{ forth: Float64Array; back: Float64Array; total: number; options: readonly Option[]; into: readonly (readonly Option[])[] }>
+
+/** What it costs to hold two leaves (positions) for one student's, by how they were written; below 0 where it speaks for it. */
+export type Together = (one: number, other: number) => number
 
 /** A whole sheaf scanned from its last page to its first is one fault, not one for every script. */
 const backwardsCost = 4
@@ -15,29 +18,29 @@ const unlikely = 40
  * An exact search over all partings into runs of neighbours (forward-backward over positions), read forwards and backwards.
  * Done twice: how often scripts of this sheaf lie in another order is learnt from the first explanation.
  */
-export function explainSequence(sequence: readonly Seen[], pages: number): Block[] {
-  const first = explain(sequence, pages, costs.otherOrder)
+export function explainSequence(sequence: readonly Seen[], pages: number, together: Together = () => 0): Block[] {
+  const first = explain(sequence, pages, costs.otherOrder, together)
   const whole = first.filter((block) => block.kind === 'script' && block.leaves.length >= pages)
-  const swapped = whole.filter((block) => block.cost >= costs.otherOrder)
-  return explain(sequence, pages, otherOrderCost(swapped.length, whole.length))
+  const swapped = whole.filter((block) => block.disordered)
+  return explain(sequence, pages, otherOrderCost(swapped.length, whole.length), together)
 }
 
-function explain(sequence: readonly Seen[], pages: number, otherOrder: number): Block[] {
-  const forwards = search(sequence, pages, 0, otherOrder)
-  const backwards = search(sequence.map((page) => (page === null ? null : pages + 1 - page)), pages, backwardsCost, otherOrder)
+function explain(sequence: readonly Seen[], pages: number, otherOrder: number, together: Together): Block[] {
+  const forwards = search(sequence, pages, 0, otherOrder, together)
+  const backwards = search(sequence.map((page) => (page === null ? null : pages + 1 - page)), pages, backwardsCost, otherOrder, together)
   const best = forwards.total <= backwards.total ? forwards : backwards
   return path(best).map((option) => ({
     kind: option.kind,
     leaves: range(option),
-    cost: option.cost,
+    disordered: isDisordered(range(option).map((at) => sequence[at]!), best === backwards),
     margin: Math.min(...[forwards, backwards].map((direction) => dearest(direction, option))) - best.total,
   }))
 }
 
-function search(sequence: readonly Seen[], pages: number, start: number, otherOrder: number): Direction {
+function search(sequence: readonly Seen[], pages: number, start: number, otherOrder: number, together: Together): Direction {
   const n = sequence.length
   const options: Option[] = []
-  for (let from = 0; from < n; from++) for (let to = from + 1; to <= Math.min(n, from + 2 * pages + 2); to++) options.push(...optionsFor(sequence, from, to, pages, otherOrder))
+  for (let from = 0; from < n; from++) for (let to = from + 1; to <= Math.min(n, from + 2 * pages + 2); to++) options.push(...optionsFor(sequence, from, to, pages, otherOrder, together))
   const out = Array.from({ length: n + 1 }, (): Option[] => [])
   const into = Array.from({ length: n + 1 }, (): Option[] => [])
   for (const option of options) {
@@ -53,13 +56,17 @@ function search(sequence: readonly Seen[], pages: number, start: number, otherOr
   return { forth, back, total: forth[n]!, options, into }
 }
 
-function optionsFor(sequence: readonly Seen[], from: number, to: number, pages: number, otherOrder: number): Option[] {
+function optionsFor(sequence: readonly Seen[], from: number, to: number, pages: number, otherOrder: number, together: Together): Option[] {
   const run = sequence.slice(from, to)
-  const key = run.flatMap((page, k) => (page === null ? [] : [from + k])).join()
+  const known = run.flatMap((page, k) => (page === null ? [] : [from + k]))
+  const key = known.join()
   const found: Option[] = []
   if (run.length === 1 && run[0] === null) found.push({ kind: 'stray', from, to, cost: costs.stray, key })
   const script = scriptCost(run, pages, otherOrder)
-  if (script !== null && script < unlikely) found.push({ kind: 'script', from, to, cost: script, key })
+  if (script !== null && script < unlikely) {
+    const pens = known.slice(1).reduce((sum, at, k) => sum + together(known[k]!, at), 0)
+    found.push({ kind: 'script', from, to, cost: script + pens, key })
+  }
   const tangle = tangleCost(run, pages)
   if (tangle !== null) found.push({ kind: 'tangle', from, to, cost: tangle, key: `tangle ${key}` })
   return found
@@ -81,6 +88,12 @@ function dearest({ forth, back, options }: Direction, block: Option): number {
   for (const other of options)
     if (other.from < block.to && other.to > block.from && other.key !== block.key && other.key !== '') least = Math.min(least, forth[other.from]! + other.cost + back[other.to]!)
   return least
+}
+
+/** Whether the pages that are known do not follow each other as they should. */
+function isDisordered(run: readonly Seen[], backwards: boolean): boolean {
+  const known = run.filter((page) => page !== null)
+  return known.some((page, k) => k > 0 && (backwards ? page > known[k - 1]! : page < known[k - 1]!))
 }
 
 function range({ from, to }: Option): number[] {

@@ -1,5 +1,6 @@
 import type { LeafFinding, LeafReading, LeafReason } from '@/lib/core/leaf'
 import { explainSequence, type Block } from './explain-sequence'
+import { penCost } from './pen-cost'
 import { inkOf, sameness, type Sameness } from './same-ink'
 
 /** An explanation must be this much likelier than any other before leaves are put together by it: about 80 to 1. */
@@ -29,7 +30,7 @@ export function placeLeaves(readings: readonly LeafReading[], pages: number): Le
   }
   const compare = (a: Leaf, b: Leaf): Sameness => sameness(inks[a.position]!, inks[b.position]!)
   let script = 0
-  for (const block of explainSequence(sequence.map((leaf) => leaf.page), pages)) {
+  for (const block of explainSequence(sequence.map((leaf) => leaf.page), pages, (a, b) => penCost(sequence[a]!.pen, sequence[b]!.pen))) {
     const members = block.leaves.map((at) => sequence[at]!)
     const together = judge(block, members, sequence, pages, compare)
     if (together.kind === 'script') script++
@@ -52,7 +53,7 @@ function judge(block: Block, members: readonly Leaf[], sequence: readonly Leaf[]
   const missing = Array.from({ length: pages }, (_, k) => k + 1).filter((page) => !has.includes(page))
   const reasons: LeafReason[] = []
   if (missing.length) reasons.push('page_missing')
-  if (has.some((page, k) => k > 0 && page < has[k - 1]!)) reasons.push('pages_swapped')
+  if (block.disordered) reasons.push('pages_swapped')
   if (block.margin < certain) return { ...plain('loose', ['order_unclear', ...reasons]), missing }
   if (missing.length && doubtful(known, block, sequence, compare)) return { ...plain('loose', [twice(has[0]!), ...reasons]), missing }
   return { kind: 'script', script: null, reasons, missing, sure: 1 - Math.exp(-block.margin / 2) }

@@ -1,5 +1,6 @@
+import { deflateRawSync } from 'node:zlib'
 import type { GreyPicture } from '@/lib/core/grey-picture'
-import { inkCellPoints, type InkMap } from '@/lib/core/leaf'
+import { inkCellPoints, type InkMap, type PenTrace } from '@/lib/core/leaf'
 import type { Homography } from '@/lib/core/paper-space'
 import type { Template } from './template'
 
@@ -12,7 +13,7 @@ const step = 2
 
 /**
  * What was written on a page: dark on the levelled leaf where the blank page has no print within a millimetre, gathered in
- * squares of 3 mm. `map` takes template to leaf pixels (100 dpi).
+ * squares of 2 mm. `map` takes template to leaf pixels (100 dpi).
  */
 export function inkMap(leaf: GreyPicture, template: Template, [[a, b, c], [d, e, f], [g, h, i]]: Homography): InkMap {
   const { width, height } = template.white
@@ -31,7 +32,7 @@ export function inkMap(leaf: GreyPicture, template: Template, [[a, b, c], [d, e,
     }
   }
   const most = (cell / step) ** 2
-  return Buffer.from(Uint8Array.from(counts, (n) => Math.min(255, Math.round((n * 512) / most)))).toString('base64')
+  return deflateRawSync(Uint8Array.from(counts, (n) => Math.min(240, Math.round((n * 32) / most) * 16))).toString('base64')
 }
 
 /** Marks (1) where a levelled blank page has no print within four pixels. */

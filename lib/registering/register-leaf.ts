@@ -9,6 +9,7 @@ import { fineFit } from './fine'
 import { inkMap } from './ink-map'
 import { level, type Levelled } from './level'
 import type { Cv } from './opencv'
+import { penOf } from './pen-trace'
 import { scanDensity } from './scan-density'
 import { boxShrink, shrinkTo, type Shrunk } from './shrink'
 import { skews } from './skew'
@@ -40,6 +41,7 @@ export function registerLeaf(cv: Cv, image: PageImage, picture: GreyPicture, pap
   const best = weighed[0]
   return {
     image, empty: empty && !best, guesses, clear: best !== undefined && best.confidence >= clearFrom,
+    pen: best && best.share >= 0.3 ? penOf(ready.levelled.white, best.template, best.map) : null,
     ink: best && best.share >= 0.3 ? inkMap(ready.levelled.white, best.template, best.map) : null,
   }
 }

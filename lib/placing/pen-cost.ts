@@ -1,7 +1,7 @@
 import type { PenTrace } from '@/lib/core/leaf'
 
 /** Cores at or below this come from 1-bit scans, which know no shades: there the width speaks. */
-const oneBit = 5
+const oneBit = 30
 
 /**
  * What it costs to hold two pages for one student's by what they were written with: minus the logarithm of how much likelier the difference
@@ -12,7 +12,7 @@ const oneBit = 5
 export function penCost(one: PenTrace | null, other: PenTrace | null): number {
   if (!one || !other) return 0
   const widths = Math.min(one.core, other.core) <= oneBit
-  return widths ? weigh(Math.abs(one.width - other.width), 0.3, 0.65) : weigh(Math.abs(one.core - other.core), 6, 35)
+  return widths ? Math.min(0.6, weigh(Math.abs(one.width - other.width), 0.3, 0.65)) : weigh(Math.abs(one.core - other.core), 6, 35)
 }
 
 function weigh(difference: number, within: number, between: number): number {

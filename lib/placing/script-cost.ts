@@ -49,8 +49,9 @@ export function tangleCost(run: readonly Seen[], pages: number): number | null {
   return costs.tangled + costs.eachTangled * run.length
 }
 
-/** Whether every page is there twice and both copies of each page come before both scripts' later ones. */
+/** Whether every page is there twice, as of two scripts in order that were pushed into each other; one after the other is none. */
 function interleaved(run: readonly number[], pages: number): boolean {
+  if (new Set(run.slice(0, pages)).size === pages) return false
   const ends = [0, 0]
   for (const page of run) {
     const k = ends[0] === page - 1 ? 0 : ends[1] === page - 1 ? 1 : -1

@@ -17,7 +17,7 @@ export type OpenSheaf = Readonly<{ pageCount: number; page: (index: number) => S
 export async function openSheaf(bytes: Uint8Array): Promise<OpenSheaf> {
   if (bytes.length === 0) throw new AppError('file_empty')
   if (!hasHeader(bytes)) throw new AppError('file_not_pdf')
-  const sheaf = (await walkable(bytes)) ?? (await drawable(bytes))
+  const sheaf = (await walkable(bytes)) ?? (await withoutEnd(bytes)) ?? (await drawable(bytes))
   if (sheaf.pageCount === 0) throw new AppError('file_no_pages')
   if (sheaf.pageCount > mostPages) throw new AppError('too_many_pages', { pages: sheaf.pageCount, most: mostPages })
   return sheaf
@@ -46,6 +46,15 @@ async function walkable(bytes: Uint8Array): Promise<OpenSheaf | null> {
     }
   }
   return { pageCount: pages.length, page }
+}
+
+/** A file that broke off: its whole objects alone, up to the last one, when they still hold pages. */
+async function withoutEnd(bytes: Uint8Array): Promise<OpenSheaf | null> {
+  const view = Buffer.from(bytes.buffer, bytes.byteOffset, bytes.length)
+  if (view.includes('/Encrypt')) return null
+  const end = view.lastIndexOf('endobj')
+  const sheaf = end < 0 ? null : await walkable(bytes.subarray(0, end + 'endobj'.length + 1))
+  return sheaf && sheaf.pageCount > 0 ? sheaf : null
 }
 
 /** The sheaf as the PDF engine sees it: every page is drawn. */

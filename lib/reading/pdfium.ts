@@ -36,8 +36,11 @@ export function pdfium(): Promise<Pdfium> {
 
 const wrongPassword = 4
 
-/** Opens a document from its bytes. Throws file_encrypted when it asks for a password, file_damaged when it cannot be read. Close it after use. */
-export async function openDocument(bytes: Uint8Array): Promise<Readonly<{ engine: Pdfium; document: number; close: () => void }>> {
+/** A document in the engine's memory. Close it after use. */
+export type OpenDocument = Readonly<{ engine: Pdfium; document: number; close: () => void }>
+
+/** Opens a document from its bytes. Throws file_encrypted when it asks for a password, file_damaged when it cannot be read. */
+export async function openDocument(bytes: Uint8Array): Promise<OpenDocument> {
   const engine = await pdfium()
   const at = engine.wasmExports.malloc(bytes.length)
   if (!at) throw new AppError('file_too_large')

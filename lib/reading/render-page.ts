@@ -24,18 +24,19 @@ export function boxOf(engine: Pdfium, page: number): PageBox {
 }
 
 /** The stored-image frame of a page that is drawn: that of the sharpest image that covers it, else the page before its /Rotate. */
-export function frameOf(engine: Pdfium, page: number, box: PageBox): StoredFrame {
+export function frameOf(engine: Pdfium, page: number, box: PageBox): Readonly<{ frame: StoredFrame; hasImages: boolean }> {
   const images = imagesOn(engine, page)
   const whole = images
     .filter((image) => covers(box, image.matrix))
     .map((image) => imageFrame(box, image.matrix, image.width, image.height))
     .filter((frame) => frame !== null)
     .sort((a, b) => b.width * b.height - a.width * a.height)[0]
-  if (whole && whole.dpiX >= 50) return whole
+  const hasImages = images.length > 0
+  if (whole && whole.dpiX >= 50) return { frame: whole, hasImages }
   const density = images
     .filter(({ matrix: [a, b, c, d] }) => Math.abs(a * d - b * c) > 0.02 * box.width * box.height)
     .map(({ matrix: [a, b], width }) => (72 * width) / Math.hypot(a, b))
-  return pageFrame(box, density.length ? Math.min(400, Math.max(100, ...density)) : plainDpi)
+  return { frame: pageFrame(box, density.length ? Math.min(400, Math.max(100, ...density)) : plainDpi), hasImages }
 }
 
 function imagesOn(engine: Pdfium, page: number): PlacedImage[] {

@@ -3,6 +3,7 @@ import { AppError } from '@/lib/core/errors'
 import type { BlankPage } from '@/lib/core/grey-picture'
 import { unread, type LeafReading, type PageGuess } from '@/lib/core/leaf'
 import { decodePage } from '@/lib/reading/decode-page'
+import { openDocument, type OpenDocument } from '@/lib/reading/pdfium'
 import type { SheafPage } from '@/lib/reading/sheaf-page'
 import { opencv } from '@/lib/registering/opencv'
 import { registerLeaf, registerToPage } from '@/lib/registering/register-leaf'
@@ -25,7 +26,7 @@ export default async function readLeaf(job: LeafJob): Promise<LeafAnswer> {
   const index = job.page?.index ?? 0
   try {
     if (!job.page) return { reading: unread(index, 'page_empty'), onto: null }
-    const { image, picture } = await decodePage(job.page, () => job.sheaf)
+    const { image, picture } = await decodePage(job.page, () => drawable(job))
     if (job.onto === undefined) return { reading: { index, ...registerLeaf(cv, image, picture, templates) }, onto: null }
     const template = templates.find(({ page }) => page.page === job.onto)
     return { reading: unread(index, 'page_unreadable'), onto: template ? registerToPage(cv, image, picture, template) : null }
@@ -33,4 +34,16 @@ export default async function readLeaf(job: LeafJob): Promise<LeafAnswer> {
     if (!(error instanceof AppError)) throw error
     return { reading: unread(index, error.detail['too_large'] ? 'page_too_large' : 'page_unreadable'), onto: null }
   }
+}
+
+let drawn: { key: string; open: OpenDocument } | null = null
+
+/** The sheaf opened for drawing: kept open, since most pages of such a sheaf need it. */
+async function drawable({ paperKey, sheaf }: LeafJob): Promise<OpenDocument> {
+  if (drawn?.key !== paperKey) {
+    drawn?.open.close()
+    drawn = null
+    drawn = { key: paperKey, open: await openDocument(sheaf) }
+  }
+  return drawn.open
 }

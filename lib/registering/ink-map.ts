@@ -1,6 +1,6 @@
 import { deflateRawSync } from 'node:zlib'
 import type { GreyPicture } from '@/lib/core/grey-picture'
-import { inkCellPoints, type InkMap, type PenTrace } from '@/lib/core/leaf'
+import { inkCellPoints, type InkMap } from '@/lib/core/leaf'
 import type { Homography } from '@/lib/core/paper-space'
 import type { Template } from './template'
 

@@ -36,7 +36,7 @@ export type LeafReading = Readonly<{
   guesses: readonly PageGuess[]
   clear: boolean
   ink: InkMap | null
-  pen: PenTrace | null
+  pen?: PenTrace | null
   problem?: LeafProblem
 }>
 

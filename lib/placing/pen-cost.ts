@@ -9,7 +9,7 @@ const oneBit = 30
  * the mean, between scripts by 35; widths by 0.3 and 0.65 pixels; one script in fifty changes its pen. That pens agree says little
  * (many share a kind), so it weighs at most 0.6; that they differ says more.
  */
-export function penCost(one: PenTrace | null, other: PenTrace | null): number {
+export function penCost(one: PenTrace | null | undefined, other: PenTrace | null | undefined): number {
   if (!one || !other) return 0
   const widths = Math.min(one.core, other.core) <= oneBit
   return widths ? Math.min(0.6, weigh(Math.abs(one.width - other.width), 0.3, 0.65)) : weigh(Math.abs(one.core - other.core), 6, 35)

@@ -3,6 +3,7 @@ import { clearOfPrint } from './ink-map'
 import { level } from './level'
 import { withMats, type Cv } from './opencv'
 import { boxShrink, matOf } from './shrink'
+import { makeTracks, type Track } from './track'
 
 /** Half the side of a patch of print that is looked for on a leaf, in pixels at 100 dpi. */
 export const patchReach = 5
@@ -19,6 +20,9 @@ export type Template = Readonly<{
   clear: Uint8Array
   corners: Float32Array
   patches: readonly Float32Array[]
+  /** Print that is followed for the exact fit, at 100 and at 50 dpi. */
+  tracks: readonly Track[]
+  tracks50: readonly Track[]
 }>
 
 /** Makes a blank page (at 100 dpi) ready for registering leaves to it. Patches have mean 0 and length 1. */
@@ -33,7 +37,11 @@ export function makeTemplate(cv: Cv, page: BlankPage): Template {
     corners.push(found[k]!, found[k + 1]!)
     patches.push(patch)
   }
-  return { page, white, ink25: ink, ink12: boxShrink(ink, 2), clear: clearOfPrint(white), corners: Float32Array.from(corners), patches }
+  return {
+    page, white, ink25: ink, ink12: boxShrink(ink, 2), clear: clearOfPrint(white), corners: Float32Array.from(corners), patches,
+    tracks: makeTracks(white, corners),
+    tracks50: makeTracks(boxShrink(white, 2), everyOther(corners)),
+  }
 }
 
 /** At most three strong corners in every 40 px square. Pixel centres, as the vision engine counts: the first is (0, 0). */
@@ -74,4 +82,11 @@ export function normal(patch: Float32Array): Float32Array | null {
   for (const v of patch) square += (v - mean) ** 2
   const length = Math.sqrt(square)
   return length < 12 * Math.sqrt(patch.length) * 0.5 ? null : patch.map((v) => (v - mean) / length)
+}
+
+/** Half of the corners, in pixel indices of half the density. */
+function everyOther(corners: readonly number[]): number[] {
+  const kept: number[] = []
+  for (let k = 0; k + 1 < corners.length; k += 4) kept.push((corners[k]! + 0.5) / 2 - 0.5, (corners[k + 1]! + 0.5) / 2 - 0.5)
+  return kept
 }

@@ -4,6 +4,7 @@ import { keptPicture } from '@/lib/infra/cut-store'
 import { readKept } from '@/lib/infra/file-store'
 import { drawStoredPage, sharpOf } from '@/lib/reading/decode-page'
 import { openSheaf, type OpenSheaf } from '@/lib/reading/open-sheaf'
+import { openDocument } from '@/lib/reading/pdfium'
 import type { Db } from '@/db/knex'
 import { getLeafSource } from '@/db/leaf-sources'
 
@@ -19,6 +20,15 @@ function open(sha256: string): Promise<Held> {
   return work
 }
 
+async function drawn(bytes: Buffer, index: number): Promise<ReturnType<typeof drawStoredPage>> {
+  const document = await openDocument(bytes)
+  try {
+    return drawStoredPage(document, index, 3)
+  } finally {
+    document.close()
+  }
+}
+
 /**
  * The stored image of a leaf as a file a picture program reads, its pixels as the sheaf holds them: a JPEG page's own bytes, any other page as PNG. Taken out of the sheaf once.
  * Throws not_found or page_unreadable.
@@ -31,7 +41,7 @@ export async function leafImage(db: Db, leafId: string): Promise<Buffer> {
     const page = sheaf.page(source.index)
     if (page.image !== null && page.image.encoding === 'jpeg' && !page.inverted) return Buffer.from(page.bytes)
     if (page.image) return sharpOf(page).png({ compressionLevel: 3 }).toBuffer()
-    const { picture } = await drawStoredPage(bytes, source.index, 3)
+    const { picture } = await drawn(bytes, source.index)
     return sharp(picture.data, { raw: { width: picture.width, height: picture.height, channels: 3 } }).png({ compressionLevel: 3 }).toBuffer()
   })
 }

@@ -1,11 +1,12 @@
 import type { Knex } from 'knex'
 
-// A release freezes what was handed back: a revision, a file and its hash, and the score summary as it stood.
+// A release freezes what was handed back: a revision, a file and its hash, and the score summary as it stood. 'failed': nothing of it could be built.
 const statements = [
   `create table releases (
     id text primary key,
     class_set_id text not null references class_sets(id),
-    state text not null default 'building' check (state in ('building', 'released', 'withdrawn')),
+    state text not null default 'building' check (state in ('building', 'released', 'withdrawn', 'failed')),
+    problem text,
     created_by text not null references users(id),
     created_at integer not null,
     released_at integer,
@@ -13,6 +14,8 @@ const statements = [
     withdrawn_at integer
   ) strict`,
   `create index releases_class_set on releases(class_set_id)`,
+  // Two people who press at once start one release.
+  `create unique index releases_building on releases(class_set_id) where state = 'building'`,
   `create table returned_scripts (
     id text primary key,
     release_id text not null references releases(id) on delete cascade,
@@ -21,6 +24,10 @@ const statements = [
     revision integer not null,
     file_id text references stored_files(id),
     built_at integer,
+    -- Says what went into the file: the same as long as no mark, stamp or page of the script changes.
+    content_key text,
+    -- Why this script could not be built and stayed behind.
+    problem text,
     first_read_at integer,
     unique (release_id, script_id)
   ) strict`,
@@ -34,7 +41,7 @@ const statements = [
     grade text,
     detail text not null check (json_valid(detail))
   ) strict, without rowid`,
-  // Signing off a check of the clerical list by name.
+  // One line of the clerical list signed off by name, or one script kept back: 'check/subject'. What comes up later is a line of its own.
   `create table check_sign_offs (
     id text primary key,
     class_set_id text not null references class_sets(id) on delete cascade,

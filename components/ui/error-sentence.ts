@@ -50,6 +50,7 @@ const sentences: Record<ErrorCode | 'failed', string | ((detail: ErrorDetail) =>
   last_admin: 'The school needs at least one admin who can sign in.',
   roster_invalid: 'Nothing was imported. Mend the lines below in the file and choose it again.',
   checks_open: 'Some checks are open. Clear them or sign them off by name first.',
+  nothing_to_return: 'Nothing can be handed back now: it has gone already, or is kept back.',
   not_released: 'This has not been handed back.',
   page_shared: 'One picture of the scan shows this page and another one together, so it cannot be handed back alone. Scan the sheet again, one page a picture.',
   sheaf_missing: 'The scan this script came from is gone. Nothing can be handed back from it.',

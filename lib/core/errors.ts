@@ -60,6 +60,7 @@ export const errorStatus = {
   roster_invalid: 422,
   // handing back
   checks_open: 409,
+  nothing_to_return: 409,
   not_released: 404,
   page_shared: 422,
   sheaf_missing: 409,

@@ -15,7 +15,7 @@ const width = (frame.right - frame.left - gutter) / 2
 const heading: Style = { face: 'book', size: 13.5, colour: ink.text }
 const key: Style = { ...plain, size: 9.375 }
 
-/** What to do next and how the grade came about on the left; how to read the marks and how to ask on the right. */
+/** What to do next, how the grade came about and model solutions on the left; how to read the marks and how to ask on the right. */
 export function drawColumns(sheets: SummarySheets, summary: Summary): void {
   const columns = [leftBlocks(sheets, summary), rightBlocks(sheets, summary)]
   if (sheets.y + 15 + Math.min(160, ...columns.map(heightOf)) > frame.bottom) sheets.turn()
@@ -38,7 +38,14 @@ function heightOf(blocks: readonly Block[]): number {
   return blocks.reduce((sum, block) => sum + block.height, 0)
 }
 
-function leftBlocks(sheets: SummarySheets, { next, gradeSays }: Summary): Block[] {
+function leftBlocks(sheets: SummarySheets, summary: Summary): Block[] {
+  const solutions = summary.solutions.flatMap((line) => line.split('\n')).flatMap((line) => paragraph(sheets, line))
+  const first = nextBlocks(sheets, summary)
+  if (solutions.length === 0) return first
+  return [...first, ...(first.length > 0 ? [{ height: 9, draw: () => undefined }] : []), head(sheets, 'Model solutions'), ...solutions]
+}
+
+function nextBlocks(sheets: SummarySheets, { next, gradeSays }: Summary): Block[] {
   const grade = paragraph(sheets, gradeSays)
   if (next.length === 0) return gradeSays === '' ? [] : [head(sheets, 'How the result came about'), ...grade]
   const gap = gradeSays === '' ? [] : [{ height: 6, draw: () => undefined }]

@@ -4,7 +4,7 @@ import { sayWorth } from '@/lib/core/say-stamp'
 import type { Pen } from '@/lib/core/stamp'
 import { tickAnchor } from '@/lib/core/stamp-shapes'
 import { ink, type Sheet } from './sheet'
-import type { PointResult } from './summary'
+import type { PointResult } from '@/lib/core/returned'
 import { leading, plain } from './summary-sheets'
 import type { Typesetter } from './typesetter'
 

@@ -1,8 +1,6 @@
 import type { HalfMarks } from '@/lib/core/marks'
+import type { AdjustmentLine, PointResult } from '@/lib/core/returned'
 import type { Pen } from '@/lib/core/stamp'
-
-/** A mark point as the student reads it: what it asked for, what it gave. */
-export type PointResult = Readonly<{ says: string; earned: HalfMarks; worth: HalfMarks }>
 
 /** One question's line. `mark` is null while it is not to be shown as a figure (withdrawn); `remark` says "nothing written" and the like. */
 export type QuestionResult = Readonly<{
@@ -13,9 +11,6 @@ export type QuestionResult = Readonly<{
   mark: HalfMarks | null
   maximum: HalfMarks
 }>
-
-/** A signed change beside the raw mark, with its reason as a sentence. */
-export type AdjustmentLine = Readonly<{ says: string; by: HalfMarks }>
 
 /**
  * All that the summary page says; it works nothing out. `total` is the final one, adjustments counted. Sentences (`about`, `gradeSays`,
@@ -39,6 +34,8 @@ export type Summary = Readonly<{
   pen: Pen
   questions: readonly QuestionResult[]
   next: readonly string[]
+  /** Model solutions by question, where they are handed back. */
+  solutions: readonly string[]
   /** Text codes drawn on the pages, each with its meaning. */
   codes: readonly Readonly<{ code: string; means: string }>[]
   asking: string

@@ -5,7 +5,8 @@ import { drawStamp } from '@/lib/core/drawing'
 import { halves } from '@/lib/core/marks'
 import { Stamp } from '@/lib/core/stamp'
 import type { ScriptPage } from '@/lib/handing-back/returned-page'
-import type { PointResult, QuestionResult, Summary } from '@/lib/handing-back/summary'
+import type { PointResult } from '@/lib/core/returned'
+import type { QuestionResult, Summary } from '@/lib/handing-back/summary'
 
 export const everyday = join(process.cwd(), 'seeds/class-sets/everyday')
 
@@ -69,6 +70,7 @@ export function aSummary(more: Partial<Summary> = {}): Summary {
       aQuestion('8', [point('Nine parts', 1, 1), point('One part is £8', 2, 2), point('16', 2, 2)], 5),
     ],
     next: ['Do 1b again from 10% of 80.', 'In 3b, multiply one part by the 2 of red.', 'Try 5a: split the floor into two rectangles.'],
+    solutions: [],
     codes: [{ code: 'ft', means: 'follow through: right working on an earlier slip' }],
     asking: 'You can ask about a mark until 1 April. A review can raise or lower it.',
     ...more,

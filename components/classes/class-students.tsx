@@ -36,7 +36,7 @@ export function ClassStudents({ classId, className, students, address, school, g
         <Link className="btn" href={`/classes/${classId}/roster`}>Bring in a class list</Link>
         <button className="btn lead" onClick={() => setGiving(students)}>Give accounts</button>
       </div>
-      <div aria-live="polite">{trouble ? <Alarm code={trouble.code} detail={trouble.detail} /> : <p className="line">{said}</p>}</div>
+      <div className="mb-2" aria-live="polite">{trouble ? <Alarm code={trouble.code} detail={trouble.detail} /> : <p className="line">{said}</p>}</div>
       <StudentRows students={students} busy={busy} onGive={(student) => setGiving([student])} onTakeOut={(student) => void run(takeOut(student.studentId), () => setSaid(`${student.givenName} ${student.familyName} is no longer in ${className}. To put them back, bring in a list with ${student.candidateNumber}.`))} />
       {giving && <AccountsDialog groups={accountGroups(giving)} give={giveAccounts} onGiven={given} onClose={() => setGiving(null)} />}
     </>

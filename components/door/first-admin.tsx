@@ -35,7 +35,7 @@ export function FirstAdmin({ school, begin }: FirstAdminProps) {
           const says = faultOf(trouble, name) ?? say
           return (
             <div key={name}>
-              <div className="cover-field"><label htmlFor={name}>{label}</label><input id={name} name={name} required aria-invalid={faultOf(trouble, name) !== null || undefined} aria-describedby={says ? `${name}-say` : undefined} {...input} /></div>
+              <div className="cover-field grid-cols-[6.5rem_1fr]"><label htmlFor={name}>{label}</label><input id={name} name={name} required aria-invalid={faultOf(trouble, name) !== null || undefined} aria-describedby={says ? `${name}-say` : undefined} {...input} /></div>
               {says && <p id={`${name}-say`} className={`${faultOf(trouble, name) ? 'alarm' : 'soft'} mt-1 text-[length:var(--t-0)] leading-4`}>{says}</p>}
             </div>
           )

@@ -32,7 +32,7 @@ export function PeopleTable({ people, self, acts }: PeopleTableProps) {
   }
   return (
     <>
-      <div aria-live="polite">{trouble ? <Alarm code={trouble.code} detail={trouble.detail} /> : <p className="line">{said}</p>}</div>
+      <div className="mb-2" aria-live="polite">{trouble ? <Alarm code={trouble.code} detail={trouble.detail} /> : <p className="line">{said}</p>}</div>
       <div className="overflow-x-auto" tabIndex={0} role="region" aria-label="Accounts">
         <table className="tbl">
           <thead><tr><th>Name</th><th>Signs in as</th><th>Roles</th><th>Stands</th><th><span className="vh">What can be done</span></th></tr></thead>

@@ -22,7 +22,8 @@ export type SortStudent = Readonly<{
   sameName: boolean
 }>
 
-export type SortScriptPage = Readonly<{ id: string; paperPage: number | null; leafId: string | null }>
+/** A page of a script with the leaf that holds now, and how far that leaf is turned to read upright. */
+export type SortScriptPage = Readonly<{ id: string; paperPage: number | null; leafId: string | null; turn: Turn }>
 /** A script on the sorting table. `student` is the confirmed name, `suggested` only a guess with its reason. */
 export type SortScript = Readonly<{
   id: string

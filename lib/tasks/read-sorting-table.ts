@@ -1,5 +1,6 @@
 import type { Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
+import type { Turn } from '@/lib/core/paper-space'
 import type { LeafNeighbour, LeafStub, LooseLeaf, PlaceTarget, SortScript, SortScriptPage, SortStudent, SortingTable } from '@/lib/core/sorting'
 import { listClassSetStudents, listSittingClasses, type SittingClass } from '@/db/class-set-students'
 import { db } from '@/db/knex'
@@ -23,7 +24,7 @@ export async function readSortingTable(actor: Actor, paperId: string): Promise<S
   const evidence = await getLeafEvidence(db(), loose.map(({ id }) => id))
   const classes = await listSittingClasses(db(), paperId)
   const students = await studentsOf(classes)
-  const scripts = await scriptsOf(paperId, paper.pages.map(({ page }) => page))
+  const scripts = await scriptsOf(paperId, paper.pages.map(({ page }) => page), new Map(leaves.map(({ id, turn }) => [id, turn])))
   const stub = (leaf: Leaf): LeafStub => ({ id: leaf.id, number: leaf.position + 1, sheafName: names.get(leaf.sheafId) ?? '', turn: leaf.turn })
   const pile: Pile = { leaves, scripts, students }
   return {
@@ -48,9 +49,9 @@ async function studentsOf(classes: readonly SittingClass[]): Promise<SortStudent
   }))
 }
 
-async function scriptsOf(paperId: string, paperPages: readonly number[]): Promise<SortScript[]> {
+async function scriptsOf(paperId: string, paperPages: readonly number[], turns: ReadonlyMap<string, Turn>): Promise<SortScript[]> {
   const pages = new Map<string, SortScriptPage[]>()
-  for (const { id, scriptId, paperPage, leafId } of await listScriptPages(db(), paperId)) pages.set(scriptId, [...(pages.get(scriptId) ?? []), { id, paperPage, leafId }])
+  for (const { id, scriptId, paperPage, leafId } of await listScriptPages(db(), paperId)) pages.set(scriptId, [...(pages.get(scriptId) ?? []), { id, paperPage, leafId, turn: turns.get(leafId ?? '') ?? 0 }])
   return (await listScripts(db(), paperId)).map((script) => {
     const own = pages.get(script.id) ?? []
     return {

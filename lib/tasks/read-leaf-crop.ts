@@ -1,0 +1,52 @@
+import type { Actor } from '@/lib/core/actor'
+import { AppError } from '@/lib/core/errors'
+import type { Paper } from '@/lib/core/paper'
+import type { PaperRect } from '@/lib/core/paper-space'
+import { db } from '@/db/knex'
+import { getLeaf, getLeafEvidence, type Leaf } from '@/db/leaves'
+import { getPaper } from '@/db/papers'
+import { drawCut, type Picture } from './draw-cut'
+import { gatePaper } from './gate-paper'
+
+/** `name`: the name box and the number boxes; `hand`: some of the writing, to compare hands by. */
+export type CropBox = 'name' | 'hand'
+export const cropDpi = 150
+const around = 4
+/** A hand is looked at in the upper part of the first answer space, in points. */
+const handHeight = 64
+
+/** A box of a leaf in paper space: straight, however the sheet lay. Throws not_found when its page has no such box. */
+export async function readLeafCrop(actor: Actor, { leafId, box }: { leafId: string; box: CropBox }): Promise<Picture> {
+  const leaf = await getLeaf(db(), leafId)
+  if (!leaf) throw new AppError('not_found')
+  await gatePaper(db(), actor, 'change', leaf.paperId)
+  const paper = await getPaper(db(), leaf.paperId)
+  const lie = await lieOf(leaf)
+  const rect = lie && paper && (box === 'name' ? nameRect(paper, lie.paperPage) : handRect(paper, lie.paperPage))
+  if (!lie || !rect) throw new AppError('not_found')
+  return drawCut(db(), { leafId, homography: lie.homography, rect, masks: [] }, cropDpi)
+}
+
+/** How the leaf lies on its page: as placed, else as its print says. */
+async function lieOf(leaf: Leaf) {
+  if (leaf.homography && leaf.paperPage !== null) return { homography: leaf.homography, paperPage: leaf.paperPage }
+  const guess = (await getLeafEvidence(db(), [leaf.id])).get(leaf.id)?.reading.guesses[0]
+  return guess ? { homography: guess.homography, paperPage: guess.paperPage } : null
+}
+
+function nameRect(paper: Paper, page: number): PaperRect | null {
+  const boxes = paper.boxes.filter((box) => box.page === page).map(({ rect }) => rect)
+  if (boxes.length === 0) return null
+  const x = Math.min(...boxes.map((box) => box.x)) - around
+  const y = Math.min(...boxes.map((box) => box.y)) - around
+  return { x, y, w: Math.max(...boxes.map((box) => box.x + box.w)) + around - x, h: Math.max(...boxes.map((box) => box.y + box.h)) + around - y }
+}
+
+function handRect(paper: Paper, page: number): PaperRect | null {
+  const space = paper.questions.flatMap(({ spaces }) => spaces).find((one) => one.page === page)
+  if (!space) return null
+  const { x, y, w, h } = space.rect
+  // The question is printed at the top of its space: writing begins a little lower.
+  const from = y + Math.max(0, Math.min(h - handHeight, 22))
+  return { x: x + w * 0.05, y: from, w: w * 0.5, h: Math.min(handHeight, h) }
+}

@@ -13,7 +13,9 @@ describe('grades', () => {
   })
   it('keeps the equal steps on papers with other maxima, in whole marks', () => {
     expect(eightPointScale(halvesOfMarks(20)).boundaries.map(({ lowest }) => lowest / 2)).toEqual([20, 18, 16, 14, 12, 10, 8, 0])
-    expect(eightPointScale(halvesOfMarks(14.5)).boundaries.every(({ lowest }) => lowest % 2 === 0)).toBe(true)
+    const odd = eightPointScale(halvesOfMarks(19.5))
+    expect(odd.boundaries.map(({ lowest }) => lowest / 2)).toEqual([19.5, 18, 16, 14, 12, 10, 8, 0])
+    expect([19.5, 19].map((marks) => gradeOf(odd, halvesOfMarks(marks)))).toEqual(['8', '7'])
   })
   it('counts the boundary mark in the grade', () => {
     const scale = letterScale(halvesOfMarks(20))

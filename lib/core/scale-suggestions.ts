@@ -4,9 +4,9 @@ import type { GradeScale } from './paper'
 /** A grade scale to start from; the school decides and may change every line. */
 export type ScaleSuggestion = Readonly<{ name: string; says: string; scale: (maximum: HalfMarks) => GradeScale }>
 
-// In whole marks where the paper has them: a boundary between two marks would never be met exactly.
+// In whole marks, but never above what the paper can give, so that full marks always reach the top.
 function share(maximum: HalfMarks, tenths: number): HalfMarks {
-  return halves(Math.ceil((maximum * tenths) / 20) * 2)
+  return halves(Math.min(maximum, Math.ceil((maximum * tenths) / 20) * 2))
 }
 
 /**

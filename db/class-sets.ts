@@ -61,15 +61,3 @@ export async function classSetInUse(db: Db, id: string): Promise<boolean> {
   for (const table of ['scripts', 'sheaf_class_sets', 'samples', 'releases']) if (await db(table).where({ class_set_id: id }).first<unknown>('class_set_id')) return true
   return Boolean(await db('class_sets').where({ resit_of: id }).first<unknown>('id'))
 }
-
-export type ClassChoice = Readonly<{ id: string; name: string; students: number }>
-
-/** The classes a teacher teaches, by name. */
-export async function listClassesOfTeacher(db: Db, userId: string): Promise<ClassChoice[]> {
-  return (await db('classes').join('class_teachers', 'class_teachers.class_id', 'classes.id').where('class_teachers.user_id', userId).whereNull('classes.archived_at').orderBy('classes.name')
-    .select({ id: 'classes.id', name: 'classes.name', students: db.raw('(select count(*) from class_students where class_id = classes.id)') })) as ClassChoice[]
-}
-
-export async function teachesClass(db: Db, userId: string, classId: string): Promise<boolean> {
-  return Boolean(await db('class_teachers').where({ class_id: classId, user_id: userId }).first<unknown>('class_id'))
-}

@@ -1,5 +1,6 @@
 import type { HalfMarks, MarkingStep } from '@/lib/core/marks'
 import type { GradeBoundary, OddHalf, Paper, PaperBox, PaperPage } from '@/lib/core/paper'
+import type { PaperDetails } from '@/lib/core/paper-details-view'
 import { newId } from '@/lib/core/ids'
 import type { Db } from './knex'
 import { listQuestions } from './questions'
@@ -68,8 +69,6 @@ export async function setGradeScale(db: Db, paperId: string, oddHalf: OddHalf, b
   await db('grade_boundaries').where({ paper_id: paperId }).delete()
   if (boundaries.length > 0) await db('grade_boundaries').insert(boundaries.map((boundary) => ({ paper_id: paperId, ...boundary })))
 }
-
-export type PaperDetails = Readonly<{ title: string; keepUntil: string; namesHidden: boolean; sampleSize: number | null; solutionsReleased: boolean }>
 
 export async function putPaperDetails(db: Db, paperId: string, details: PaperDetails): Promise<void> {
   await db<PaperRow>('papers').where({ id: paperId }).update({

@@ -2,7 +2,8 @@ import type { Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
 import { newId } from '@/lib/core/ids'
 import { addAuditLine } from '@/db/audit'
-import { addClassSet as storeClassSet, findClassSet, getClassSet, teachesClass } from '@/db/class-sets'
+import { addClassSet as storeClassSet, findClassSet, getClassSet } from '@/db/class-sets'
+import { isTeacherOf } from '@/db/classes'
 import { transaction } from '@/db/knex'
 import { gatePaper } from './gate-paper'
 
@@ -12,7 +13,7 @@ export type AddClassSet = Readonly<{ paperId: string; classId: string; satOn: st
 export async function addClassSet(actor: Actor, { paperId, classId, satOn, resitOf }: AddClassSet): Promise<{ classSetId: string }> {
   return transaction(async (trx) => {
     await gatePaper(trx, actor, 'change', paperId)
-    if (!(await teachesClass(trx, actor.userId, classId))) throw new AppError('not_allowed')
+    if (!(await isTeacherOf(trx, actor.userId, classId))) throw new AppError('not_allowed')
     if (resitOf !== null && (await getClassSet(trx, resitOf))?.paperId !== paperId) throw new AppError('not_found')
     const there = await findClassSet(trx, paperId, classId, satOn)
     if (there) return { classSetId: there.id }

@@ -6,7 +6,8 @@ import type { PaperPage } from '@/lib/core/paper'
 import { readPaperFile, type ReadPaper } from '@/lib/setting/read-paper-file'
 import { keepUntil } from '@/lib/setting/keep-until'
 import { addAuditLine } from '@/db/audit'
-import { addClassSet, teachesClass } from '@/db/class-sets'
+import { addClassSet } from '@/db/class-sets'
+import { isTeacherOf } from '@/db/classes'
 import { transaction, type Db } from '@/db/knex'
 import { addPaper, getPaper, paperMaker, setBlankPaper, setPaperPages } from '@/db/papers'
 import { now } from '@/lib/infra/clock'
@@ -62,7 +63,7 @@ function endOfKeeping(sets: CreatePaper['classSets']): string {
 
 async function addClassSets(trx: Db, actor: Actor, { id, classSets }: CreatePaper): Promise<void> {
   for (const { classId, satOn } of classSets) {
-    if (!(await teachesClass(trx, actor.userId, classId))) throw new AppError('not_allowed')
+    if (!(await isTeacherOf(trx, actor.userId, classId))) throw new AppError('not_allowed')
     const setId = newId()
     await addClassSet(trx, { id: setId, paperId: id, classId, satOn, resitOf: null })
     await addAuditLine(trx, actor, { act: 'class-set.added', objectKind: 'class_set', objectId: setId, paperId: id })

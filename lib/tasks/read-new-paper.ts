@@ -1,9 +1,10 @@
 import { assertMaySchool, type Actor } from '@/lib/core/actor'
-import { listClassesOfTeacher, type ClassChoice } from '@/db/class-sets'
+import { listClassRows, type SchoolClass } from '@/db/classes'
 import { db } from '@/db/knex'
 
 /** What the form of a new paper offers: the teacher's own classes. */
-export async function readNewPaper(actor: Actor): Promise<{ classes: ClassChoice[] }> {
+export async function readNewPaper(actor: Actor): Promise<{ classes: (SchoolClass & { students: number })[] }> {
   assertMaySchool(actor, 'new-paper')
-  return { classes: await listClassesOfTeacher(db(), actor.userId) }
+  const classes = await listClassRows(db(), actor.userId)
+  return { classes: classes.sort((a, b) => a.name.localeCompare(b.name, 'en', { numeric: true })) }
 }

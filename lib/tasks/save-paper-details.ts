@@ -1,8 +1,9 @@
 import type { Actor } from '@/lib/core/actor'
+import type { PaperDetails } from '@/lib/core/paper-details-view'
 import { AppError } from '@/lib/core/errors'
 import { addAuditLine } from '@/db/audit'
 import { transaction } from '@/db/knex'
-import { getPaper, putPaperDetails, type PaperDetails } from '@/db/papers'
+import { getPaper, putPaperDetails } from '@/db/papers'
 import { gatePaper } from './gate-paper'
 
 export type SavePaperDetails = Readonly<{ paperId: string; /** As the form was opened with. */ before: PaperDetails; after: PaperDetails }>

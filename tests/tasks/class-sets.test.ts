@@ -8,7 +8,6 @@ import { assignMarker } from '@/lib/tasks/assign-marker'
 import { readPaperDetails } from '@/lib/tasks/read-paper-details'
 import { removeClassSet } from '@/lib/tasks/remove-class-set'
 import { renewClassSet } from '@/lib/tasks/renew-class-set'
-import { setAttendance } from '@/lib/tasks/set-attendance'
 import { sharePaper } from '@/lib/tasks/share-paper'
 import { stopSharingPaper } from '@/lib/tasks/stop-sharing-paper'
 import { aPaper } from '@/tests/make/paper'
@@ -19,12 +18,11 @@ describe('the classes and people of a paper', () => {
   let teacher: Actor
   let paperId: string
   let classSetId: string
-  let studentIds: string[]
   let questionIds: string[]
   beforeEach(async () => {
     await openSchool()
     teacher = await anActor('teacher')
-    ;({ paperId, classSetId, studentIds, questionIds } = await aPaper({ owner: teacher.userId }))
+    ;({ paperId, classSetId, questionIds } = await aPaper({ owner: teacher.userId }))
   })
   afterEach(closeSchool)
 
@@ -57,16 +55,6 @@ describe('the classes and people of a paper', () => {
     await removeClassSet(teacher, { paperId, ...set })
     await removeClassSet(teacher, { paperId, ...set })
     expect((await readPaperDetails(teacher, paperId)).classSets).toHaveLength(1)
-  })
-
-  it('sets who was absent, once, for owners only', async () => {
-    const input = { classSetId, studentId: studentIds[0]!, attendance: 'absent' as const }
-    await setAttendance(teacher, input)
-    await setAttendance(teacher, input)
-    expect(await db()('audit_lines').where({ act: 'attendance.set' })).toHaveLength(1)
-    expect((await readPaperDetails(teacher, paperId)).classSets[0]!.absent).toBe(1)
-    await expect(setAttendance(await anActor('teacher'), input)).rejects.toMatchObject({ code: 'not_found' })
-    await expect(setAttendance(teacher, { ...input, studentId: newId() })).rejects.toMatchObject({ code: 'not_found' })
   })
 
   it('shares a paper with another teacher, and keeps at least one owner', async () => {

@@ -7,7 +7,7 @@ const statement = `
   with own_scripts as (
     select scripts.id, scripts.student_id,
       coalesce((select attendance from class_set_students where class_set_id = scripts.class_set_id and student_id = coalesce(scripts.student_id, scripts.suggested_student_id)), 'expected') as attendance
-    from class_sets join scripts on scripts.class_set_id = class_sets.id where class_sets.paper_id = :paper
+    from class_sets join scripts on scripts.class_set_id = class_sets.id where class_sets.paper_id = :paper and (:set is null or class_sets.id = :set)
   ), sat as (select id from own_scripts where attendance = 'expected'),
   own_questions as (select id, maximum, withdrawn_as from questions where paper_id = :paper),
   answers as (
@@ -22,16 +22,19 @@ const statement = `
   ), sampled as (
     select sample_scripts.script_id, samples.moderator_id
     from class_sets join samples on samples.class_set_id = class_sets.id join sample_scripts on sample_scripts.sample_id = samples.id
-    where class_sets.paper_id = :paper
+    where class_sets.paper_id = :paper and (:set is null or class_sets.id = :set)
+  ), own_sheaves as (
+    select id, state from sheaves where paper_id = :paper
+    and (:set is null or exists (select 1 from sheaf_class_sets where sheaf_id = sheaves.id and class_set_id = :set))
   ), own_leaves as (
-    select leaves.state from sheaves join leaves on leaves.sheaf_id = sheaves.id where sheaves.paper_id = :paper
+    select leaves.state from own_sheaves join leaves on leaves.sheaf_id = own_sheaves.id
   )
   select
     (select count(*) from own_questions where withdrawn_as is not 'out') as questions,
     (select coalesce(sum(maximum), 0) from own_questions where withdrawn_as is not 'out') as marks,
-    (select count(*) from sheaves where paper_id = :paper) as sheaves,
-    (select count(*) from sheaves where paper_id = :paper and state in ('waiting', 'reading')) as sheavesReading,
-    (select count(*) from sheaves where paper_id = :paper and state = 'failed') as sheavesFailed,
+    (select count(*) from own_sheaves) as sheaves,
+    (select count(*) from own_sheaves where state in ('waiting', 'reading')) as sheavesReading,
+    (select count(*) from own_sheaves where state = 'failed') as sheavesFailed,
     (select count(*) from own_leaves) as leaves,
     (select count(*) from own_leaves where state = 'loose') as looseSheets,
     (select count(*) from own_scripts) as scripts,
@@ -48,11 +51,11 @@ const statement = `
       where responses.script_id = sampled.script_id and not exists (
         select 1 from markings where response_id = responses.id and round = 'second' and marker_id = sampled.moderator_id and state = 'settled'))) as sampleRead,
     (select count(distinct returned_scripts.script_id) from class_sets join releases on releases.class_set_id = class_sets.id and releases.state = 'released'
-      join returned_scripts on returned_scripts.release_id = releases.id where class_sets.paper_id = :paper) as returned`
+      join returned_scripts on returned_scripts.release_id = releases.id where class_sets.paper_id = :paper and (:set is null or class_sets.id = :set)) as returned`
 
-/** What is done and left of a paper, counted in one statement. */
-export async function countPaper(db: Db, paperId: string): Promise<PaperCounts> {
-  const [counts] = (await db.raw(statement, { paper: paperId })) as PaperCounts[]
+/** What is done and left of a paper, or of one class set of it, counted in one statement. */
+export async function countPaper(db: Db, paperId: string, classSetId: string | null = null): Promise<PaperCounts> {
+  const [counts] = (await db.raw(statement, { paper: paperId, set: classSetId })) as PaperCounts[]
   return counts!
 }
 

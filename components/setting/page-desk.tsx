@@ -39,7 +39,7 @@ export function PageDesk({ state, send, zoom, onZoom, onNewSpace, foot }: PageDe
   const moved = boxes.map((box) => (draft?.key === box.key ? { ...box, rect: draft.rect } : box))
   return (
     <section className={css.desk} data-page-desk ref={desk} aria-label={`Blank paper, page ${page.page} of ${view.pages.length}`}>
-      <div className={css.tools} style={{ width: Math.max(page.width * scale, 480) }}>
+      <div className={css.tools} style={{ width: Math.max(page.width * scale, 420) }}>
         <PageTabs state={state} send={send} />
         <Tools state={state} send={send} onNewSpace={onNewSpace} />
         <div className={css.zoom} role="group" aria-label="Size of the page">
@@ -106,7 +106,7 @@ function useFit(desk: React.RefObject<HTMLDivElement | null>): number {
   useLayoutEffect(() => {
     const element = desk.current
     if (!element) return
-    const measure = () => setWidth(Math.min(widest, Math.max(280, element.clientWidth - 40)))
+    const measure = () => setWidth(Math.min(widest, Math.max(280, element.clientWidth - 2 * parseFloat(getComputedStyle(element).paddingLeft))))
     measure()
     const observer = new ResizeObserver(measure)
     observer.observe(element)

@@ -39,7 +39,7 @@ export function PointRows({ question, view, step, send, onWithdraw, onBringBack 
         <tr>
           <td />
           <td>Most that can be given</td>
-          <td>{points.length > 0 ? <span className="pr-2">{sayMark(question.maximum)}</span> : <WorthInput label="Most that can be given" worth={question.maximum} onWorth={(maximum) => send({ type: 'wrote', patch: { maximum } })} />}</td>
+          <td>{points.length > 0 ? sayMark(question.maximum) : <WorthInput label="Most that can be given" worth={question.maximum} onWorth={(maximum) => send({ type: 'wrote', patch: { maximum } })} />}</td>
         </tr>
       </tfoot>
     </table>

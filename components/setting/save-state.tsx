@@ -8,11 +8,11 @@ export function SaveState({ state }: { state: SetState }) {
   const { view, setting, trouble } = state
   const [last, setLast] = useState<Readonly<{ version: number; at: string | null }>>({ version: view.version, at: null })
   if (last.version !== view.version) setLast({ version: view.version, at: new Date().toLocaleTimeString('en-GB') })
-  return <span role="status">{say()}</span>
+  return <span role="status" className="inline-flex items-center gap-1">{say()}</span>
 
   function say() {
     if (trouble?.offline) return <><CloudOff className="ic" aria-hidden /> No network: kept here, saved when it is back</>
-    if (trouble) return <span className="alarm"><TriangleAlert className="ic" aria-hidden /> Not saved</span>
+    if (trouble) return <span className="alarm inline-flex items-center gap-1"><TriangleAlert className="ic" aria-hidden /> Not saved</span>
     if (setting !== view.setting) return 'Saving'
     return <><Check className="ic" aria-hidden /> {last.at ? `Saved ${last.at}` : 'Saved'}</>
   }

@@ -7,17 +7,20 @@ const dark = 150
 /** A run of ink this share of the page's width, or of 14 points upright, is a printed line. */
 const longRule = 0.18
 const longStroke = 14
+/** A box round print keeps clear of it, in points; on a printed rule or stroke it lies exactly. */
+const clear = { x: 6, y: 4 }
 
 /**
- * The lines of the print that a box may snap to, in points of a page `pageWidth` wide: tops and bottoms of lines of text, printed
- * rules, and edges where several lines of text begin or end.
+ * The lines of the print that a box may snap to, in points of a page `pageWidth` wide: just above and below lines of text, printed
+ * rules, and just outside the edges where several lines of text begin or end.
  */
 export function inkLines(page: GreyPage, pageWidth: number): SnapLines {
   const k = pageWidth / page.width
   const bands = bandsOf(page)
-  const ys = [...bands.flatMap(({ top, bottom }) => [top, bottom + 1]), ...rulesOf(page)]
-  const xs = [...recurring(bands.map(({ left }) => left)), ...recurring(bands.map(({ right }) => right + 1)), ...strokesOf(page, longStroke / k)]
-  return { xs: thinned(xs.map((x) => x * k)), ys: thinned(ys.map((y) => y * k)) }
+  const ys = [...bands.flatMap(({ top, bottom }) => [top * k - clear.y, (bottom + 1) * k + clear.y]), ...rulesOf(page).map((y) => y * k)]
+  const left = recurring(bands.map((band) => band.left)).map((x) => x * k - clear.x)
+  const right = recurring(bands.map((band) => band.right)).map((x) => (x + 1) * k + clear.x)
+  return { xs: thinned([...left, ...right, ...strokesOf(page, longStroke / k).map((x) => x * k)]), ys: thinned(ys) }
 }
 
 type Band = { top: number; bottom: number; left: number; right: number }

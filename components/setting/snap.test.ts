@@ -33,10 +33,10 @@ describe('the lines of the print', () => {
     for (let x = from; x < to; x += gap) for (let k = 0; k < 4; k++) put(x, y + k)
   }
 
-  it('are the tops and bottoms of lines of text and the edges they share', () => {
+  it('keep clear of lines of text above, below and at the edges they share', () => {
     const found = page((put) => { line(put, 10, 20, 150); line(put, 20, 20, 90) })
-    expect(found.ys).toEqual([20, 28, 40, 48])
-    expect(found.xs).toEqual([40])
+    expect(found.ys).toEqual([16, 32, 36, 52])
+    expect(found.xs).toEqual([34])
   })
   it('and rules and strokes, whatever their thickness', () => {
     const found = page((put) => {

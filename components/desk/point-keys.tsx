@@ -37,7 +37,7 @@ export function PointKeys({ strip, run, onCommand }: PointKeysProps) {
             aria-label={`${point.label}, ${given > 0 ? `${sayMark(given)} of ${sayMark(point.worth)} given` : `worth ${sayMark(point.worth)}`}${key ? `, key ${key}` : ''}${lone.has(point.id) ? ', needs its method mark' : ''}`}>
             {key && <KeyCap>{key}</KeyCap>}
             <span className={styles.name}>{point.label}</span>
-            {given > 0 ? <><StampIcon kind={given === 1 ? 'half' : 'tick'} worth={given === 1 ? 1 : 2} scale={1} /><span className={styles.worth}>{given === 1 ? '' : sayMark(given)}</span>{given < point.worth && <span className={styles.left}>of {sayMark(point.worth)}</span>}</> : <span className={styles.left}>{sayMark(point.worth)}</span>}
+            {given > 0 ? <><StampIcon kind={given === 1 ? 'half' : 'tick'} scale={1} /><span className={styles.worth}>{sayMark(given)}</span>{given < point.worth && <span className={styles.left}>of {sayMark(point.worth)}</span>}</> : <span className={styles.left}>{sayMark(point.worth)}</span>}
             {lone.has(point.id) && <span className={styles.left}>needs its method mark</span>}
           </button>
         )

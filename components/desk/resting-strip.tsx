@@ -15,7 +15,7 @@ type RestingStripProps = Readonly<{ strip: Strip; index: number; run: DeskState[
 /** How far a resting strip slides under its neighbour, in points: never more than the printed question, and nothing of a low space. */
 function tuck(strip: Strip): number {
   const [first] = strip.pictures
-  return first && first.rect.h > 60 ? Math.min(18, first.rect.h * 0.15) : 0
+  return first && first.rect.h > 60 ? Math.min(20, first.rect.h * 0.22) : 0
 }
 
 /** A neighbour: there to be compared with, taken in hand by a press. */

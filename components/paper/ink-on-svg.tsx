@@ -11,7 +11,7 @@ function InkMark({ ink }: { ink: Ink }) {
   return <text x={ink.at.x} y={ink.at.y} textAnchor={ink.anchor} style={style}>{ink.text}</text>
 }
 
-/** The painter for a page of HTML: one stamp's ink, inside an `svg.ink` whose view box is in paper points. */
-export function InkOnSvg({ stamp }: { stamp: Stamp }) {
-  return <g>{drawStamp(stamp).map((ink, k) => <InkMark key={k} ink={ink} />)}</g>
+/** The painter for a page of HTML: one stamp's ink, inside an `svg.ink` whose view box is in paper points. `bare` leaves its small figures out. */
+export function InkOnSvg({ stamp, bare = false }: { stamp: Stamp; bare?: boolean }) {
+  return <g>{drawStamp(stamp).map((ink, k) => (bare && ink.kind === 'text' ? null : <InkMark key={k} ink={ink} />))}</g>
 }

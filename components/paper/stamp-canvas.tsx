@@ -39,7 +39,7 @@ export function StampCanvas({ rect, width, stamps, pen, selected, fixed, armed, 
   const scale = width / rect.w
   useEffect(() => {
     let there = true
-    void Promise.all([document.fonts.load(`italic 500 12px ${families.book}`), document.fonts.load(`700 12px ${families.sans}`), document.fonts.load(`600 12px ${families.sans}`)]).then(() => there && repaint((n) => n + 1))
+    void Promise.allSettled([document.fonts.load(`italic 500 12px ${families.book}`), document.fonts.load(`700 12px ${families.sans}`), document.fonts.load(`600 12px ${families.sans}`)]).then(() => there && repaint((n) => n + 1))
     return () => { there = false }
   }, [families])
 

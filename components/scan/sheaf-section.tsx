@@ -60,7 +60,7 @@ function Next({ sheaf, paperId, first, onAgain }: SheafSectionProps) {
 
 function Bang() {
   return (
-    <svg className={`ring ${style.bang}`} width="50" height="34" viewBox="0 0 44 30" aria-hidden>
+    <svg className={`mark-ring ${style.bang}`} width="50" height="34" viewBox="0 0 44 30" aria-hidden>
       <path d="M36.5 5.2C28 -.4 4.6 -1.2 2.2 13.6C.4 28.4 40.6 31.6 42.2 15.8C43 5.6 30.4 1.6 19.6 3" />
       <text x="22" y="21">!</text>
     </svg>

@@ -8,7 +8,7 @@ const twice = 'M38.6 1.6C28 -5.4 .8 -4.6 -1.6 13.4C-3.2 33.2 44.4 35.6 46 15.6C4
 export function RingedMark({ mark, pen = 'first', width = 44 }: { mark: HalfMarks; pen?: Pen; width?: number }) {
   const text = sayMark(mark)
   return (
-    <svg className={`ring ${pen}`} width={width} height={(width * 30) / 44} viewBox="0 0 44 30" role="img" aria-label={`${text}, ${pen} mark`}>
+    <svg className={`mark-ring ${pen}`} width={width} height={(width * 30) / 44} viewBox="0 0 44 30" role="img" aria-label={`${text}, ${pen} mark`}>
       <path d={once} />
       {pen === 'agreed' && <path d={twice} />}
       <text x="22" y="21" fontSize={text.length > 2 ? 14 : 17} style={text.length > 2 ? { fontSize: 14 } : undefined}>{text}</text>

@@ -43,9 +43,9 @@ export function openDesk({ strips, ...run }: Run, responseId?: string | null): D
   return { ...state, habits: habitsOf(strips) }
 }
 
-/** Whether a strip is still this person's to settle. */
+/** Whether a strip is still this person's to mark. One whose page was never scanned can be marked, but is not asked for. */
 export function toDo(strip: Strip): boolean {
-  return strip.bar === null && strip.marking?.state !== 'settled'
+  return strip.bar === null && strip.marking?.state !== 'settled' && (strip.pictures.length === 0 || strip.pictures.some((picture) => picture.src !== null))
 }
 
 /** The stamps that are there on a strip. */

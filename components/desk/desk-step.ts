@@ -62,7 +62,7 @@ function go(state: DeskState, to: number): Stepped {
 
 /** Settles and goes on to the next strip that is to do, after this one first; at the end says that the run is finished. */
 function settle(state: DeskState, strip: Strip): Stepped {
-  if (!toDo(strip)) return { state: onward(state), saves: [] }
+  if (strip.bar !== null || strip.marking?.state === 'settled') return { state: onward(state), saves: [] }
   const done = commit(state, [], 'settled')
   if (done.saves.length === 0) return done
   return { state: onward(done.state), saves: done.saves }
@@ -78,7 +78,7 @@ function onward(state: DeskState): DeskState {
 function standAlone(state: DeskState, strip: Strip, kind: 'nought' | 'nothing-written', newId: () => string): Stepped {
   const away = stampsOf(strip).filter((stamp) => stamp.worth > 0 || (isNought(stamp) && stamp.kind !== kind)).map(takenBack)
   const there = stampsOf(strip).some((stamp) => stamp.kind === kind)
-  if (there && away.length === 0 && !toDo(strip)) return { state: onward(state), saves: [] }
+  if (there && away.length === 0 && strip.marking?.state === 'settled') return { state: onward(state), saves: [] }
   const last = Math.max(0, strip.pictures.length - 1)
   const rect = strip.pictures[last]?.rect ?? { x: 0, y: 0, w: 0, h: 0 }
   const habit = state.habits[kind] ?? { space: last, at: kind === 'nought' ? { x: rect.x + rect.w * 0.9, y: rect.y + rect.h * 0.7 } : { x: rect.x + rect.w * 0.5, y: rect.y + rect.h * 0.55 } }

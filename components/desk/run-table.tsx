@@ -26,7 +26,7 @@ export function RunTable({ paperId, runs }: { paperId: string; runs: readonly Ru
           <tbody>
             {runs.map((run) => (
               <tr key={run.questionId}>
-                <th scope="row"><Link href={path(run)} className="inline-block min-h-6 text-[length:var(--t-2)] text-ink">{run.label}</Link></th>
+                <td><Link href={path(run)} className="inline-block min-h-6 min-w-6 text-[length:var(--t-2)]" aria-label={`Question ${run.label}`}>{run.label}</Link></td>
                 <td>{run.text || <span className="soft">–</span>}</td>
                 <td className="num">{sayMark(run.maximum)}</td>
                 <td className="num">{run.settled} of {run.answers}</td>

@@ -2,7 +2,7 @@
 import dynamic from 'next/dynamic'
 import type { ReactNode, RefObject } from 'react'
 import { RingedMark } from '@/components/ui/ringed-mark'
-import { markOf, responseState } from '@/lib/core/marking'
+import { markOf, responseState, saysMark } from '@/lib/core/marking'
 import { sayMark } from '@/lib/core/marks'
 import type { PaperPoint } from '@/lib/core/paper-space'
 import { penOf } from '@/lib/core/stamp'
@@ -75,7 +75,7 @@ export function StripInHand({ state, sizes, editing, hover, send, onCommand, onP
         {children}
       </div>
       <div className={styles.mark}>
-        {begun ? <RingedMark mark={markOf(stamps)} pen={pen} width={sizes.margin > 100 ? 62 : 52} /> : <span className={styles.none}>not marked</span>}
+        {saysMark(stamps) ? <RingedMark mark={markOf(stamps)} pen={pen} width={sizes.margin > 100 ? 62 : 52} /> : <span className={styles.none}>not marked</span>}
         <small>of {sayMark(state.run.question.maximum)}</small>
         {begun && <small>{sayStanding(strip) || 'settled'}</small>}
       </div>

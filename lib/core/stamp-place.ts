@@ -13,6 +13,9 @@ export function habitOf(stamp: Pick<Stamp, 'kind' | 'markPointId'>): string {
 const crowded = 10
 const sideways = 26
 
+/** The question is printed at the top of a space: about this much of it, in points. */
+const printed = (rect: PaperRect): number => Math.min(20, rect.h * 0.22)
+
 /**
  * Where a stamp goes that nobody pointed a place for: where the last one like it went, else down the right half of the first space in the scheme's order (`rank` of `of`).
  * Moves on along the line while another stamp lies there.
@@ -21,7 +24,7 @@ export function placeByHabit(habit: StampPlace | undefined, spaces: readonly Pap
   const space = habit && spaces[habit.space] ? habit.space : 0
   const rect = spaces[space]
   if (!rect) return { space: 0, at: habit?.at ?? { x: 0, y: 0 } }
-  const wanted = habit && spaces[habit.space] ? habit.at : { x: rect.x + rect.w * 0.62, y: rect.y + (rect.h * (rank + 1)) / (of + 1) }
+  const wanted = habit && spaces[habit.space] ? habit.at : { x: rect.x + rect.w * 0.62, y: rect.y + printed(rect) + ((rect.h - printed(rect)) * (rank + 1)) / (of + 1) }
   for (let k = 0; k < 12; k++) {
     const at = within(rect, { x: wanted.x + k * sideways, y: wanted.y })
     if (!taken.some((other) => other.space === space && Math.hypot(other.at.x - at.x, other.at.y - at.y) < crowded)) return { space, at }

@@ -6,6 +6,7 @@ import type { Actor } from '@/lib/core/actor'
 import { newId } from '@/lib/core/ids'
 import { markOf } from '@/lib/core/marking'
 import type { PressedStamp } from '@/lib/core/stamp'
+import { listRuns } from '@/lib/tasks/list-runs'
 import { openRun } from '@/lib/tasks/open-run'
 import { pressStamp } from '@/lib/tasks/press-stamp'
 import { raiseFlag } from '@/lib/tasks/raise-flag'
@@ -209,6 +210,19 @@ describe('a run', () => {
     const forOwner = (await run(teacher)).strips.find((strip) => strip.responseId === responseId)!
     expect(forOwner.bar).toBe('begun-by-other')
     expect(forOwner.marking?.stamps).toHaveLength(1)
+  })
+
+  it('is listed with what is settled and begun, for the questions a person marks', async () => {
+    const mine = await aMarker(paper.questionIds[0])
+    const other = await responseOf(paper.scriptIds[1]!, paper.questionIds[0]!)
+    await pressStamp(mine, aStamp({ responseId }))
+    await settleMarking(mine, { responseId, round: 'first' })
+    await db()('script_pages').where({ id: other.scriptPageId }).update({ paper_page: null, extra: 1 })
+    await pressStamp(mine, aStamp({ responseId: other.responseId }))
+    expect(await listRuns(mine, paper.paperId), 'no page was scanned: only what was settled can be counted').toMatchObject([{ label: '1', answers: 1, settled: 1, open: 1 }])
+    await db()('answer_spaces').delete()
+    expect(await listRuns(teacher, paper.paperId)).toMatchObject([{ label: '1', answers: 4, settled: 1, open: 1 }, { label: '2', answers: 4, settled: 0, open: 0 }])
+    await expect(listRuns(await anActor('teacher'), paper.paperId)).rejects.toMatchObject({ code: 'not_found' })
   })
 
   it('is opened by those who mark the question only', async () => {

@@ -2,8 +2,19 @@ import path from 'node:path'
 import { defineConfig } from '@playwright/test'
 
 const root = path.join(import.meta.dirname, '..')
-const port = 3187
-const address = `http://localhost:${port}`
+
+function school(name: string, port: number, settings: Record<string, string>) {
+  const data = path.join(import.meta.dirname, 'results', name)
+  return {
+    command: `node -e "fs.rmSync('${data}', { recursive: true, force: true })" && exec node scripts/start.mjs`,
+    cwd: root,
+    url: `http://localhost:${port}/api/health`,
+    timeout: 600_000,
+    gracefulShutdown: { signal: 'SIGTERM' as const, timeout: 10_000 },
+    stdout: 'pipe' as const,
+    env: { PORT: String(port), SHEAFMARK_DATA: data, SHEAFMARK_LOG: 'warn', ...settings },
+  }
+}
 
 export default defineConfig({
   testDir: 'journeys',
@@ -16,7 +27,7 @@ export default defineConfig({
   retries: 0,
   reporter: [['list'], ['json', { outputFile: path.join(import.meta.dirname, 'results', 'journeys.json') }]],
   use: {
-    baseURL: address,
+    baseURL: 'http://localhost:3187',
     viewport: { width: 1440, height: 900 },
     trace: 'retain-on-failure',
     launchOptions: {
@@ -24,14 +35,6 @@ export default defineConfig({
       args: ['--no-sandbox', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync'],
     },
   },
-  // The school's own start command on the built tree: seeded demo, web and worker.
-  webServer: {
-    command: 'node scripts/start.mjs',
-    cwd: root,
-    url: `${address}/api/health`,
-    timeout: 600_000,
-    gracefulShutdown: { signal: 'SIGTERM', timeout: 10_000 },
-    stdout: 'pipe',
-    env: { PORT: String(port), SHEAFMARK_DATA: path.join(import.meta.dirname, 'results', 'data'), SHEAFMARK_FAKE_SMTP_PORT: '3189', SHEAFMARK_LOG: 'warn' },
-  },
+  // The school's own start command on the built tree, each time from nothing: the seeded demo, and an empty real school.
+  webServer: [school('demo', 3187, { SHEAFMARK_FAKE_SMTP_PORT: '3189' }), school('real', 3188, { SHEAFMARK_DEMO: '0', SHEAFMARK_SCHOOL: 'Kestrel Bay School', SHEAFMARK_FAKE_SMTP_PORT: '3190' })],
 })

@@ -13,5 +13,8 @@ export const demoStaff: readonly DemoPerson[] = [
   { userName: 'a.whitcombe', givenName: 'Ada', familyName: 'Whitcombe', roles: ['admin'], says: 'admin: people, classes, settings' },
 ]
 
-/** A student of the class set that is handed back; the user name is the candidate number. */
-export const demoStudent = { userName: '6113', says: 'student: a returned script' } as const
+/** Students of the class set that is handed back; the user name is the candidate number. */
+export const demoStudents = [
+  { userName: '6113', says: 'student: a returned script' },
+  { userName: '6115', says: 'student: of the same class' },
+] as const

@@ -1,14 +1,22 @@
 import { db } from '@/db/knex'
 import { listSittingClasses } from '@/db/class-set-students'
+import { getPaper, setGradeScale } from '@/db/papers'
+import { sampleResponseIds } from '@/db/samples'
 import type { Actor } from '@/lib/core/actor'
 import { newId } from '@/lib/core/ids'
 import { addClass } from '@/lib/tasks/add-class'
+import { halves } from '@/lib/core/marks'
+import { paperMaximum } from '@/lib/core/paper'
 import { assignMarker } from '@/lib/tasks/assign-marker'
 import { createPaper } from '@/lib/tasks/create-paper'
+import { drawSample } from '@/lib/tasks/draw-sample'
 import { importRoster } from '@/lib/tasks/import-roster'
+import { runNextJob } from '@/lib/tasks/run-next-job'
+import { startRelease } from '@/lib/tasks/start-release'
 import { readClassSetFile, type ClassSetName } from './class-set-files'
 import { markDemoResponses } from './demo-marking'
 import { addDemoStaff, type DemoStaff } from './demo-staff'
+import { addDemoStudents } from './demo-students'
 import { confirmDemoNames, scanDemoSheaf } from './demo-scan'
 
 type Sat = Readonly<{ set: ClassSetName; classId: string; satOn: string; title?: string }>
@@ -27,6 +35,10 @@ export async function fillDemoSchool(say: (line: string) => void): Promise<void>
   say('  a paper has loose sheets to sort')
   await halfMarked(staff, await sitPaper(teacher, { set: 'everyday', classId: classes['8K']!, satOn: '2026-11-12' }))
   say('  a paper is half marked')
+  await atTheModerator(staff, await sitPaper(teacher, { set: 'bitonal', classId: classes['9B']!, satOn: '2026-11-17' }))
+  say('  a sample is at the moderator')
+  await handedBack(staff, await sitPaper(teacher, { set: 'one-page', classId: classes['6A']!, satOn: '2026-11-10' }))
+  say('  a paper is handed back')
 }
 
 async function addDemoClasses(staff: DemoStaff): Promise<Record<string, string>> {
@@ -53,4 +65,34 @@ async function halfMarked({ 'r.adeyemi': teacher, 'm.osei': marker }: DemoStaff,
   await markDemoResponses(marker!, { ...made, round: 'first', questions: (label) => label === '1a' || label === '2' })
   await markDemoResponses(teacher!, { ...made, round: 'first', questions: (label) => label === '1b' || label === '3a' || label === '3b' })
   await markDemoResponses(teacher!, { ...made, round: 'first', questions: (label) => label === '4', most: 12 })
+}
+
+async function atTheModerator({ 'r.adeyemi': teacher, 'k.lindqvist': moderator }: DemoStaff, made: Made): Promise<void> {
+  await scanDemoSheaf(teacher!, made)
+  await confirmDemoNames(teacher!, made)
+  await setDemoScale(made.paperId)
+  await markDemoResponses(teacher!, { ...made, round: 'first', questions: () => true })
+  await drawSample(teacher!, { classSetId: made.classSetId, moderatorId: moderator!.userId })
+  // The moderator is half way, and half a mark apart now and then.
+  const inSample = (questionId: string) => sampleResponseIds(db(), moderator!.userId, questionId)
+  await markDemoResponses(moderator!, { ...made, round: 'second', questions: (label) => label < '4' }, (n) => (n % 7 === 3 ? -1 : n % 23 === 5 ? -2 : 0), inSample)
+}
+
+async function handedBack({ 'r.adeyemi': teacher, 'm.osei': marker }: DemoStaff, made: Made): Promise<void> {
+  await scanDemoSheaf(teacher!, made)
+  await confirmDemoNames(teacher!, made)
+  await setDemoScale(made.paperId)
+  await assignMarker(teacher!, { paperId: made.paperId, userId: marker!.userId, questionIds: null })
+  await markDemoResponses(marker!, { ...made, round: 'first', questions: (label) => label > '5' })
+  await markDemoResponses(teacher!, { ...made, round: 'first', questions: (label) => label <= '5' })
+  await addDemoStudents(made.classSetId)
+  await startRelease(teacher!, made.classSetId)
+  while (await runNextJob('seed', () => false));
+}
+
+/** Eight grades by equal steps of the maximum, an odd half rounded up first. */
+async function setDemoScale(paperId: string): Promise<void> {
+  const maximum = paperMaximum((await getPaper(db(), paperId))!.questions)
+  const boundaries = [8, 7, 6, 5, 4, 3, 2, 1].map((grade) => ({ grade: String(grade), lowest: halves(Math.ceil((maximum * (grade + 1)) / 20) * 2) }))
+  await setGradeScale(db(), paperId, 'up', boundaries)
 }

@@ -68,12 +68,13 @@ export function CompareScreen({ comparison, acts, end }: CompareScreenProps) {
   return (
     <div className={styles.compare}>
       <TopBar where={[{ label: comparison.className }, { label: comparison.paperTitle }, { label: 'second marks', href: list }, { label: question.label }]}><span>Script {comparison.scriptNumber}</span>{end}</TopBar>
-      <header className={styles.head}>
+      <main className={styles.page}>
+      <div className={styles.head}>
         <div className={styles.label}>{question.label}</div>
         <h1 className={styles.ask}>{question.text || 'First and second mark side by side'}</h1>
         <div className={styles.of}>{sayMark(question.maximum)} {question.maximum <= 2 ? 'mark' : 'marks'}</div>
-      </header>
-      <main className={styles.two}>
+      </div>
+      <div className={styles.two}>
         <div className={styles.inner}>
           <div className={styles.pair}>
             <ComparedSide title="First mark" says="green pen" marking={first} pictures={pictures} pen="first" />
@@ -113,6 +114,7 @@ export function CompareScreen({ comparison, acts, end }: CompareScreenProps) {
             </span>
           </p>
         </div>
+      </div>
       </main>
     </div>
   )

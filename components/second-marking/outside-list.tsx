@@ -15,7 +15,7 @@ export function OutsideList({ paperId, sample }: Readonly<{ paperId: string; sam
         <tbody>
           {outside.map(({ responseId, label, scriptNumber, first, second, decided }) => (
             <tr key={responseId}>
-              <th scope="row"><b className="book text-ink text-[length:var(--t-2)]">{label}</b> <span className="text-ink">script {scriptNumber}</span></th>
+              <th scope="row"><b className="book font-medium text-[length:var(--t-2)]">{label}</b> <span>script {scriptNumber}</span></th>
               <td>{sayMark(first)}</td><td>{sayMark(second)}</td><td>{sayDifference(first - second)}</td>
               <td>{decided ? sayStands[decided] : <b className="font-semibold">open</b>}</td>
               <td className="text-right"><Link className="btn plain" href={`/papers/${paperId}/second-mark/${responseId}`} aria-label={`Compare ${label} of script ${scriptNumber}`}>{decided ? 'Look again' : 'Decide'}</Link></td>

@@ -23,7 +23,7 @@ export function QuestionTable({ paperId, sample }: QuestionTableProps) {
             const compare = toCompare(question)
             return (
               <tr key={questionId}>
-                <th scope="row"><b className="book text-ink text-[length:var(--t-2)]">{label}</b></th>
+                <th scope="row"><b className="book font-medium text-[length:var(--t-2)]">{label}</b></th>
                 <td>{sayMark(maximum)}</td>
                 <td>{sayMark(tolerance)}</td>
                 <td>{read} of {answers}</td>

@@ -19,7 +19,7 @@ export function DetailsForm({ paperId, details, save }: DetailsFormProps) {
   return (
     <form onSubmit={(event) => void submit(event)} className="grid max-w-[40rem] gap-4">
       <Field label="Title" value={now.title} maxLength={200} required onChange={(event) => change({ title: event.target.value })} />
-      <div className="flex flex-wrap gap-4">
+      <div className="flex flex-wrap items-start gap-4">
         <Field label="Keep the scans until" type="date" required value={now.keepUntil} onChange={(event) => change({ keepUntil: event.target.value })} className="w-48" />
         <Field label="Scripts in a sample" type="number" min={1} max={500} value={now.sampleSize ?? ''} placeholder="by class size" onChange={(event) => change({ sampleSize: event.target.value ? Number(event.target.value) : null })} className="w-48" say="Empty: the usual number." />
       </div>

@@ -1,7 +1,7 @@
 'use client'
 import dynamic from 'next/dynamic'
 import { Undo2 } from 'lucide-react'
-import { useLayoutEffect, useRef, useState, type Dispatch, type ReactNode } from 'react'
+import { useLayoutEffect, useRef, useState, type Dispatch } from 'react'
 import { KeyCap } from '@/components/ui/key-cap'
 import { newId } from '@/lib/core/ids'
 import { boxesOnPage, keyOfHand } from './boxes-on-page'
@@ -18,10 +18,10 @@ export const freshIds = () => ({ question: newId(), space: newId(), point: newId
 const widest = 760
 const noLines = { xs: [], ys: [] }
 
-type PageDeskProps = Readonly<{ state: SetState; send: Dispatch<SetEvent>; zoom: number; onZoom: (by: 1 | -1 | 0) => void; onNewSpace: () => void; foot: ReactNode }>
+type PageDeskProps = Readonly<{ state: SetState; send: Dispatch<SetEvent>; zoom: number; onZoom: (by: 1 | -1 | 0) => void; onNewSpace: () => void }>
 
 /** The page itself, large, with its answer spaces drawn on it. */
-export function PageDesk({ state, send, zoom, onZoom, onNewSpace, foot }: PageDeskProps) {
+export function PageDesk({ state, send, zoom, onZoom, onNewSpace }: PageDeskProps) {
   const { view, setting, hand, tool } = state
   const page = view.pages.find((each) => each.page === state.page)!
   const desk = useRef<HTMLDivElement>(null)
@@ -58,7 +58,6 @@ export function PageDesk({ state, send, zoom, onZoom, onNewSpace, foot }: PageDe
         {picture === 'failed' && <p className={css.waiting}>This page could not be drawn. Its spaces are all here; load the page again to try once more.</p>}
         <SpaceKeys boxes={moved} inHand={keyOfHand(hand)} scale={scale} onTake={(next) => keyOfHand(next) !== keyOfHand(hand) && send({ type: 'took', hand: next })} />
       </div>
-      {foot}
     </section>
   )
 }

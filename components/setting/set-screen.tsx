@@ -59,9 +59,10 @@ export function SetScreen({ opened, stages, acts, end }: SetScreenProps) {
       <main className={css.set}>
         <h1 className="vh">Set {view.title}</h1>
         {page
-          ? <PageDesk state={state} send={send} zoom={zoom} onZoom={onZoom} onNewSpace={() => send({ type: 'chose', tool: 'space' })} foot={<SetTrouble state={state} send={send} />} />
+          ? <PageDesk state={state} send={send} zoom={zoom} onZoom={onZoom} onNewSpace={() => send({ type: 'chose', tool: 'space' })} />
           : <NoBlank paperId={view.paperId} />}
         <section className={css.scheme} data-scheme aria-label="Mark scheme" onKeyDown={(event) => event.key === 'Escape' && key && document.getElementById(spaceKeyId(key))?.focus()}>
+          <SetTrouble state={state} send={send} />
           {question && <SchemeSheet key={question.id} state={state} question={question} send={send} acts={acts} reload={reload} />}
           {!question && hand && <BoxSheet state={state} send={send} />}
           {!question && !hand && <PaperSheet state={state} send={send} />}

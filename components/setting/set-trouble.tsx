@@ -6,7 +6,7 @@ import type { SettingView } from '@/lib/core/setting-view'
 import type { SetEvent, SetState } from './set-state'
 import css from './set.module.css'
 
-/** What keeps a save from being made, and the way on. It stands at the foot of the page and covers nothing. */
+/** What keeps a save from being made, and the way on. It stands above the scheme, in sight, and covers nothing. */
 export function SetTrouble({ state: { trouble, view }, send }: { state: SetState; send: Dispatch<SetEvent> }) {
   if (!trouble || trouble.offline) return null
   const fresh = () => ask<SettingView>(`/api/papers/${view.paperId}/setting`)

@@ -2,6 +2,7 @@
 import { useEffect, useRef } from 'react'
 import { KeyCap } from '@/components/ui/key-cap'
 import type { SortScript, SortStudent, SortingTable } from '@/lib/core/sorting'
+import { NameBoxes } from './name-boxes'
 import { nameLeaf } from './sorting-view'
 import { fullName } from './sorting-words'
 import style from './sorting.module.css'
@@ -38,7 +39,7 @@ export function NamesToConfirm({ table, open, inHand, lead, busy, onYes, onOther
             const hand = script.id === inHand
             return (
               <tr key={script.id} ref={hand ? row : undefined} className={hand && lead ? style.inHand : undefined}>
-                <td className={style.crop}><NameBox script={script} namePage={table.namePage} onLook={(leafId) => onLook(leafId, script)} /></td>
+                <td className={style.crop}><NameBox script={script} table={table} onLook={(leafId) => onLook(leafId, script)} /></td>
                 <Suggestion {...{ script, table, busy }} first={hand} onYes={(student) => onYes(script, student)} onOther={() => onOther(script)} />
               </tr>
             )
@@ -53,12 +54,12 @@ export function suggestedFor(script: SortScript, table: SortingTable): SortStude
   return table.students.find(({ studentId, classSetId }) => studentId === script.suggestedStudentId && classSetId === script.classSetId)
 }
 
-function NameBox({ script, namePage, onLook }: { script: SortScript; namePage: number | null; onLook: (leafId: string) => void }) {
-  const leaf = nameLeaf(script, namePage)
+function NameBox({ script, table, onLook }: { script: SortScript; table: SortingTable; onLook: (leafId: string) => void }) {
+  const leaf = nameLeaf(script, table.namePage)
   if (!leaf) return <span className="soft">no page is left in it</span>
   return (
     <button type="button" className={style.look} onClick={() => onLook(leaf.leafId)} aria-label={`Look at script ${script.number}`}>
-      {leaf.hasBox ? <img src={`/api/leaves/${leaf.leafId}/crop?box=name`} alt={`name box and candidate number as written, script ${script.number}`} loading="lazy" /> : <span className="soft underline">script {script.number} has no page with the name: look at what there is</span>}
+      {leaf.hasBox ? <NameBoxes leafId={leaf.leafId} boxes={table.nameBoxes} of={`script ${script.number}`} /> : <span className="soft underline">script {script.number} has no page with the name: look at what there is</span>}
     </button>
   )
 }
@@ -71,7 +72,7 @@ function Suggestion({ script, table, busy, first, onYes, onOther }: SuggestionPr
   const name = fullName(student)
   return (
     <>
-      <td><b>{name}</b> {student.candidateNumber}<span className={style.why}>{student.sameName ? `two ${name}: read the number` : 'next on the list'}</span></td>
+      <td><b>{name}</b> {student.candidateNumber}<span className={style.why}>{student.sameName ? 'a namesake is on the list: read the number' : 'next on the list'}</span></td>
       <td className={style.go}>
         <button type="button" className={`btn ${first ? 'lead' : ''}`} data-yes disabled={busy} onClick={() => onYes(student)} aria-label={`Yes, ${name} ${student.candidateNumber}`}>Yes {first && <KeyCap>Y</KeyCap>}</button>{' '}
         <button type="button" className="btn plain" disabled={busy} onClick={onOther} aria-label={`Not ${name}: other`}>other</button>

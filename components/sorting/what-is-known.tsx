@@ -1,4 +1,5 @@
 import type { LooseLeaf, SortingTable } from '@/lib/core/sorting'
+import { NameBoxes } from './name-boxes'
 import { howSure, sayNeighbour, whyLoose } from './sorting-words'
 import style from './sorting.module.css'
 
@@ -23,7 +24,7 @@ export function WhatIsKnown({ leaf, table, page, onPage }: WhatIsKnownProps) {
         </dd>
         {readable && <><dt>The hand</dt><dd><span className={style.hand}><img src={`/api/leaves/${leaf.id}/crop?box=hand`} alt="writing on this sheet" /></span></dd></>}
         <dt>Name, number</dt>
-        <dd>{named ? <span className={style.hand}><img src={`/api/leaves/${leaf.id}/crop?box=name`} alt="name box and candidate number as written" /></span> : noName(table.namePage, page)}</dd>
+        <dd>{named ? <NameBoxes leafId={leaf.id} boxes={table.nameBoxes} of={`leaf ${leaf.number}`} /> : noName(table.namePage, page)}</dd>
         <dt>Before it</dt><dd>{sayNeighbour(leaf.before, table)}</dd>
         <dt>After it</dt><dd>{sayNeighbour(leaf.after, table)}</dd>
         <dt>Why it is loose</dt><dd>{whyLoose(leaf)}</dd>

@@ -59,8 +59,9 @@ export type SortingTable = Readonly<{
   title: string
   classes: readonly string[]
   pages: readonly Readonly<{ page: number; width: number; height: number }>[]
-  /** The page with the name box; null when the paper has none. */
+  /** The page with the name box, and which boxes it has; null when the paper has none. */
   namePage: number | null
+  nameBoxes: readonly ('name' | 'number')[]
   students: readonly SortStudent[]
   scripts: readonly SortScript[]
   loose: readonly LooseLeaf[]

@@ -8,8 +8,8 @@ import { getPaper } from '@/db/papers'
 import { drawCut, type Picture } from './draw-cut'
 import { gatePaper } from './gate-paper'
 
-/** `name`: the name box and the number boxes; `hand`: some of the writing, to compare hands by. */
-export type CropBox = 'name' | 'hand'
+/** The name box, the boxes of the candidate number, or some of the writing, to compare hands by. */
+export type CropBox = 'name' | 'number' | 'hand'
 export const cropDpi = 150
 const around = 4
 /** A hand is looked at in the upper part of the first answer space, in points. */
@@ -22,7 +22,7 @@ export async function readLeafCrop(actor: Actor, { leafId, box }: { leafId: stri
   await gatePaper(db(), actor, 'change', leaf.paperId)
   const paper = await getPaper(db(), leaf.paperId)
   const lie = await lieOf(leaf)
-  const rect = lie && paper && (box === 'name' ? nameRect(paper, lie.paperPage) : handRect(paper, lie.paperPage))
+  const rect = lie && paper && (box === 'hand' ? handRect(paper, lie.paperPage) : boxRect(paper, box, lie.paperPage))
   if (!lie || !rect) throw new AppError('not_found')
   return drawCut(db(), { leafId, homography: lie.homography, rect, masks: [] }, cropDpi)
 }
@@ -34,8 +34,8 @@ async function lieOf(leaf: Leaf) {
   return guess ? { homography: guess.homography, paperPage: guess.paperPage } : null
 }
 
-function nameRect(paper: Paper, page: number): PaperRect | null {
-  const boxes = paper.boxes.filter((box) => box.page === page).map(({ rect }) => rect)
+function boxRect(paper: Paper, kind: 'name' | 'number', page: number): PaperRect | null {
+  const boxes = paper.boxes.filter((box) => box.kind === kind && box.page === page).map(({ rect }) => rect)
   if (boxes.length === 0) return null
   const x = Math.min(...boxes.map((box) => box.x)) - around
   const y = Math.min(...boxes.map((box) => box.y)) - around

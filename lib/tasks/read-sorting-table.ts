@@ -27,9 +27,10 @@ export async function readSortingTable(actor: Actor, paperId: string): Promise<S
   const scripts = await scriptsOf(paperId, paper.pages.map(({ page }) => page), new Map(leaves.map(({ id, turn }) => [id, turn])))
   const stub = (leaf: Leaf): LeafStub => ({ id: leaf.id, number: leaf.position + 1, sheafName: names.get(leaf.sheafId) ?? '', turn: leaf.turn })
   const pile: Pile = { leaves, scripts, students }
+  const namePage = paper.boxes.find(({ kind }) => kind === 'name')?.page ?? paper.boxes[0]?.page ?? null
   return {
     paperId, title: paper.title, classes: [...new Set(classes.map(({ className }) => className))], pages: paper.pages, students, scripts,
-    namePage: paper.boxes.find(({ kind }) => kind === 'name')?.page ?? paper.boxes[0]?.page ?? null,
+    namePage, nameBoxes: (['name', 'number'] as const).filter((kind) => paper.boxes.some((box) => box.kind === kind && box.page === namePage)),
     loose: loose.map((leaf) => ({ ...stub(leaf), ...looseOf(leaf, evidence.get(leaf.id) ?? null, pile) })),
     setAside: leaves.filter(({ state }) => state === 'set_aside').map(stub),
     blank: leaves.filter(({ state }) => state === 'blank').map(stub),
@@ -63,7 +64,8 @@ async function scriptsOf(paperId: string, paperPages: readonly number[], turns: 
 
 function looseOf(leaf: Leaf, evidence: LeafEvidence | null, pile: Pile): Omit<LooseLeaf, keyof LeafStub> {
   const reasons = evidence?.placed?.reasons ?? []
-  const guesses = (evidence?.reading.guesses ?? []).map(({ paperPage, confidence }) => ({ paperPage, confidence }))
+  // What is unlike the paper altogether is no page of it, not even perhaps.
+  const guesses = (reasons.includes('unlike_paper') ? [] : (evidence?.reading.guesses ?? [])).map(({ paperPage, confidence }) => ({ paperPage, confidence }))
   const own = pile.leaves.filter(({ sheafId }) => sheafId === leaf.sheafId)
   const at = own.findIndex(({ id }) => id === leaf.id)
   const paperPage = leaf.paperPage ?? guesses[0]?.paperPage ?? null

@@ -1,9 +1,9 @@
 const development = process.env.NODE_ENV === 'development'
 
-// Nothing is loaded from anywhere but the school's own machine. Next writes inline scripts; development needs eval to reload.
+// Nothing is loaded from anywhere but the school's own machine. Next writes inline scripts; the PDF reader's decoders are WebAssembly; development needs eval to reload.
 const policy = [
   "default-src 'self'",
-  `script-src 'self' 'unsafe-inline'${development ? " 'unsafe-eval'" : ''}`,
+  `script-src 'self' 'unsafe-inline' 'wasm-unsafe-eval'${development ? " 'unsafe-eval'" : ''}`,
   "style-src 'self' 'unsafe-inline'",
   "img-src 'self' data: blob:",
   "font-src 'self' data:",

@@ -69,5 +69,5 @@ function practise({ label, mark, maximum, points, remark }: Omit<ReturnedQuestio
   const missed = points.find(({ earned, worth }) => earned < worth)
   const left = halves(maximum - mark!)
   const worth = `${sayMark(left)} ${left <= 2 ? 'mark' : 'marks'}`
-  return missed ? `Do ${label} again for ${worth} more: ${missed.says}.` : `Do ${label} again for ${worth} more.`
+  return `Do ${label} again for ${worth} more.${missed ? ` Not earned yet: ${missed.says}.` : ''}`
 }

@@ -1,0 +1,26 @@
+'use server'
+import { z } from 'zod'
+import { requireActor } from '@/app/_door/require-actor'
+import { outcome } from '@/lib/infra/outcome'
+import { SignatureForm, signOffCheck, SignOffForm, takeBackSignature } from '@/lib/tasks/sign-off-check'
+import { startRelease } from '@/lib/tasks/start-release'
+import { withdrawRelease } from '@/lib/tasks/withdraw-release'
+import type { Outcome } from '@/lib/core/outcome'
+
+const Id = z.string().min(1).max(80)
+
+export async function handBack(classSetId: unknown): Promise<Outcome<string>> {
+  return outcome(async () => startRelease(await requireActor(), Id.parse(classSetId)))
+}
+
+export async function withdraw(classSetId: unknown): Promise<Outcome<void>> {
+  return outcome(async () => withdrawRelease(await requireActor(), Id.parse(classSetId)))
+}
+
+export async function signOff(form: unknown): Promise<Outcome<void>> {
+  return outcome(async () => signOffCheck(await requireActor(), SignOffForm.parse(form)))
+}
+
+export async function takeBackSign(form: unknown): Promise<Outcome<void>> {
+  return outcome(async () => takeBackSignature(await requireActor(), SignatureForm.parse(form)))
+}

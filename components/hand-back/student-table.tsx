@@ -1,0 +1,37 @@
+import { Download } from 'lucide-react'
+import { MarkFigure } from '@/components/ui/mark-figure'
+import { sayTime } from '@/components/ui/say-time'
+import { sayMark } from '@/lib/core/marks'
+import type { HandBackView } from '@/lib/core/hand-back'
+import { stateWords } from './hand-back-words'
+import styles from './hand-back.module.css'
+
+/** Every student of the class set: what was handed back, whether they have read it, and their file. */
+export function StudentTable({ view: { students, maximum } }: { view: HandBackView }) {
+  const out = students.some(({ returned }) => returned !== null)
+  return (
+    <section aria-label="Students" className="mb-10">
+      <h2>Students</h2>
+      <div className={styles.scroll} tabIndex={0} role="region" aria-label="Students and their scripts">
+        <table className={`tbl ${styles.students}`}>
+          <thead><tr><th scope="col">student</th><th scope="col">total of {sayMark(maximum)}</th><th scope="col">grade</th><th scope="col">state</th>{out && <><th scope="col">read by the student</th><th scope="col">file</th></>}</tr></thead>
+          <tbody>
+            {students.map((student) => {
+              const { key, name, candidateNumber, total, grade, returned, changed } = student
+              return (
+                <tr key={key}>
+                  <th scope="row" className={styles.name}>{name} <span className="soft">{candidateNumber}</span></th>
+                  <td>{total === null ? '–' : <MarkFigure mark={total} />}</td>
+                  <td>{grade ?? '–'}</td>
+                  <td className={returned && !changed ? undefined : changed ? styles.in : 'soft'}>{stateWords(student)}{returned && returned.revision > 1 ? `, revision ${returned.revision}` : ''}</td>
+                  {out && <td className="soft">{returned ? (returned.firstReadAt ? sayTime(returned.firstReadAt) : 'not yet') : ''}</td>}
+                  {out && <td>{returned && <a className="inline-flex min-h-6 items-center gap-1" href={`/api/returned/${returned.id}/pdf`} download><Download className="ic" aria-hidden />PDF<span className="vh"> of {name}</span></a>}</td>}
+                </tr>
+              )
+            })}
+          </tbody>
+        </table>
+      </div>
+    </section>
+  )
+}

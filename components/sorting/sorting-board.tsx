@@ -27,6 +27,7 @@ export function SortingBoard({ start, person }: { start: SortingTable; person: R
   const [view, send] = useReducer(nextView, startView)
   const [keysOn, setKeysOn] = useSingleKeys()
   const [nameHeld, setNameHeld] = useState<string | null>(null)
+  const [pageMissing, setPageMissing] = useState<string | null>(null)
 
   const order = looseOrder(table.loose, view.later)
   const leaf = order[0] ?? null
@@ -44,7 +45,8 @@ export function SortingBoard({ start, person }: { start: SortingTable; person: R
   const placeAt = (target: Choice['target']) => {
     if (!leaf) return
     if (view.asking === 'extra') return perform({ act: 'extra', leafId: leaf.id, target })
-    if (page !== null) perform({ act: 'place', leafId: leaf.id, target, paperPage: page })
+    if (page === null) return setPageMissing(leaf.id)
+    perform({ act: 'place', leafId: leaf.id, target, paperPage: page })
   }
   const yes = (script: SortScript | null) => {
     const student = script && suggestedFor(script, table)
@@ -77,7 +79,8 @@ export function SortingBoard({ start, person }: { start: SortingTable; person: R
   }
   useKeys(keysOn, (key) => { keys[key]?.(); return key in keys })
 
-  const trouble = refused && <Trouble error={refused.error} act={refused.act} busy={busy} onAct={perform} onClose={forgive} onCorners={() => send({ type: 'ask', for: 'corners' })} />
+  const unpaged = leaf && page === null && pageMissing === leaf.id && <p role="alert" className="alarm dense mt-2">Which page of the paper is it? Choose it above first, or make it an extra page.</p>
+  const trouble = unpaged || refused && <Trouble error={refused.error} act={refused.act} busy={busy} onAct={perform} onClose={forgive} onCorners={() => send({ type: 'ask', for: 'corners' })} />
   const asksStudent = view.asking === 'place' || view.asking === 'extra' || typeof view.asking === 'object'
   const failedPlace = refused?.act.act === 'place' && view.asking === 'corners' ? refused.act : null
   const zoom = zooms[view.zoom]!

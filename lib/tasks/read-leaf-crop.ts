@@ -12,7 +12,7 @@ import { gatePaper } from './gate-paper'
 export type CropBox = 'name' | 'number' | 'hand'
 export const cropDpi = 150
 const around = 4
-/** A hand is looked at in the upper part of the first answer space, in points. */
+/** How much of a hand is looked at, in points. */
 const handHeight = 64
 
 /** A box of a leaf in paper space: straight, however the sheet lay. Throws not_found when its page has no such box. */
@@ -43,10 +43,11 @@ function boxRect(paper: Paper, kind: 'name' | 'number', page: number): PaperRect
 }
 
 function handRect(paper: Paper, page: number): PaperRect | null {
-  const space = paper.questions.flatMap(({ spaces }) => spaces).find((one) => one.page === page)
-  if (!space) return null
-  const { x, y, w, h } = space.rect
-  // The question is printed at the top of its space: writing begins a little lower.
-  const from = y + Math.max(0, Math.min(h - handHeight, 22))
+  const spaces = paper.questions.flatMap(({ spaces: own }) => own).filter((one) => one.page === page).map(({ rect }) => rect)
+  const [tallest] = spaces.toSorted((a, b) => b.h - a.h)
+  if (!tallest) return null
+  const { x, y, w, h } = tallest
+  // The question is printed at the top of its space; working stands in the middle of the tallest one.
+  const from = y + Math.max(0, Math.min(h - handHeight, h * 0.3))
   return { x: x + w * 0.05, y: from, w: w * 0.5, h: Math.min(handHeight, h) }
 }

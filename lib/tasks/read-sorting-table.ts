@@ -72,7 +72,7 @@ function looseOf(leaf: Leaf, evidence: LeafEvidence | null, pile: Pile): Omit<Lo
   return {
     width: leaf.width, height: leaf.height, paperPage: leaf.paperPage, guesses, reasons, problem: evidence?.reading.problem ?? null,
     before: neighbour(own[at - 1], pile), after: neighbour(own[at + 1], pile),
-    places: likelyPlaces({ position: leaf.position, paperPage, secondScan: reasons.includes('duplicate_page') }, piled(own, pile.scripts), withoutScript(pile)),
+    places: reasons.includes('unlike_paper') ? [] : likelyPlaces({ position: leaf.position, paperPage, secondScan: reasons.includes('duplicate_page') }, piled(own, pile.scripts), withoutScript(pile)),
   }
 }
 

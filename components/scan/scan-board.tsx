@@ -1,7 +1,8 @@
 'use client'
 import { useQuery, useQueryClient } from '@tanstack/react-query'
 import Link from 'next/link'
-import { useState, type DragEvent } from 'react'
+import { useRouter } from 'next/navigation'
+import { useEffect, useRef, useState, type DragEvent } from 'react'
 import { ask } from '@/components/ui/ask'
 import type { ScanPageData } from '@/lib/core/sheaf-progress'
 import { ChooseClasses } from './choose-classes'
@@ -22,6 +23,15 @@ export function ScanBoard({ paperId, start }: { paperId: string; start: ScanPage
     queryKey: key, queryFn: () => ask<ScanPageData>(`/api/papers/${paperId}/sheaves`), initialData: start,
     refetchInterval: ({ state }) => (state.data?.sheaves.some((sheaf) => sheaf.state === 'waiting' || sheaf.state === 'reading') ? lookAgainMs : false),
   })
+  // The stage line above is the server's: it is asked again when a sheaf comes or ends.
+  const router = useRouter()
+  const states = data.sheaves.map(({ id, state }) => `${id} ${state}`).join()
+  const shown = useRef(states)
+  useEffect(() => {
+    if (shown.current === states) return
+    shown.current = states
+    router.refresh()
+  }, [states, router])
   const upload = useUpload(paperId, data.limitMb, again)
   const [asking, setAsking] = useState<File | null>(null)
   const [over, setOver] = useState(false)

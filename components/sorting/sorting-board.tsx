@@ -88,7 +88,7 @@ export function SortingBoard({ start, person }: { start: SortingTable; person: R
   return (
     <>
       <TopBar where={[...(table.classes.length > 0 ? [{ label: table.classes.join(', ') }] : []), { label: table.title, href: `/papers/${table.paperId}` }, { label: 'sorting table' }]}>
-        <span role="status">{busy ? 'Saving' : savedAt ? <><Check className="ic" aria-hidden /> Saved {atTime(savedAt)}</> : ''}</span>
+        <span role="status">{busy ? 'Saving' : savedAt ? <span className="line"><Check className="ic" aria-hidden /> Saved {atTime(savedAt)}</span> : ''}</span>
         <span>{leftToSort(table)}</span>
         {person}
       </TopBar>

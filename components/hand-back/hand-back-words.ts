@@ -12,7 +12,7 @@ export const checkWords: Record<CheckKey, Readonly<{ found: (n: number) => strin
   over: { found: (n) => counted(n, 'mark that cannot be', 'marks that cannot be'), clear: 'every mark within its maximum and on the step', step: 'Look at the mark' },
   method: { found: (n) => counted(n, 'answer mark without its method mark', 'answer marks without their method marks'), clear: 'answer marks stand on their method marks', step: 'Look at the mark' },
   flags: { found: (n) => counted(n, 'open flag', 'open flags'), clear: 'no open flag', step: 'Answer it' },
-  sample: { found: (n) => counted(n, 'sampled script without a decision', 'sampled scripts without a decision'), clear: 'the sample is decided', step: 'Second-mark' },
+  sample: { found: (n) => counted(n, 'sampled script without a decision', 'sampled scripts without a decision'), clear: 'no sampled script undecided', step: 'Second-mark' },
 }
 
 export const keptBackWords: Record<KeptBackReason, string> = {

@@ -27,7 +27,13 @@ export function scriptResult(script: GatheredScript): ScriptResult {
     questions, pages: script.pages.map((page, k) => ({ shape: shapeOf(page), words: pages[k]!.words })), next: whatToPractise(questions),
   }
   const markers = [...new Set(script.answers.flatMap(({ marking }) => (marking ? [marking.marker] : [])))].sort()
-  return { detail, pages, markers, key: createHash('sha256').update(JSON.stringify([1, detail, pages])).digest('hex') }
+  return { detail, pages, markers, key: keyOf(script) }
+}
+
+/** Made of marks, stamps, pages and what is said about them, and of none of our own wording: a new edition of Sheafmark changes nobody's script. */
+function keyOf({ paper, school: _school, sampled: _sampled, ...own }: GatheredScript): string {
+  const questions = paper.questions.map(({ id, label, maximum, points, spaces, withdrawn, modelSolution }) => ({ id, label, maximum, points, spaces, withdrawn, modelSolution: paper.solutionsReleased ? modelSolution : null }))
+  return createHash('sha256').update(JSON.stringify([1, paper.title, paper.scale, questions, own])).digest('hex')
 }
 
 /** How the grade came about, in one sentence; empty without a scale. */

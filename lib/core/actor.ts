@@ -36,22 +36,26 @@ export function assertMaySchool(actor: Actor, act: SchoolAct): void {
   if (!maySchool(actor, act)) throw new AppError('not_allowed')
 }
 
+/** A standing as far as a person's roles carry it: who is no teacher any more owns nothing, whatever was written down before. */
+export function carriedStanding({ roles }: Pick<Actor, 'roles'>, { owner, marks, moderates }: PaperStanding): PaperStanding {
+  return { owner: owner && roles.includes('teacher'), marks: roles.includes('marker') ? marks : [], moderates: moderates && roles.includes('moderator') }
+}
+
 /** Role AND standing. An admin sees no marks by default; a student stands to no paper, only to what was handed back. */
 export function mayOnPaper(actor: Actor, act: PaperAct, standing: PaperStanding, questionId?: string): boolean {
-  const teaches = actor.roles.includes('teacher') && standing.owner
-  const marksAny = actor.roles.includes('marker') && (standing.marks === 'all' || standing.marks.length > 0)
-  const moderates = actor.roles.includes('moderator') && standing.moderates
+  const { owner, marks, moderates } = carriedStanding(actor, standing)
+  const marksThis = marks === 'all' || (questionId !== undefined && marks.includes(questionId))
   switch (act) {
     case 'see':
-      return teaches || marksAny || moderates
+      return owner || marks.length > 0 || moderates
     case 'change':
-      return teaches
+      return owner
     case 'mark':
-      return teaches || (marksAny && (standing.marks === 'all' || (questionId !== undefined && standing.marks.includes(questionId))))
+      return owner || marksThis
     case 'second-mark':
       return moderates
     case 'agree':
-      return teaches || moderates
+      return owner || moderates
   }
 }
 

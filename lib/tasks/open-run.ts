@@ -10,7 +10,7 @@ import { listFlagsOfQuestion, type Flag } from '@/db/flags'
 import { db, type Db } from '@/db/knex'
 import { listMarkingsOfQuestion } from '@/db/markings'
 import { getPaper } from '@/db/papers'
-import { listRunPages, listRunResponses, runSeed, type RunResponse, type ScriptPage } from '@/db/runs'
+import { listRunPages, listRunResponses, runSeed, sampledScriptIds, type RunResponse, type ScriptPage } from '@/db/runs'
 import { blindResponseIds, sampleResponseIds } from '@/db/samples'
 import { gatePaper } from './gate-paper'
 import { actOfRound } from './gate-response'
@@ -54,12 +54,15 @@ function byScript(pages: readonly ScriptPage[]): Map<string, ScriptPage[]> {
   return of
 }
 
-/** First marks in fair order, a sample in its reading order, agreeing only where two marks were given. */
-async function inOrder(db: Db, { actor, round, blind, markings }: Held, questionId: string): Promise<RunResponse[]> {
+/** First marks in fair order, a sample in its reading order, agreeing only where two marks were given: an owner's everywhere, a moderator's in their own samples. */
+async function inOrder(db: Db, { actor, round, paper, owner, blind, markings }: Held, questionId: string): Promise<RunResponse[]> {
   const all = new Map((await listRunResponses(db, questionId)).map((response) => [response.id, response]))
   const ids = async (): Promise<string[]> => {
     if (round === 'second') return sampleResponseIds(db, actor.userId, questionId)
-    if (round === 'agreed') return markings.map((marking) => marking.responseId).filter((id) => !blind.has(id))
+    if (round === 'agreed') {
+      const sampled = owner ? null : await sampledScriptIds(db, actor.userId, paper.id)
+      return markings.map((marking) => marking.responseId).filter((id) => !blind.has(id) && (sampled === null || sampled.has(all.get(id)?.scriptId ?? '')))
+    }
     return fairOrder([...all.keys()], await runSeed(db, actor.userId, questionId, round))
   }
   return (await ids()).flatMap((id) => all.get(id) ?? [])

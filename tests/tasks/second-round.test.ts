@@ -103,6 +103,22 @@ describe('agreeing', () => {
     expect((await run(teacher, 'agreed')).strips.map((strip) => strip.responseId)).toEqual([responseId])
   })
 
+  it('shows a moderator only what was agreed in their own sample', async () => {
+    const outside = await responseOf(paper.scriptIds[2]!, questionId)
+    await db()('markings').insert({ id: newId(), response_id: outside.responseId, round: 'agreed', marker_id: teacher.userId, state: 'settled', created_at: 1, settled_at: 1 })
+    const second = await secondMark()
+    await beginAgreedMarking(teacher, { responseId, copyOf: second.id })
+    expect((await run(moderator, 'agreed')).strips.map((strip) => strip.responseId)).toEqual([responseId])
+    expect((await run(teacher, 'agreed')).strips.map((strip) => strip.responseId)).toContain(outside.responseId)
+  })
+
+  it('is not open to an owner who is no teacher any more', async () => {
+    await secondMark()
+    await db()('paper_owners').insert({ paper_id: paper.paperId, user_id: moderator.userId })
+    const outside = await responseOf(paper.scriptIds[2]!, questionId)
+    await expect(pressStamp(moderator, aStamp({ responseId: outside.responseId, round: 'agreed' })), 'outside the sample').rejects.toMatchObject({ code: 'not_allowed' })
+  })
+
   it('is not taken over by a first marking settled again later', async () => {
     const second = await secondMark()
     const { markingId } = await beginAgreedMarking(teacher, { responseId, copyOf: second.id })

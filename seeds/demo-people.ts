@@ -8,6 +8,7 @@ export type DemoPerson = Readonly<{ userName: string; givenName: string; familyN
 /** Staff of our own invented Kestrel Bay School. */
 export const demoStaff: readonly DemoPerson[] = [
   { userName: 'r.adeyemi', givenName: 'Ruth', familyName: 'Adeyemi', roles: ['teacher', 'marker'], says: 'teacher: owns the papers' },
+  { userName: 'h.moss', givenName: 'Helen', familyName: 'Moss', roles: ['teacher'], says: 'teacher: a paper and a class of her own' },
   { userName: 'm.osei', givenName: 'Marcus', familyName: 'Osei', roles: ['marker'], says: 'marker: marks some questions' },
   { userName: 'k.lindqvist', givenName: 'Karin', familyName: 'Lindqvist', roles: ['moderator', 'marker'], says: 'moderator: second-marks a sample' },
   { userName: 'a.whitcombe', givenName: 'Ada', familyName: 'Whitcombe', roles: ['admin'], says: 'admin: people, classes, settings' },

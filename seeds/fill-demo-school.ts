@@ -39,6 +39,15 @@ export async function fillDemoSchool(say: (line: string) => void): Promise<void>
   say('  a sample is at the moderator')
   await handedBack(staff, await sitPaper(teacher, { set: 'one-page', classId: classes['6A']!, satOn: '2026-11-10' }))
   say('  a paper is handed back')
+  await sitPaper(staff['h.moss']!, { set: 'one-page', classId: await addSmallClass(staff['h.moss']!), satOn: '2026-11-26', title: 'Starter for 10C' })
+}
+
+/** A class of another teacher: what is hers nobody else of the demo's people sees. */
+async function addSmallClass(teacher: Actor): Promise<string> {
+  const { classId } = await addClass(teacher, '10C')
+  const list = ['candidate_number,given_name,family_name,email', '1001,Maren,Okafor,', '1002,Idris,Vale,', '1003,Sunniva,Peck,']
+  await importRoster(teacher, classId, new TextEncoder().encode(list.join('\n')))
+  return classId
 }
 
 async function addDemoClasses(staff: DemoStaff): Promise<Record<string, string>> {
@@ -61,8 +70,10 @@ async function sitPaper(teacher: Actor, { set, classId, satOn, title = '' }: Sat
 async function halfMarked({ 'r.adeyemi': teacher, 'm.osei': marker }: DemoStaff, made: Made): Promise<void> {
   await scanDemoSheaf(teacher!, made)
   await confirmDemoNames(teacher!, made)
-  await assignMarker(teacher!, { paperId: made.paperId, userId: marker!.userId, questionIds: null })
-  await markDemoResponses(marker!, { ...made, round: 'first', questions: (label) => label === '1a' || label === '2' })
+  const theirs = (label: string) => label === '1a' || label === '2'
+  const questions = (await getPaper(db(), made.paperId))!.questions
+  await assignMarker(teacher!, { paperId: made.paperId, userId: marker!.userId, questionIds: questions.filter(({ label }) => theirs(label)).map(({ id }) => id) })
+  await markDemoResponses(marker!, { ...made, round: 'first', questions: theirs })
   await markDemoResponses(teacher!, { ...made, round: 'first', questions: (label) => label === '1b' || label === '3a' || label === '3b' })
   await markDemoResponses(teacher!, { ...made, round: 'first', questions: (label) => label === '4', most: 12 })
 }

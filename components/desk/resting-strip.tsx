@@ -1,6 +1,6 @@
 import { memo } from 'react'
 import { RingedMark } from '@/components/ui/ringed-mark'
-import { StampsSvg } from '@/components/paper/stamps-svg'
+import { StampsOnSvg } from '@/components/paper/stamps-on-svg'
 import { markOf } from '@/lib/core/marking'
 import type { Strip } from '@/lib/core/run'
 import { penOf } from '@/lib/core/stamp'
@@ -33,7 +33,7 @@ export const RestingStrip = memo(function RestingStrip({ strip, index, run, size
       <div className={styles.sheets} onClick={() => onTake(index)}>
         {strip.pictures.map((picture) => (
           <SpacePicture key={picture.spaceId} picture={picture} width={widthOfSpace(picture, strip, sizes)} density={sizes.density} alt={`Handwritten answer, script ${strip.number}. ${sayStamps(strip, run)}`}>
-            <StampsSvg stamps={stampsOf(strip).filter((stamp) => stamp.scriptPageId === picture.scriptPageId)} rect={picture.rect} pen={pen} />
+            <StampsOnSvg stamps={stampsOf(strip).filter((stamp) => stamp.scriptPageId === picture.scriptPageId)} rect={picture.rect} pen={pen} />
           </SpacePicture>
         ))}
       </div>

@@ -1,7 +1,7 @@
 'use client'
 import { useState } from 'react'
 import { KeyCap } from '@/components/ui/key-cap'
-import { StampsSvg } from '@/components/paper/stamps-svg'
+import { StampsOnSvg } from '@/components/paper/stamps-on-svg'
 import { penOf } from '@/lib/core/stamp'
 import { stampsOf, type DeskState } from './desk-state'
 import { sayStamps } from './say-desk'
@@ -27,7 +27,7 @@ export function WholePage({ state, sizes, onClose }: Readonly<{ state: DeskState
         </div>
         <div className="sheet" style={{ aspectRatio: `${page.width} / ${page.height}` }}>
           <img src={sharpSrc(page.src, sizes.strip, page.width, sizes.density)} alt={`Script ${strip.number}, ${page.paperPage === null ? 'extra page' : `page ${page.paperPage}`}. ${sayStamps(strip, state.run)}`} />
-          <StampsSvg stamps={stampsOf(strip).filter((stamp) => stamp.scriptPageId === page.scriptPageId)} rect={rect} pen={penOf(state.run.round)} />
+          <StampsOnSvg stamps={stampsOf(strip).filter((stamp) => stamp.scriptPageId === page.scriptPageId)} rect={rect} pen={penOf(state.run.round)} />
         </div>
       </div>
     </main>

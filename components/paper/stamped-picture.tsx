@@ -2,9 +2,7 @@ import { sayStamp } from '@/lib/core/say-stamp'
 import { kept } from '@/lib/core/marking'
 import type { StripPicture } from '@/lib/core/run'
 import type { Pen, Stamp } from '@/lib/core/stamp'
-import { InkOnSvg } from './ink-on-svg'
-
-const penClass: Readonly<Record<Pen, string>> = { first: 'p1', second: 'p2', agreed: 'p3' }
+import { StampsOnSvg } from './stamps-on-svg'
 
 /** What stamps say, in words: the text equivalent of a stamped picture. */
 export function sayStamps(stamps: readonly Stamp[]): string {
@@ -19,12 +17,10 @@ export function StampedPicture({ pictures, stamps, pen, name }: StampedPicturePr
   const here = kept(stamps)
   return (
     <div className="grid gap-2">
-      {pictures.map(({ spaceId, scriptPageId, rect: { x, y, w, h }, src }) => (
-        <div key={spaceId} className="sheet" style={{ aspectRatio: `${w} / ${h}` }}>
+      {pictures.map(({ spaceId, scriptPageId, rect, src }) => (
+        <div key={spaceId} className="sheet" style={{ aspectRatio: `${rect.w} / ${rect.h}` }}>
           {src ? <img src={src} alt="" /> : <p className="dense soft p-4">This page has not been scanned.</p>}
-          <svg className={`ink ${penClass[pen]}`} viewBox={`${x} ${y} ${w} ${h}`} role="img" aria-label={`${name}: ${sayStamps(stamps)}`}>
-            {here.filter((stamp) => stamp.scriptPageId === scriptPageId).map((stamp) => <InkOnSvg key={stamp.id} stamp={stamp} />)}
-          </svg>
+          <StampsOnSvg stamps={here.filter((stamp) => stamp.scriptPageId === scriptPageId)} rect={rect} pen={pen} says={`${name}: ${sayStamps(stamps)}`} />
         </div>
       ))}
     </div>

@@ -1,4 +1,4 @@
-import { startFakeMailServer } from '@/lib/infra/fake-mail-server'
+import { startFakeMailServer } from './start-fake-mail-server'
 
 // Takes mails on loopback and keeps them for the outbox page; delivers nothing anywhere.
 const server = await startFakeMailServer()

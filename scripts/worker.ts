@@ -5,7 +5,7 @@ import { env } from '@/lib/infra/env'
 import { log } from '@/lib/infra/log'
 import { runNextJob } from '@/lib/tasks/run-next-job'
 import { sendMails } from '@/lib/tasks/send-mails'
-import { startFakeMailServer } from '@/lib/infra/fake-mail-server'
+import { startFakeMailServer } from './start-fake-mail-server'
 
 // The school's second process: reads sheaves, builds what is handed back, and sends mails. A signal ends it between two steps.
 const worker = `${hostname()}-${process.pid}-${Date.now()}`

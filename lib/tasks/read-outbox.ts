@@ -3,7 +3,7 @@ import { db } from '@/db/knex'
 import type { Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
 import { env } from '@/lib/infra/env'
-import { listReceived, type ReceivedMail } from '@/lib/infra/fake-mail-folder'
+import { listReceived, type ReceivedMail } from '@/lib/infra/received-mails'
 import { maySeeOutbox } from './may-see-outbox'
 
 export type OutboxLine = Readonly<{ id: string; to: string; subject: string; state: MailState; attempts: number; sendAfter: number; sentAt: number | null; error: string | null }>

@@ -1,24 +1,15 @@
-import { createHash } from 'node:crypto'
-import { mkdir, readdir, readFile, rename, stat, writeFile } from 'node:fs/promises'
+import { readdir, readFile, stat } from 'node:fs/promises'
 import path from 'node:path'
 import { simpleParser, type ParsedMail } from 'mailparser'
 import { env } from './env'
 
 export type ReceivedMail = Readonly<{ key: string; at: number; to: string; subject: string; text: string; messageId: string }>
 
-const folderOf = () => path.join(env.dataFolder, 'fake-mail')
-
-/** Keeps a received message as it came. The same Message-ID twice is one message, as in a reader's mailbox. */
-export async function keepReceived(raw: Buffer, folder = folderOf()): Promise<void> {
-  const { messageId } = await simpleParser(raw)
-  const key = createHash('sha256').update(messageId ?? raw).digest('hex').slice(0, 32)
-  await mkdir(folder, { recursive: true })
-  await writeFile(path.join(folder, `.${key}`), raw)
-  await rename(path.join(folder, `.${key}`), path.join(folder, `${key}.eml`))
-}
+/** Where the fake mail server of a school without one of its own keeps what it takes. */
+export const receivedFolder = () => path.join(env.dataFolder, 'fake-mail')
 
 /** The newest messages the local fake mail server took, newest first. */
-export async function listReceived(limit: number, folder = folderOf()): Promise<ReceivedMail[]> {
+export async function listReceived(limit: number, folder = receivedFolder()): Promise<ReceivedMail[]> {
   const names = (await readdir(folder).catch(() => [])).filter((name) => name.endsWith('.eml'))
   const dated = await Promise.all(names.map(async (name) => ({ name, at: (await stat(path.join(folder, name))).mtimeMs })))
   const newest = dated.toSorted((a, b) => b.at - a.at).slice(0, limit)

@@ -1,8 +1,8 @@
 import type { AddressInfo } from 'node:net'
 import { SMTPServer } from 'smtp-server'
-import { env } from './env'
-import { keepReceived } from './fake-mail-folder'
-import { log } from './log'
+import { env } from '@/lib/infra/env'
+import { log } from '@/lib/infra/log'
+import { keepReceived } from './keep-received'
 
 /**
  * A real SMTP server on loopback that delivers nowhere: it keeps what it is given under the data folder, for the outbox

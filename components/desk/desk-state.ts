@@ -77,12 +77,13 @@ export function placeOf(strip: Strip, spot: Spot): StampPlace | null {
 
 /**
  * Changes some stamps of a strip and whether it is settled, as one step that can be undone. Held against the rules first: what does not fit changes nothing and is said. A settled
- * marking is opened again by a change.
+ * marking is opened again by a change, but for a second one.
  */
 export function commit(state: DeskState, stamps: readonly Stamp[], to: MarkingState = 'open', responseId = state.strips[state.hand]?.responseId): Stepped {
   const strip = state.strips.find((candidate) => candidate.responseId === responseId)
   if (!strip) return { state, saves: [] }
   if (strip.bar !== null) return said(state, { code: 'begun_by_other', detail: {} })
+  if (standsForGood(state, strip)) return said(state, standing)
   const before = strip.marking?.stamps ?? []
   const from = strip.marking?.state ?? 'open'
   const after = stamps.reduce<readonly Stamp[]>((list, stamp) => [...list.filter((other) => other.id !== stamp.id), stamp], before)
@@ -96,6 +97,13 @@ export function commit(state: DeskState, stamps: readonly Stamp[], to: MarkingSt
   const change: Change = { responseId: strip.responseId, from, to, stamps: stamps.map((stamp) => ({ before: before.find((other) => other.id === stamp.id) ?? null, after: stamp })) }
   const says: Says | null = from === 'settled' && to === 'open' ? { words: 'opened-again' } : null
   return { state: { ...state, strips: withMarking(state.strips, strip, after, to), habits: learned(state, strip, stamps), done: [...state.done, change], undone: [], says, pointer: null }, saves: savesOf(state.run.round, change) }
+}
+
+const standing: Says = { code: 'marking_settled', detail: { round: 'second' } }
+
+/** A second marking may have been compared with the first once it is settled, so no key changes it any more. */
+function standsForGood({ run }: DeskState, strip: Strip): boolean {
+  return run.round === 'second' && strip.marking?.state === 'settled'
 }
 
 export function said(state: DeskState, says: Says): Stepped {
@@ -137,6 +145,7 @@ export function turnBack(state: DeskState, way: 'undo' | 'redo'): Stepped {
   const change = from.at(-1)
   const strip = state.strips.find((candidate) => candidate.responseId === change?.responseId)
   if (!change || !strip) return said(state, { words: way === 'undo' ? 'nothing-to-undo' : 'nothing-to-redo' })
+  if (standsForGood(state, strip)) return said(state, standing)
   const now = strip.marking?.stamps ?? []
   const stamps = change.stamps.map(({ before, after }) => {
     const current = now.find((stamp) => stamp.id === after.id) ?? after

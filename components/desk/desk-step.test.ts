@@ -112,6 +112,18 @@ describe('going on', () => {
   })
 })
 
+describe('a settled second marking', () => {
+  it('is neither undone nor changed, and why is said', () => {
+    const second: Run = { ...aRun(three()), round: 'second' }
+    const { state, saves } = play(second, give('a'), { type: 'settle' }, { type: 'undo' }, { type: 'go', to: 0 }, give('b'))
+    expect(state.says).toEqual({ code: 'marking_settled', detail: { round: 'second' } })
+    expect(mark(state)).toBe(2)
+    expect(saves.map((save) => save.kind)).toEqual(['stamp', 'settle'])
+    expect(play(second, give('a'), { type: 'settle' }, { type: 'undo' }).state.says).toMatchObject({ code: 'marking_settled' })
+    expect(mark(play(second, give('a'), { type: 'undo' }).state), 'before it is settled').toBe(0)
+  })
+})
+
 describe('undo', () => {
   it('reaches back across strips and settling, and redo forward again', () => {
     const done = play(aRun(three()), give('a'), { type: 'settle' }, give('b', true), { type: 'settle' }).state

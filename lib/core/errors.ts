@@ -50,6 +50,7 @@ export const errorStatus = {
   // people
   email_taken: 409,
   user_name_taken: 409,
+  password_there: 403,
   link_used: 410,
   password_wrong: 422,
   set_up_code_wrong: 422,

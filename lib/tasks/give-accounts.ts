@@ -20,7 +20,8 @@ export type AccountsGiven = Readonly<{ mailed: number; slips: readonly Slip[] }>
 
 /**
  * Gives students of a class an account, or those who have one a new way in. The codes of the slips come back this once;
- * only their hashes stay. A disabled account is passed over.
+ * only their hashes stay. A disabled account is passed over. Throws password_there when a slip would open an account that has a password to whoever holds the slip: only an
+ * admin may print that one.
  */
 export async function giveAccounts(actor: Actor, classId: string, input: z.output<typeof AccountsForm>): Promise<AccountsGiven> {
   return transaction(async (trx) => {
@@ -36,7 +37,10 @@ export async function giveAccounts(actor: Actor, classId: string, input: z.outpu
       if (input.by === 'mail' && user.email !== null) {
         await issueLink(trx, actor, user, user.passwordHash === null ? 'invitation' : 'reset')
         mailed += 1
-      } else slips.push({ name: `${student.givenName} ${student.familyName}`, userName: user.userName ?? user.email!, code: await issueCode(trx, actor, user) })
+      } else {
+        if (user.passwordHash !== null && !actor.roles.includes('admin')) throw new AppError('password_there')
+        slips.push({ name: `${student.givenName} ${student.familyName}`, userName: user.userName ?? user.email!, code: await issueCode(trx, actor, user) })
+      }
     }
     return { mailed, slips }
   })

@@ -22,7 +22,7 @@ export async function importRoster(actor: Actor, classId: string, bytes: Uint8Ar
     await gateClass(trx, actor, classId)
     const { steps, faults, leftAlone } = await planFor(trx, actor, classId, bytes)
     if (faults.length > 0) throw new AppError('roster_invalid', { lines: faults })
-    for (const step of steps) await carryOut(trx, classId, step)
+    for (const step of steps) await carryOut(trx, actor, classId, step)
     const count = (does: RosterStep['does']) => steps.filter((step) => step.does === does).length
     const counts = { new: count('new'), changed: count('changed'), joins: count('joins'), unchanged: count('unchanged'), leftAlone }
     await addAuditLine(trx, actor, { act: 'roster.imported', objectKind: 'class', objectId: classId, to: `new ${counts.new}, changed ${counts.changed}, joins ${counts.joins}, unchanged ${counts.unchanged}` })
@@ -30,12 +30,12 @@ export async function importRoster(actor: Actor, classId: string, bytes: Uint8Ar
   })
 }
 
-async function carryOut(trx: Db, classId: string, step: RosterStep): Promise<void> {
+async function carryOut(trx: Db, actor: Actor, classId: string, step: RosterStep): Promise<void> {
   const studentId = step.studentId ?? newId()
   if (step.studentId === null) await addStudent(trx, { ...step, id: studentId }, now())
   if (step.does === 'changed') {
     await setStudentNames(trx, studentId, step)
-    await followList(trx, studentId)
+    await followList(trx, actor, studentId)
   }
   await putInClass(trx, classId, studentId)
 }

@@ -26,7 +26,7 @@ export async function pressStamp(actor: Actor, pressed: PressedStamp): Promise<P
     await assertOwnId(trx, pressed.id, inHand)
     const before = inHand?.stamps.find((stamp) => stamp.id === pressed.id)
     if (before && before.version >= pressed.version) return { mark: markOf(inHand!.stamps), kept: false }
-    if (inHand?.state === 'settled') throw new AppError('marking_settled')
+    if (inHand?.state === 'settled') throw new AppError('marking_settled', { round: pressed.round })
     if (gated.question.withdrawn) throw new AppError('question_withdrawn')
     await assertOnScript(trx, pressed, gated.scriptId)
     const stamp = toStamp(pressed, inHand?.id ?? '')

@@ -166,6 +166,20 @@ describe('accounts of students', () => {
     await setPasswordByLink({ token: second.slips[0]!.code, password: 'three quiet words' })
   })
 
+  it('open again by a slip only through an admin once they have a password, or by mail to their own address', async () => {
+    const { teacher, classId, studentIds } = await withStudents('83,Ida,Berg,', '84,Per,Lund,per@example.org')
+    const { slips } = await giveAccounts(teacher, classId, { studentIds, by: 'slips' })
+    for (const slip of slips) await setPasswordByLink({ token: slip.code, password: 'three quiet words' })
+    const other = await anActor('teacher')
+    const others = await aClass(other, '9B')
+    await importRoster(other, others, list('83,Ida,Berg,', '84,Per,Lund,per@example.org'))
+    await importRoster(other, others, list('84,Per,Lund,other@example.org'))
+    for (const by of ['slips', 'mail'] as const) await expect(giveAccounts(other, others, { studentIds, by })).rejects.toMatchObject({ code: 'password_there' })
+    expect(await giveAccounts(other, others, { studentIds: studentIds.slice(1), by: 'mail' })).toEqual({ mailed: 1, slips: [] })
+    expect(await db()('outbox_mails').pluck('to_address')).toEqual(['per@example.org'])
+    expect((await giveAccounts(await anActor('admin'), others, { studentIds, by: 'slips' })).slips).toHaveLength(2)
+  })
+
   it('never take over an address or a user name somebody else signs in with', async () => {
     const admin = await anActor('admin')
     await addPerson(admin, { givenName: 'Ada', familyName: 'Holm', email: 'ada@example.org', userName: '83', roles: ['admin'] })

@@ -12,6 +12,7 @@ import { drawSample } from '@/lib/tasks/draw-sample'
 import { readMarkBook } from '@/lib/tasks/read-mark-book'
 import { readSecondMarking } from '@/lib/tasks/read-second-marking'
 import { readStages } from '@/lib/tasks/read-stages'
+import { sharePaper } from '@/lib/tasks/share-paper'
 import { sampleCandidates } from '@/lib/tasks/sample-candidates'
 import { placeLeaves } from '@/tests/make/leaves'
 import { aMarking } from '@/tests/make/marking'
@@ -64,6 +65,14 @@ describe('second marking', () => {
     await expect(asked(owner.userId)).rejects.toMatchObject({ code: 'moderator_not_blind' })
     expect(await db()('samples').first()).toBeUndefined()
     expect((await readSecondMarking(teacher, paperId)).offers[0]!.moderators).toHaveLength(1)
+  })
+
+  it('keeps its moderator from becoming an owner of the paper', async () => {
+    const { teacher, paperId, classSetId } = await aMarkedSet(4)
+    const both = await anActor('teacher', 'moderator')
+    await drawSample(teacher, { classSetId, moderatorId: both.userId })
+    await expect(sharePaper(teacher, { paperId, userId: both.userId })).rejects.toMatchObject({ code: 'moderator_not_blind', detail: { moderates: true } })
+    expect(await db()('paper_owners').where({ paper_id: paperId }).pluck('user_id')).toEqual([teacher.userId])
   })
 
   it('is drawn once for a moderator, by an owner, and not before every answer has a first mark', async () => {

@@ -7,6 +7,7 @@ import { markOf } from '@/lib/core/marking'
 import { beginAgreedMarking } from '@/lib/tasks/begin-agreed-marking'
 import { openRun } from '@/lib/tasks/open-run'
 import { pressStamp } from '@/lib/tasks/press-stamp'
+import { reopenMarking } from '@/lib/tasks/reopen-marking'
 import { settleMarking } from '@/lib/tasks/settle-marking'
 import { aPaper, responseOf } from '@/tests/make/paper'
 import { anActor, closeSchool, openSchool } from '@/tests/make/school'
@@ -68,6 +69,16 @@ describe('second marking', () => {
     await db()('paper_owners').insert({ paper_id: paper.paperId, user_id: moderator.userId })
     const alsoOwner = { ...moderator, roles: [...moderator.roles, 'teacher' as const] }
     expect(JSON.stringify(await openRun(alsoOwner, { paperId: paper.paperId, questionId, round: 'first' }))).not.toContain('a first comment')
+  })
+
+  it('is not opened again or changed once it is settled, for the first marking may have been seen then', async () => {
+    await pressStamp(moderator, aStamp({ responseId, round: 'second' }))
+    await reopenMarking(moderator, { responseId, round: 'second' })
+    await settleMarking(moderator, { responseId, round: 'second' })
+    await expect(reopenMarking(moderator, { responseId, round: 'second' })).rejects.toMatchObject({ code: 'marking_settled' })
+    await expect(pressStamp(moderator, aStamp({ responseId, round: 'second', worth: 1 }))).rejects.toMatchObject({ code: 'marking_settled' })
+    const [second] = await listMarkingsOfResponse(db(), responseId, 'second')
+    expect([second!.state, markOf(second!.stamps)]).toEqual(['settled', 2])
   })
 
   it('leaves the first mark counting', async () => {

@@ -98,6 +98,7 @@ export const routeRows: readonly RouteRow[] = [
   ...marking('reopen', 'an answer of the marker', (o) => o.half.theirs, 'first', '                                            401    409   404   -      404    404   404   404'),
   ...marking('reopen', 'a second mark outside the sample', (o) => o.sampled.outside, 'second', '                              401    403   404   404    403    404   404   404'),
   ...marking('reopen', 'a second mark in the sample', (o) => o.sampled.unread, 'second', '                                    401    403   404   404    200    404   404   404'),
+  ...marking('reopen', 'a settled second mark', (o) => o.sampled.read, 'second', '                                            401    403   404   404    409    404   404   404'),
   ...marking('settle', 'an answer of the marker', (o) => o.half.theirs, 'first', '                                            401    409   404   200    404    404   404   404'),
   ...marking('settle', 'an answer of the owner alone', (o) => o.half.unmarked, 'first', '                                     401    409   404   403    404    404   404   404'),
   ...marking('settle', 'a second mark outside the sample', (o) => o.sampled.outside, 'second', '                              401    403   404   404    403    404   404   404'),

@@ -2,8 +2,7 @@ import { newId } from '@/lib/core/ids'
 import type { Db } from './knex'
 
 /** What the worker can be asked to do. The subject's own row says how far it has come. */
-export const jobKinds = ['read-sheaf', 'build-release'] as const
-export type JobKind = (typeof jobKinds)[number]
+export type JobKind = 'read-sheaf' | 'build-release'
 export type Job = Readonly<{ id: string; kind: JobKind; subjectId: string; attempts: number }>
 
 type JobRow = {

@@ -63,7 +63,6 @@ export async function addressedStudents(db: Db, classSetId: string): Promise<Set
 }
 
 export type Standing = Readonly<{ id: string; scriptId: string; revision: number; releasedAt: number; firstReadAt: number | null; contentKey: string }>
-type NewestRow = { id: string; script_id: string }
 
 /** The returned scripts that hold: of every script of released releases the highest revision. */
 const newest = (db: Db) => db('returned_scripts').join('releases', 'releases.id', 'returned_scripts.release_id').where('releases.state', 'released').whereNotNull('returned_scripts.built_at')
@@ -102,12 +101,6 @@ export async function getReturnedScript(db: Db, id: string): Promise<ReturnedScr
   if (!row) return null
   const holds = Boolean(await newest(db).where('returned_scripts.id', id).first('returned_scripts.id'))
   return { ...row, id, holds, detail: JSON.parse(row.detail) as ReturnedDetail }
-}
-
-/** The revision of a script that stands handed back now. */
-export async function findStanding(db: Db, scriptId: string): Promise<string | null> {
-  const row = (await newest(db).where('returned_scripts.script_id', scriptId).first('returned_scripts.id')) as NewestRow | undefined
-  return row?.id ?? null
 }
 
 /** All that stands handed back to a student, the newest first. */

@@ -1,8 +1,7 @@
 import { readFileSync } from 'node:fs'
 import path from 'node:path'
 
-export const classSetNames = ['everyday', 'one-page', 'bitonal', 'booklet'] as const
-export type ClassSetName = (typeof classSetNames)[number]
+export type ClassSetName = 'everyday' | 'one-page' | 'bitonal' | 'booklet'
 
 type Rect = Readonly<{ x: number; y: number; w: number; h: number }>
 /** What a class set's truth.json says of a page image; index counts from 0. */

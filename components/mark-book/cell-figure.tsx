@@ -3,7 +3,7 @@ import { MarkFigure } from '@/components/ui/mark-figure'
 import styles from './mark-book.module.css'
 
 /** The flag someone raised: drawn, with its word. */
-export function Flag() {
+function Flag() {
   return <><svg className={styles.flag} viewBox="0 0 8 10" aria-hidden><path d="M1 .5v9M1 1h6L5.4 3.2 7 5.4H1" /></svg><span className="vh">, flagged</span></>
 }
 

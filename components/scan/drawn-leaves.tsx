@@ -14,7 +14,7 @@ export function DrawnLeaves({ sheaf }: { sheaf: SheafProgress }) {
   )
 }
 
-export function firstMissing(lines: ReadonlyMap<number, LeafLine>, leafCount: number): number | null {
+function firstMissing(lines: ReadonlyMap<number, LeafLine>, leafCount: number): number | null {
   for (let number = 1; number <= leafCount; number++) if (!lines.has(number)) return number
   return null
 }

@@ -82,7 +82,7 @@ function grasp(at: At, boxes: readonly DrawnBox[], hand: Hand | null, reach: num
 }
 
 /** The handle at a place: corners and the middles of sides. */
-export function gripAt({ x, y, w, h }: PaperRect, at: At, reach: number): Grip | null {
+function gripAt({ x, y, w, h }: PaperRect, at: At, reach: number): Grip | null {
   for (const gy of [-1, 0, 1] as const) {
     for (const gx of [-1, 0, 1] as const) {
       if (gx === 0 && gy === 0) continue

@@ -1,4 +1,4 @@
-import { useId, type InputHTMLAttributes, type ReactNode, type SelectHTMLAttributes, type TextareaHTMLAttributes } from 'react'
+import { useId, type InputHTMLAttributes, type ReactNode, type SelectHTMLAttributes } from 'react'
 
 type Around = Readonly<{ label: string; say?: ReactNode; bad?: string | null; className?: string }>
 
@@ -18,15 +18,6 @@ export function Field({ label, say, bad, className, ...input }: Around & InputHT
   return (
     <Frame {...{ id, label, say, bad, className }}>
       <input id={id} aria-invalid={bad ? true : undefined} aria-describedby={bad || say ? `${id}-say` : undefined} {...input} />
-    </Frame>
-  )
-}
-
-export function AreaField({ label, say, bad, className, ...input }: Around & TextareaHTMLAttributes<HTMLTextAreaElement>) {
-  const id = useId()
-  return (
-    <Frame {...{ id, label, say, bad, className }}>
-      <textarea id={id} aria-invalid={bad ? true : undefined} aria-describedby={bad || say ? `${id}-say` : undefined} {...input} />
     </Frame>
   )
 }

@@ -7,8 +7,8 @@ import type { Stamp } from './stamp'
 import { caretAnchor, caretShape, crossAnchor, crossShape, halfShape, ringShape, tickAnchor, tickShape } from './stamp-shapes'
 
 /** The size of a ring or line pressed without being drawn out, in points. */
-export const ringSize = { w: 52, h: 30 }
-export const lineLength = 58
+const ringSize = { w: 52, h: 30 }
+const lineLength = 58
 /** From one tick of a stamp to the next, and how many are drawn before a figure says the rest. */
 const tickPitch = 13
 const mostTicks = 3

@@ -2,7 +2,7 @@ import { halves, type HalfMarks } from './marks'
 import type { GradeScale, OddHalf } from './paper'
 
 /** A total as it is compared with the boundaries: an odd half is kept, or goes up or down to the whole mark. */
-export function comparedTotal(total: HalfMarks, oddHalf: OddHalf): HalfMarks {
+function comparedTotal(total: HalfMarks, oddHalf: OddHalf): HalfMarks {
   if (oddHalf === 'kept' || total % 2 === 0) return total
   return halves(oddHalf === 'up' ? total + 1 : total - 1)
 }
@@ -12,12 +12,4 @@ export function gradeOf(scale: GradeScale, total: HalfMarks): string | null {
   const compared = comparedTotal(total, scale.oddHalf)
   const reached = scale.boundaries.filter(({ lowest }) => lowest <= compared)
   return reached.reduce<(typeof reached)[number] | null>((best, next) => (best === null || next.lowest > best.lowest ? next : best), null)?.grade ?? null
-}
-
-/** How many of the totals get each grade, in the order of the scale; `none` counts those below every boundary. */
-export function countGrades(scale: GradeScale, totals: readonly HalfMarks[]): { grades: { grade: string; lowest: HalfMarks; students: number }[]; none: number } {
-  const given = totals.map((total) => gradeOf(scale, total))
-  const grades = [...scale.boundaries].sort((a, b) => b.lowest - a.lowest)
-    .map(({ grade, lowest }) => ({ grade, lowest, students: given.filter((one) => one === grade).length }))
-  return { grades, none: given.filter((one) => one === null).length }
 }

@@ -17,7 +17,6 @@ type Row = readonly [number, number, number]
 /** Degrees clockwise that a stored image must be turned to read upright. */
 export type Turn = 0 | 90 | 180 | 270
 
-export const pointsPerInch = 72
 export const mmPerPoint = 25.4 / 72
 
 /** Where a paper point falls on the stored image, in pixels. */
@@ -52,7 +51,7 @@ export function compose(first: Homography, second: Homography): Homography {
   return [row(first[0]), row(first[1]), row(first[2])]
 }
 
-export function scaled(h: Homography, by: number): Homography {
+function scaled(h: Homography, by: number): Homography {
   const row = (r: Row): Row => [r[0] * by, r[1] * by, r[2] * by]
   return [row(h[0]), row(h[1]), row(h[2])]
 }

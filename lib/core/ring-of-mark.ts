@@ -6,7 +6,7 @@ import { markRingAroundShape, markRingShape } from './stamp-shapes'
 import { widthOf } from './text-widths'
 
 /** A mark's ring in the margin, in points; an agreed one overruns its box by 3. */
-export const markRingBox = { w: 44, h: 30 }
+const markRingBox = { w: 44, h: 30 }
 const ringLine = 1.7
 const overrun = 4
 

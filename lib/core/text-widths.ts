@@ -1,6 +1,5 @@
 /** What a run of type is for: note (serif italic 500), code and worth (sans 700), figure (sans 600). */
-export const fontRoles = ['note', 'code', 'worth', 'figure'] as const
-export type FontRole = (typeof fontRoles)[number]
+export type FontRole = 'note' | 'code' | 'worth' | 'figure'
 
 /** The face behind each role: `book` is Literata, `sans` Atkinson Hyperlegible Next. */
 export const fontOf: Readonly<Record<FontRole, Readonly<{ family: 'sans' | 'book'; weight: 500 | 600 | 700; italic: boolean }>>> = {

@@ -36,7 +36,7 @@ const place: Readonly<Record<CheckKey, string>> = {
 export function signKey(key: CheckKey, subject: string): string {
   return closings[key] === 'keep-back' ? keepBackKey(subject) : `${key}/${subject}`
 }
-export const keepBackKey = (scriptId: string): string => `keep-back/${scriptId}`
+const keepBackKey = (scriptId: string): string => `keep-back/${scriptId}`
 
 /**
  * The clerical check before a release, every item found by itself. A line is closed when what it names is mended, or when it is signed

@@ -5,8 +5,7 @@ import { join } from 'node:path'
 import { unpackWoff } from './unpack-woff'
 
 /** The faces of a returned script. */
-export const faces = ['sans', 'sans-strong', 'sans-bold', 'book', 'book-italic'] as const
-export type Face = (typeof faces)[number]
+export type Face = 'sans' | 'sans-strong' | 'sans-bold' | 'book' | 'book-italic'
 /** A font file of one face or of what stands in for it, by package path. */
 export type FontFile = string
 export type ReadFont = ReturnType<typeof fontkit.create>

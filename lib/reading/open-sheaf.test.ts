@@ -7,7 +7,6 @@ import sharp from 'sharp'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { AppError } from '@/lib/core/errors'
 import { decodePage } from './decode-page'
-import { leafPicture } from './leaf-picture'
 import { openSheaf } from './open-sheaf'
 import { openDocument } from './pdfium'
 
@@ -99,13 +98,6 @@ describe('taking pages out of a sheaf', () => {
     const bytes = await aSheaf({ pages: 3, broken: 1 })
     expect(cornerValues((await decoded(bytes, 2)).picture)).toEqual(upright)
     await expect(decoded(bytes, 1)).rejects.toMatchObject({ code: 'page_unreadable', detail: { page: 2 } })
-  })
-  it('shows a leaf turned upright and no wider than asked', async () => {
-    const bytes = await aSheaf()
-    const shown = await leafPicture((await openSheaf(bytes)).page(0), async () => bytes, 90, 280)
-    const { data, info } = await sharp(shown).toColourspace('b-w').raw().toBuffer({ resolveWithObject: true })
-    expect([info.width, info.height]).toEqual([280, 200])
-    expect(data[20 * info.width + 260]).toBeLessThan(20)
   })
 })
 

@@ -4,7 +4,7 @@ import { liftImage } from './lift-image'
 import { openDocument } from './pdfium'
 import type { SheafPage } from './sheaf-page'
 
-export const mostPages = 2000
+const mostPages = 2000
 
 /** A sheaf whose pages can be taken out one after the other. `index` counts from 0. */
 export type OpenSheaf = Readonly<{ pageCount: number; page: (index: number) => SheafPage }>

@@ -1,5 +1,4 @@
 import type { LeafProblem, PageImage } from '@/lib/core/leaf'
-import type { Affine } from './affine'
 
 /**
  * A page taken out of a sheaf but not decoded yet; plain values, so that a thread can be handed it.
@@ -11,8 +10,5 @@ export type SheafPage = Readonly<
     | { image: null; bytes: null; problem: LeafProblem | 'must_render' }
   )
 >
-/** The frame of a page that had to be drawn, with the matrix that draws it. */
-export type RenderedFrame = Readonly<{ image: PageImage; toPixels: Affine }>
-
 /** No page image may have more pixels than this: A3 at 600 dpi is 70 million. */
 export const mostPixels = 120_000_000

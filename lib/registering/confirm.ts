@@ -3,7 +3,7 @@ import type { Homography } from '@/lib/core/paper-space'
 import { patchReach, type Template } from './template'
 
 /** A patch of print counts as found from this correlation on. */
-export const foundFrom = 0.6
+const foundFrom = 0.6
 const side = 2 * patchReach + 1
 
 /**

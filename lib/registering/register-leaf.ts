@@ -25,7 +25,7 @@ const plainlyFound = 0.5
 const rivalLikeness = 0.6
 const mostTried = 4
 
-export const clearFrom = 0.5
+const clearFrom = 0.5
 
 /**
  * What one leaf shows by itself: which page of the paper it is, how it lies, whether it is empty.

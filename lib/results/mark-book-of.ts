@@ -2,9 +2,9 @@ import { gradeOf } from '@/lib/core/grade-of'
 import type { MarkBook, MarkBookCell, MarkBookQuestion, MarkBookRow } from '@/lib/core/mark-book'
 import { halves, type HalfMarks } from '@/lib/core/marks'
 import { paperMaximum, type GradeScale, type Question } from '@/lib/core/paper'
-import { facilityOf } from './item-analysis'
+import { facilityOf } from './facility-of'
 import type { Pair } from './mark-book-rows'
-import { mean } from './statistics'
+import { mean } from './mean'
 import { adjustedMark, totalOf } from './total-of'
 
 /** How one response stands, as it was read. */

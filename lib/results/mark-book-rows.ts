@@ -7,7 +7,7 @@ export type Pair = Readonly<{ student: Student | null; script: Script | null; na
 const byName = new Intl.Collator('en', { sensitivity: 'base', numeric: true })
 
 /** Students of a list by family name, given name and candidate number, the way a register is kept. */
-export function inRegisterOrder(a: Student, b: Student): number {
+function inRegisterOrder(a: Student, b: Student): number {
   return byName.compare(a.familyName, b.familyName) || byName.compare(a.givenName, b.givenName) || byName.compare(a.candidateNumber, b.candidateNumber)
 }
 

@@ -10,7 +10,7 @@ export function adjustedMark(raw: HalfMarks, adjustment: number, maximum: HalfMa
 }
 
 /** What one question gives a script in the end: full when withdrawn as full, nothing when left out, null while unmarked. */
-export function finalMark(question: Counted, mark: ResponseMark | undefined): HalfMarks | null {
+function finalMark(question: Counted, mark: ResponseMark | undefined): HalfMarks | null {
   if (question.withdrawn) return question.withdrawn.as === 'full' ? question.maximum : halves(0)
   if (!mark || mark.raw === null) return null
   return adjustedMark(mark.raw, mark.adjustment, question.maximum)

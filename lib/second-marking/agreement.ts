@@ -5,10 +5,10 @@ import type { AgreementFigures } from '@/lib/core/second-marking'
 export type MarkPair = Readonly<{ first: HalfMarks; second: HalfMarks; tolerance: HalfMarks }>
 
 /** Below this many pairs a figure carries the caution "few scripts" (a proposal of this project, no source). */
-export const fewPairs = 15
+const fewPairs = 15
 
 /** First minus second, in halves, signed. */
-export function differenceOf({ first, second }: Pick<MarkPair, 'first' | 'second'>): number {
+function differenceOf({ first, second }: Pick<MarkPair, 'first' | 'second'>): number {
   return first - second
 }
 

@@ -8,7 +8,7 @@ import { buildRelease, releaseFailed } from './build-release'
 import { readSheaf } from './read-sheaf'
 
 /** How long a job is a worker's own without a sign of life; renewed three times as often. */
-export const leaseMs = 12_000
+const leaseMs = 12_000
 const mostAttempts = 3
 /** Claimed so often without an end, a job takes its worker down with it each time. */
 const mostClaims = 8

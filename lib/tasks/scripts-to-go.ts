@@ -20,7 +20,7 @@ export function keptBackReason(gathered: GatheredSet, scriptId: string, keptBack
 }
 
 /** Scripts that a person has kept back by name. */
-export function keptBackScripts(checks: readonly Check[]): Set<string> {
+function keptBackScripts(checks: readonly Check[]): Set<string> {
   return new Set(checks.filter(({ closing }) => closing === 'keep-back').flatMap(({ lines }) => lines.filter(({ signed }) => signed !== null).map(({ subject }) => subject)))
 }
 

@@ -8,7 +8,7 @@ import { now } from '@/lib/infra/clock'
 import { hashOfToken } from '@/lib/infra/link-token'
 import { hashPassword } from '@/lib/infra/passwords'
 
-export const leastPassword = 10
+const leastPassword = 10
 export const LinkPassword = z.object({ token: z.string().min(1).max(200), password: z.string().max(400) })
 
 /** Throws password_weak under ten characters. Length alone is asked for: rules on signs make people write passwords down. */

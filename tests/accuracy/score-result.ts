@@ -1,4 +1,4 @@
-import { toPaper, toPixels, type Homography, type PaperRect } from '@/lib/core/paper-space'
+import { mmPerPoint, toPaper, toPixels, type Homography, type PaperRect } from '@/lib/core/paper-space'
 
 export type TruthPage = Readonly<{
   index: number
@@ -38,7 +38,6 @@ export type Score = Readonly<{
   mark: number
 }>
 
-const mmPerPoint = 25.4 / 72
 const expected = { script: 'script', blank: 'blank', foreign: 'loose', duplicate: 'loose' } as const
 /** A region that lands further off than this is a page put in the wrong place, in mm. */
 const far = 10

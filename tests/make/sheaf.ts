@@ -1,7 +1,7 @@
 import { copyFile } from 'node:fs/promises'
 import path from 'node:path'
 import { addJob } from '@/db/jobs'
-import { db, transaction } from '@/db/knex'
+import { transaction } from '@/db/knex'
 import { addSheaf } from '@/db/sheaves'
 import { addStoredFile } from '@/db/stored-files'
 import { env } from '@/lib/infra/env'
@@ -21,9 +21,4 @@ export async function aWaitingSheaf(paperId: string, classSetId: string, scan: s
     await addJob(trx, 'read-sheaf', sheafId)
   })
   return sheafId
-}
-
-/** The path of the open school's database file, for a process of its own. */
-export function schoolFile(): string {
-  return (db().client.config.connection as { filename: string }).filename
 }

@@ -1,5 +1,5 @@
 import type { HalfMarks } from '@/lib/core/marks'
-import { correlation, mean } from './statistics'
+import { mean } from './mean'
 
 export type Facility = Readonly<{ n: number; mean: number | null; facility: number | null }>
 
@@ -8,12 +8,4 @@ export function facilityOf(marks: readonly (HalfMarks | null)[], maximum: HalfMa
   const given = marks.filter((mark) => mark !== null)
   const middle = mean(given)
   return { n: given.length, mean: middle, facility: middle === null ? null : middle / maximum }
-}
-
-/**
- * How far a question separates stronger from weaker scripts: the correlation of its marks with the rest of the total. Only
- * whole scripts are to be handed in. Null when there is nothing to compare.
- */
-export function discriminationOf(marks: readonly HalfMarks[], totals: readonly HalfMarks[]): number | null {
-  return correlation(marks, totals.map((total, k) => total - marks[k]!))
 }

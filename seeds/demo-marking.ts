@@ -60,10 +60,12 @@ function stampsFor(question: Question, { region, areas }: TruthQuestion, mark: H
     if (worth === 0) break
     left -= worth
     const last = k === question.points.length - 1
-    const working = { x: region.x + 250 + 6 * k, y: Math.min(region.y + 46 + 18 * k, region.y + region.h - 8) }
+    // A low space has no room for working: its ticks stand before the answer, clear of the writing.
+    const low = region.h < 70
+    const working = low ? { x: answer.x - 34 - 26 * k, y: beside.y } : { x: region.x + 250 + 6 * k, y: region.y + 46 + 18 * k }
     stamps.push({ kind: worth === 1 ? 'half' : 'tick', worth, markPointId: point.id, ...(last ? beside : working) })
   }
-  if (mark < question.maximum && n % 5 === 0) stamps.push({ kind: 'note', text: comments[n % comments.length]!, x: region.x + 300, y: region.y + 30 })
+  if (mark < question.maximum && n % 5 === 0 && region.h > 90) stamps.push({ kind: 'note', text: comments[n % comments.length]!, x: region.x + 300, y: region.y + 34 })
   if (mark < question.maximum && n % 3 === 0) stamps.push({ kind: 'ring', x: answer.x + 6, y: answer.y + 1, w: 52, h: answer.h - 3 })
   return stamps
 }

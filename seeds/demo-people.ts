@@ -11,11 +11,11 @@ export const demoStaff: readonly DemoPerson[] = [
   { userName: 'h.moss', givenName: 'Helen', familyName: 'Moss', roles: ['teacher'], says: 'teacher: a paper and a class of her own' },
   { userName: 'm.osei', givenName: 'Marcus', familyName: 'Osei', roles: ['marker'], says: 'marker: marks some questions' },
   { userName: 'k.lindqvist', givenName: 'Karin', familyName: 'Lindqvist', roles: ['moderator', 'marker'], says: 'moderator: second-marks a sample' },
-  { userName: 'a.whitcombe', givenName: 'Ada', familyName: 'Whitcombe', roles: ['admin'], says: 'admin: people, classes, settings' },
+  { userName: 'a.whitcombe', givenName: 'Ada', familyName: 'Whitcombe', roles: ['admin'], says: 'admin: people, classes, mails, audit' },
 ]
 
 /** Students of the class set that is handed back; the user name is the candidate number. */
 export const demoStudents = [
   { userName: '6113', says: 'student: a returned script' },
-  { userName: '6115', says: 'student: of the same class' },
+  { userName: '6115', says: 'student: another one of the same class' },
 ] as const

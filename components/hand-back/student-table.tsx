@@ -11,7 +11,7 @@ export function StudentTable({ view: { students, maximum } }: { view: HandBackVi
   const out = students.some(({ returned }) => returned !== null)
   return (
     <section aria-label="Students" className="mb-10">
-      <h2>Students</h2>
+      <h2 className="mb-2">Students</h2>
       <div className={styles.scroll} tabIndex={0} role="region" aria-label="Students and their scripts">
         <table className={`tbl ${styles.students}`}>
           <thead><tr><th scope="col">student</th><th scope="col">total of {sayMark(maximum)}</th><th scope="col">grade</th><th scope="col">state</th>{out && <><th scope="col">read by the student</th><th scope="col">file</th></>}</tr></thead>

@@ -22,7 +22,7 @@ function ClassSetPick({ book, onClassSet }: Pick<BookHeadProps, 'book' | 'onClas
   )
 }
 
-const firstAndLast = (grades: readonly string[]) => (grades.length === 0 ? 'no scale yet' : grades.length < 2 ? grades[0] : `${grades[0]} to ${grades.at(-1)}`)
+const firstAndLast = (grades: readonly string[]) => (grades.length === 0 ? 'no scale' : grades.length < 2 ? grades[0] : `${grades[0]} to ${grades.at(-1)}`)
 
 /** Column heads: names and totals sort, a question leads to its run, the grade to the grade scale. */
 export function BookHead({ book, hand, order, runOf, onOrder, onClassSet }: BookHeadProps) {

@@ -1,8 +1,9 @@
+import Link from 'next/link'
 import { KeyCap } from '@/components/ui/key-cap'
 import styles from './mark-book.module.css'
 
-/** What the signs of the mark book mean, and its keys. */
-export function KeyLine({ csv }: { csv: string | null }) {
+/** What the signs of the mark book mean, its keys, and the way to the list of what is left to mark. */
+export function KeyLine({ csv, marking }: { csv: string | null; marking: string | null }) {
   return (
     <footer className={styles.keys}>
       <span><b aria-hidden>·</b> not marked</span>
@@ -12,6 +13,7 @@ export function KeyLine({ csv }: { csv: string | null }) {
       <span><svg viewBox="0 0 8 10" aria-hidden><path d="M1 .5v9M1 1h6L5.4 3.2 7 5.4H1" /></svg> flagged</span>
       <span><span className={styles.box} /> page missing</span>
       <span>12 + more to come</span>
+      {marking && <Link href={marking}>Go on marking</Link>}
       {csv && <a href={csv} download>Save as CSV</a>}
       <span className={styles.hint}>
         <KeyCap>←</KeyCap><KeyCap>→</KeyCap><KeyCap>↑</KeyCap><KeyCap>↓</KeyCap><span>move</span>

@@ -25,12 +25,13 @@ export function MarkBookScreen({ first }: { first: MarkBook }) {
   })
   const book = data ?? first
   const empty = book.rows.every(({ scriptId }) => scriptId === null)
+  const left = book.rows.some(({ cells }) => cells.some((cell) => cell?.state === 'unmarked'))
   return (
     <main className="relative">
       <h1 className="vh">Mark book</h1>
       {error && <Alarm code={error instanceof RefusedError ? error.code : 'failed'} />}
       <div className={styles.wrap}><MarkBookTable book={book} onClassSet={setClassSetId} /></div>
-      {empty && book.whole ? <NothingScanned book={book} /> : <KeyLine csv={book.whole ? `/api/papers/${book.paperId}/mark-book-csv${query}` : null} />}
+      {empty && book.whole ? <NothingScanned book={book} /> : <KeyLine csv={book.whole ? `/api/papers/${book.paperId}/mark-book-csv${query}` : null} marking={left ? `/papers/${book.paperId}/mark` : null} />}
     </main>
   )
 }

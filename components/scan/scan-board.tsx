@@ -69,12 +69,13 @@ function Empty({ paperId, data, ready, children }: { paperId: string; data: Scan
   return (
     <div className={style.ruled}>
       <section aria-label="The first sheaf">
-        <h1>Nothing scanned yet</h1>
+        <h1 className="mb-2">Nothing scanned yet</h1>
         {ready ? (
           <>
             <p className="mb-4 text-[length:var(--t-3)] leading-7">Put the pile through the copier as one PDF and drop it here. The paper is set: {counted(data.questions, 'question')}, {counted(students, 'student')} on the list.</p>
             {children}
             <p className="soft mt-4 text-[length:var(--t-3)] leading-7">Any order, either way up, empty backs included. A sheet that cannot be placed for sure is kept for you to place.</p>
+            {data.demoPile && <p className="mt-4 border-t border-[var(--rule)] pt-4">No copier at hand? <a href={`/api/papers/${paperId}/demo-pile`} download>Download a scanned pile of this paper</a> and drop it here.</p>}
           </>
         ) : (
           <>

@@ -13,7 +13,8 @@ type Wanted = Readonly<{ paperId: string; file: File; classSetIds: readonly stri
 export type Running = Readonly<{ goOn: () => void; stop: () => void }>
 
 const chunk = 8 * 1024 * 1024
-const pauses = [0, 1000, 2000, 4000, 8000, 15_000, 30_000]
+/** A hiccup is passed over in silence; after these the page says that the line is down, and tries again every few seconds. */
+const pauses = [0, 1000, 3000]
 
 /** The same file for the same paper is the same upload, also after a reload. */
 function fingerprint(paperId: string, file: File): string {
@@ -48,7 +49,7 @@ export function sendSheaf({ paperId, file, classSetIds, limitMb, say, arrived }:
 
   const stumble = (error: Error | DetailedError) => {
     const status = 'originalResponse' in error ? (error.originalResponse?.getStatus() ?? 0) : 0
-    if (status === 0 || status >= 500 || status === 423) return say({ step: 'waiting', name, sent })
+    if (status === 0 || status >= 500 || status === 409 || status === 423) return say({ step: 'waiting', name, sent })
     const code = status === 401 ? 'signed_out' : status === 413 ? 'file_too_large' : status === 403 ? 'not_allowed' : 'failed'
     say({ step: 'refused', name, code, detail: { limitMb } })
   }

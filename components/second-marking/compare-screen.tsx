@@ -1,7 +1,7 @@
 'use client'
 import Link from 'next/link'
 import { useRouter } from 'next/navigation'
-import { useEffect, useEffectEvent, useRef, useState, type ReactNode } from 'react'
+import { useEffect, useEffectEvent, useRef, useState, type CSSProperties, type ReactNode } from 'react'
 import { StampedPicture } from '@/components/paper/stamped-picture'
 import { Alarm } from '@/components/ui/alarm'
 import { KeyCap } from '@/components/ui/key-cap'
@@ -22,7 +22,10 @@ type CompareScreenProps = Readonly<{
   end: ReactNode
 }>
 
-/** First and second mark of one answer side by side, and the decision which of them, or an agreed one, counts. */
+/** Height over width up to which an answer is flat enough to lie over the other at full width; taller ones stand side by side. */
+const flat = 0.3
+
+/** First and second mark of one answer beside each other, and the decision which of them, or an agreed one, counts. */
 export function CompareScreen({ comparison, acts, end }: CompareScreenProps) {
   const { paperId, question, responseId, first, second, agreed, pictures, tolerance, within, decided, figures, before, after } = comparison
   const router = useRouter()
@@ -65,13 +68,14 @@ export function CompareScreen({ comparison, acts, end }: CompareScreenProps) {
   }, [])
 
   const caution = sayCaution(figures)
+  const shape = pictures.reduce((sum, { rect: { w, h } }) => sum + h / w, 0)
   return (
-    <div className={styles.compare}>
+    <div className={`${styles.compare} ${shape > 0 && shape <= flat ? styles.stacked : ''}`} style={{ '--shape': shape } as CSSProperties}>
       <TopBar where={[{ label: comparison.className }, { label: comparison.paperTitle }, { label: 'second marks', href: list }, { label: question.label }]}><span>Script {comparison.scriptNumber}</span>{end}</TopBar>
       <main className={styles.page}>
       <div className={styles.head}>
         <div className={styles.label}>{question.label}</div>
-        <h1 className={styles.ask}>{question.text || 'First and second mark side by side'}</h1>
+        <h1 className={styles.ask}>{question.text || 'First and second mark'}</h1>
         <div className={styles.of}>{sayMark(question.maximum)} {question.maximum <= 2 ? 'mark' : 'marks'}</div>
       </div>
       <div className={styles.two}>

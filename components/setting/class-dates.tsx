@@ -10,7 +10,7 @@ export function ClassDates({ classes, sets, onChange, today }: ClassDatesProps) 
   const put = (k: number, change: Partial<ClassDate>) => onChange(rows.map((row, j) => (j === k ? { ...row, ...change } : row)))
   return (
     <fieldset className="grid gap-2">
-      <legend className="mb-1"><h2>Who sits it</h2></legend>
+      <legend className="mb-3"><h2>Who sits it</h2></legend>
       {classes.length === 0 && <p className="soft">You have no class yet. Make one under Classes; the paper can be set meanwhile.</p>}
       {classes.length > 0 && rows.map((row, k) => (
         <div key={k} className="flex flex-wrap items-end gap-4">

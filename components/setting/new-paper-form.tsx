@@ -40,11 +40,11 @@ export function NewPaperForm({ classes, today }: NewPaperFormProps) {
     setBusy(false)
   }
   return (
-    <form onSubmit={(event) => void submit(event)} className="mt-6 grid max-w-[40rem] gap-6">
+    <form onSubmit={(event) => void submit(event)} className="mt-6 grid max-w-[40rem] gap-8">
       <Field label="Title" value={title} onChange={(event) => setTitle(event.target.value)} maxLength={200} required={!paper} say={paper ? 'Left empty, it is the title in the paper.json.' : 'As it is printed at the head of the test.'} />
       <ClassDates classes={classes} sets={sets} onChange={setSets} today={today} />
       <fieldset className="grid gap-4">
-        <legend className="mb-1"><h2>The blank paper</h2></legend>
+        <legend className="mb-3"><h2>The blank paper</h2></legend>
         <Field label="PDF of the test as it is printed" type="file" accept="application/pdf,.pdf" onChange={(event) => setBlank(event.target.files?.[0] ?? null)} say="Up to 40 pages, A4, Letter or A3. It may follow later." />
         <Field label="paper.json, if the paper was set before" type="file" accept="application/json,.json" onChange={(event) => void choosePaper(event)} say="Brings answer spaces and mark scheme with it." />
       </fieldset>

@@ -27,6 +27,8 @@ export type ScanPageData = Readonly<{
   limitMb: number
   classSets: readonly SittingClassChoice[]
   sheaves: readonly SheafProgress[]
+  /** Whether the demo school has a scanned pile of this paper to try with; false as soon as there is a sheaf. */
+  demoPile: boolean
 }>
 
 const lately = 24

@@ -8,6 +8,7 @@ import { getPaper } from '@/db/papers'
 import { listScriptPages } from '@/db/scripts'
 import { listSheaves, type Sheaf } from '@/db/sheaves'
 import { env } from '@/lib/infra/env'
+import { findDemoPile } from './find-demo-pile'
 import { gatePaper } from './gate-paper'
 
 /** The sheaves of a paper and how far each has come, leaf by leaf, for the scan page to look at again and again. */
@@ -23,6 +24,7 @@ export async function readSheaves(actor: Actor, paperId: string): Promise<ScanPa
     limitMb: env.SHEAFMARK_UPLOAD_LIMIT_MB,
     classSets: await listSittingClasses(db(), paperId),
     sheaves: sheaves.map((sheaf) => progressOf(sheaf, leaves.filter((leaf) => leaf.sheafId === sheaf.id), scriptOf)),
+    demoPile: sheaves.length === 0 && (await findDemoPile(db(), paperId)) !== null,
   }
 }
 

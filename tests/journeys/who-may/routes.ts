@@ -65,6 +65,7 @@ export const routeRows: readonly RouteRow[] = [
   route('GET /api/returned/[returnedScriptId]/pdf', 'no file', () => `/api/returned/${nothing}/pdf`, '                         401   404   404   404    404    404   404   404'),
 
   // Setting and scanning.
+  ...onPapers('GET', 'demo-pile', () => ({}), '200'),
   change('POST /api/papers', 'a paper without a title', () => '/api/papers', () => ({ multipart: { form: JSON.stringify({ id: nothing, title: '', step: 1, classSets: [] }) } }), ' 401 400 400 403 403 403 403 403'),
   ...onPapers('POST', 'blank', json(() => 'not a PDF'), 'file_not_pdf'),
   ...onPapers('POST', 'paper-file?version=1', json(() => ({})), 'paper_invalid'),

@@ -145,7 +145,7 @@ export function turnBack(state: DeskState, way: 'undo' | 'redo'): Stepped {
   const change = from.at(-1)
   const strip = state.strips.find((candidate) => candidate.responseId === change?.responseId)
   if (!change || !strip) return said(state, { words: way === 'undo' ? 'nothing-to-undo' : 'nothing-to-redo' })
-  if (standsForGood(state, strip)) return said(state, standing)
+  if (standsForGood(state, strip)) return said({ ...state, hand: state.strips.indexOf(strip), selected: null, pointer: null }, standing)
   const now = strip.marking?.stamps ?? []
   const stamps = change.stamps.map(({ before, after }) => {
     const current = now.find((stamp) => stamp.id === after.id) ?? after

@@ -119,7 +119,7 @@ describe('a settled second marking', () => {
     expect(state.says).toEqual({ code: 'marking_settled', detail: { round: 'second' } })
     expect(mark(state)).toBe(2)
     expect(saves.map((save) => save.kind)).toEqual(['stamp', 'settle'])
-    expect(play(second, give('a'), { type: 'settle' }, { type: 'undo' }).state.says).toMatchObject({ code: 'marking_settled' })
+    expect(play(second, give('a'), { type: 'settle' }, { type: 'undo' }).state).toMatchObject({ hand: 0, says: { code: 'marking_settled' } })
     expect(mark(play(second, give('a'), { type: 'undo' }).state), 'before it is settled').toBe(0)
   })
 })

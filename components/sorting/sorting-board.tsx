@@ -1,22 +1,25 @@
 'use client'
 import { Check } from 'lucide-react'
-import Link from 'next/link'
 import { useReducer, useState, type ReactNode } from 'react'
 import { KeyCap } from '@/components/ui/key-cap'
 import { TopBar } from '@/components/ui/top-bar'
 import type { SortScript, SortingTable } from '@/lib/core/sorting'
 import type { SortingAct } from '@/lib/core/sorting-act'
-import { AllScripts, KeptLeaves, WithoutScript } from './below-the-names'
+import { AllScripts } from './all-scripts'
 import { ChooseStudent, choicesOf, type Choice } from './choose-student'
+import { Finished } from './finished'
+import { KeptLeaves } from './kept-leaves'
+import { LooseSide } from './loose-side'
 import { NamesToConfirm, suggestedFor } from './names-to-confirm'
-import { ClearTable, LooseSide, PlacedSide, turned } from './sheet-side'
-import { looseOrder, nameLeaf, nextView, openNames, pageInHand, startView, zooms } from './sorting-view'
-import { fullName, leftToSort, sayAct } from './sorting-words'
+import { PlacedSide } from './placed-side'
+import { looseOrder, nameLeaf, nextView, openNames, pageInHand, startView, turned, zooms } from './sorting-view'
+import { leftToSort, sayAct } from './sorting-words'
 import { Trouble } from './trouble'
 import { useKeys, useSingleKeys } from './use-keys'
 import { useSorting } from './use-sorting'
 import { WhatIsKnown } from './what-is-known'
 import { WhereItBelongs } from './where-it-belongs'
+import { WithoutScript } from './without-script'
 import style from './sorting.module.css'
 
 const atTime = (at: number) => new Date(at).toTimeString().slice(0, 8)
@@ -130,20 +133,5 @@ export function SortingBoard({ start, person }: { start: SortingTable; person: R
           choices={choicesOf(table, typeof view.asking === 'object')} onChosen={chosen} onClose={() => send({ type: 'ask', for: 'nothing' })} />
       )}
     </>
-  )
-}
-
-/** Nothing is loose and every name is given: where to go next. */
-function Finished({ table }: { table: SortingTable }) {
-  const away = table.students.filter(({ scriptId, attendance }) => scriptId === null && attendance === 'expected')
-  if (table.scripts.length === 0) {
-    return <ClearTable><h1>Nothing to sort yet</h1><p className="my-4">{table.reading > 0 ? 'A sheaf is being read. What is not certain will lie here.' : 'Sheets come here from the sheaf: scan the pile first.'}</p><Link className="btn lead" href={`/papers/${table.paperId}/scan`}>To the scan</Link></ClearTable>
-  }
-  return (
-    <ClearTable>
-      <h1>All sorted</h1>
-      <p className="my-4">{table.scripts.length} scripts, every one with a name.{away.length > 0 ? ` ${away.length === 1 ? `${fullName(away[0]!)} has` : `${away.length} students have`} no script: absent, or a sheet is missing.` : ''}</p>
-      <Link className="btn lead" href={`/papers/${table.paperId}`}>To the mark book</Link>
-    </ClearTable>
   )
 }

@@ -1,3 +1,4 @@
+import type { Turn } from '@/lib/core/paper-space'
 import type { LooseLeaf, SortScript, SortingTable } from '@/lib/core/sorting'
 
 /** What a person has in hand, and how they look at it: nothing here is stored. */
@@ -55,3 +56,6 @@ export function nameLeaf(script: SortScript, namePage: number | null): { leafId:
   const any = boxed ?? script.pages.find(({ leafId }) => leafId !== null)
   return any?.leafId ? { leafId: any.leafId, hasBox: boxed !== undefined } : null
 }
+
+/** A turn, a quarter further or back. */
+export const turned = (turn: Turn, by: 90 | -90): Turn => ((turn + by + 360) % 360) as Turn

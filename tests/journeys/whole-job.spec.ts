@@ -206,7 +206,7 @@ async function secondMark(page: Page, paperId: string, questions: readonly { id:
   }
 }
 
-/** Decides every answer outside the tolerance by key, the first of them by an agreed choice of the second mark. */
+/** Decides every answer outside the tolerance: the first by an agreed mark, settled at the desk as it was copied; the next two by either mark. */
 async function agree(page: Page, paperId: string): Promise<void> {
   await page.goto(`${school}/papers/${paperId}/second-mark`)
   await expectAccessible(page)
@@ -216,13 +216,23 @@ async function agree(page: Page, paperId: string): Promise<void> {
   for (const [k, href] of links.entries()) {
     await page.goto(href)
     if (k === 0) await expectAccessible(page)
+    if (k === 0) await settleAgreed(page, href)
     await page.getByLabel('Reason').selectOption({ index: 1 })
-    await page.keyboard.press('Tab')
-    await page.getByRole('button', { name: k === 0 ? /^Second mark stands/ : /^First mark stands/ }).click()
+    await page.getByRole('button', { name: k === 0 ? /^Agree \d|^Agree ½/ : k === 1 ? /^Second mark stands/ : /^First mark stands/ }).click()
     await expect(page.getByText(/^Decided: /)).toBeVisible()
   }
   await page.goto(`${school}/papers/${paperId}/second-mark`)
   await page.getByRole('button', { name: /^Close the second/ }).click()
+}
+
+async function settleAgreed(page: Page, back: string): Promise<void> {
+  await page.getByLabel('Reason').selectOption({ index: 1 })
+  await page.getByRole('button', { name: 'Agree another mark' }).click()
+  await page.waitForURL(/round=agreed/)
+  await expect(page.getByText('not settled')).toBeVisible()
+  await page.keyboard.press('Enter')
+  await expect(page.getByText('not settled')).toBeHidden()
+  await page.goto(back)
 }
 
 async function setGrades(page: Page, paperId: string): Promise<void> {

@@ -19,7 +19,8 @@ export function FootLine({ state }: { state: DeskState }) {
           {saySays(says)}{' '}
           {run.round === 'first' && run.next && <Link href={`/papers/${run.paperId}/mark/${run.next.id}`} className="btn lead">Go on with {run.next.label}</Link>}
           {run.round === 'first' && <Link href={`/papers/${run.paperId}`} className="btn">To the mark book</Link>}
-          {run.round !== 'first' && <Link href={`/papers/${run.paperId}/second-mark`} className="btn lead">Back to the sample</Link>}
+          {run.round === 'agreed' && strip && <Link href={`/papers/${run.paperId}/second-mark/${strip.responseId}`} className="btn lead">Back to the two marks</Link>}
+          {run.round === 'second' && <Link href={`/papers/${run.paperId}/second-mark`} className="btn lead">Back to the sample</Link>}
         </p>
       )}
     </>

@@ -216,7 +216,7 @@ async function agree(page: Page, paperId: string): Promise<void> {
   for (const [k, href] of links.entries()) {
     await page.goto(href)
     if (k === 0) await expectAccessible(page)
-    if (k === 0) await settleAgreed(page, href)
+    if (k === 0) await settleAgreed(page)
     await page.getByLabel('Reason').selectOption({ index: 1 })
     await page.getByRole('button', { name: k === 0 ? /^Agree \d|^Agree ½/ : k === 1 ? /^Second mark stands/ : /^First mark stands/ }).click()
     await expect(page.getByText(/^Decided: /)).toBeVisible()
@@ -225,14 +225,14 @@ async function agree(page: Page, paperId: string): Promise<void> {
   await page.getByRole('button', { name: /^Close the second/ }).click()
 }
 
-async function settleAgreed(page: Page, back: string): Promise<void> {
+async function settleAgreed(page: Page): Promise<void> {
   await page.getByLabel('Reason').selectOption({ index: 1 })
   await page.getByRole('button', { name: 'Agree another mark' }).click()
   await page.waitForURL(/round=agreed/)
   await expect(page.getByText('not settled')).toBeVisible()
   await page.keyboard.press('Enter')
-  await expect(page.getByText('not settled')).toBeHidden()
-  await page.goto(back)
+  await page.getByRole('link', { name: 'Back to the two marks' }).click()
+  await expect(page.getByRole('button', { name: /^Agree/ })).toBeVisible()
 }
 
 async function setGrades(page: Page, paperId: string): Promise<void> {

@@ -4,7 +4,7 @@ import { ObjectCopier } from './object-copier'
 import { addReturnedPage, type ScriptPage } from './returned-page'
 import { Structure } from './structure'
 import type { Summary } from './summary'
-import { addSummary } from './summary-page'
+import { addSummary } from './add-summary'
 import { Typesetter } from './typesetter'
 
 /** One student's script to hand back. `builtAt` is written into the file, so that the same script built again is the same file. */

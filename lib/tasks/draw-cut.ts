@@ -2,7 +2,7 @@ import sharp from 'sharp'
 import { AppError } from '@/lib/core/errors'
 import { cutBox, pixelsPerPoint, pixelsUnder } from '@/lib/cutting/cut-box'
 import { cutKey, type Cut } from '@/lib/cutting/cut-key'
-import { keptPicture } from '@/lib/infra/cut-store'
+import { keptPicture } from '@/lib/infra/kept-picture'
 import type { Db } from '@/db/knex'
 import { leafImage } from './leaf-image'
 

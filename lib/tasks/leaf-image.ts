@@ -1,6 +1,6 @@
 import sharp from 'sharp'
 import { AppError } from '@/lib/core/errors'
-import { keptPicture } from '@/lib/infra/cut-store'
+import { keptPicture } from '@/lib/infra/kept-picture'
 import { readKept } from '@/lib/infra/file-store'
 import { drawStoredPage, sharpOf } from '@/lib/reading/decode-page'
 import { openSheaf, type OpenSheaf } from '@/lib/reading/open-sheaf'

@@ -1,7 +1,7 @@
 import type { Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
 import { paperMaximum, type GradeScale } from '@/lib/core/paper'
-import { assertScale } from '@/lib/results/check-scale'
+import { assertScale } from '@/lib/results/assert-scale'
 import { addAuditLine } from '@/db/audit'
 import { transaction } from '@/db/knex'
 import { getScale } from '@/db/grade-scales'

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { halves } from '@/lib/core/marks'
-import { assertScale } from './check-scale'
+import { assertScale } from './assert-scale'
 
 const scale = (...boundaries: [string, number][]) => ({ oddHalf: 'kept' as const, boundaries: boundaries.map(([grade, lowest]) => ({ grade, lowest: halves(lowest) })) })
 

@@ -4,9 +4,9 @@ import { ringOfMark } from '@/lib/core/ring-of-mark'
 import { ink, sheetSize, type Sheet, type Style } from './sheet'
 import type { Structure } from './structure'
 import type { Summary } from './summary'
-import { drawColumns } from './summary-columns'
+import { drawColumns } from './draw-columns'
 import { SummarySheets, frame, leading, small, soft } from './summary-sheets'
-import { drawTable } from './summary-table'
+import { drawTable } from './draw-table'
 import type { Typesetter } from './typesetter'
 
 /** Draws the summary and returns how many sheets it took. `following` is how many pages of the script come after it. */

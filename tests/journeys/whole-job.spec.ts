@@ -229,7 +229,7 @@ async function settleAgreed(page: Page): Promise<void> {
   await page.getByLabel('Reason').selectOption({ index: 1 })
   await page.getByRole('button', { name: 'Agree another mark' }).click()
   await page.waitForURL(/round=agreed/)
-  await expect(page.getByText('not settled')).toBeVisible()
+  await expect(page.getByText('not settled', { exact: true })).toBeVisible()
   await page.keyboard.press('Enter')
   await page.getByRole('link', { name: 'Back to the two marks' }).click()
   await expect(page.getByRole('button', { name: /^Agree/ })).toBeVisible()

@@ -53,7 +53,7 @@ function Next({ sheaf, paperId, first, onAgain }: SheafSectionProps) {
   const loose = sheaf.leaves.filter(({ look }) => look === 'loose' || look === 'unreadable').length
   return (
     <div className={style.row}>
-      <Link className={`btn ${first ? 'lead' : ''}`} href={`/papers/${paperId}/sort`}>{loose > 0 ? `Sort ${counted(loose, 'loose sheet')} and the names` : 'Confirm the names'}</Link>
+      <Link className={`btn ${first ? 'lead' : ''}`} href={`/papers/${paperId}/sort`}>{loose > 0 ? `Sort ${counted(loose, 'loose sheet')} and the names` : 'To the sorting table'}</Link>
     </div>
   )
 }

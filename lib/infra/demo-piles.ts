@@ -15,7 +15,7 @@ export async function demoPileOf(blankSha256: string): Promise<string | null> {
 async function listPiles(): Promise<ReadonlyMap<string, string>> {
   const sets = await readdir(folder()).catch(() => [])
   return new Map(await Promise.all(sets.map(async (set) => {
-    const blank = await readFile(path.join(folder(), set, 'paper.pdf'))
-    return [createHash('sha256').update(blank).digest('hex'), path.join(folder(), set, 'scan.pdf')] as const
+    const blank = await readFile(path.join(/* turbopackIgnore: true */ folder(), set, 'paper.pdf'))
+    return [createHash('sha256').update(blank).digest('hex'), path.join(/* turbopackIgnore: true */ folder(), set, 'scan.pdf')] as const
   })))
 }

@@ -48,15 +48,7 @@ export async function findUserByAccount(db: Db, account: string): Promise<User |
   return withRoles(db, await db<UserRow>('users').where({ email: typed }).orWhere({ user_name: typed }).first())
 }
 
-export type NewUser = Readonly<{
-  id: string
-  email: string | null
-  userName: string | null
-  givenName: string
-  familyName: string
-  passwordHash: string | null
-  roles: readonly Role[]
-}>
+export type NewUser = Omit<User, 'sessionNumber' | 'disabledAt'>
 
 export async function addUser(db: Db, user: NewUser): Promise<void> {
   await db<UserRow>('users').insert({

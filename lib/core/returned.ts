@@ -29,15 +29,8 @@ export type ReturnedQuestion = Readonly<{
 /** A page of the script, its shape upright (width over height), and all on it in words. */
 export type ReturnedPage = Readonly<{ shape: number; words: string }>
 
-/** What was handed back, frozen with the release: the student's page shows this and works nothing out. */
-export type ReturnedDetail = Readonly<{
-  format: 1
-  title: string
-  className: string
-  satOn: string
-  givenName: string
-  familyName: string
-  candidateNumber: string
+/** What a script came to: the sum of its ticks, what was adjusted beside them, and the grade with how it came about. */
+export type ScriptScore = Readonly<{
   total: HalfMarks
   ticks: HalfMarks
   adjustments: readonly AdjustmentLine[]
@@ -46,6 +39,17 @@ export type ReturnedDetail = Readonly<{
   grade: string | null
   gradeSays: string
   pen: Pen
+}>
+
+/** What was handed back, frozen with the release: the student's page shows this and works nothing out. */
+export type ReturnedDetail = ScriptScore & Readonly<{
+  format: 1
+  title: string
+  className: string
+  satOn: string
+  givenName: string
+  familyName: string
+  candidateNumber: string
   questions: readonly ReturnedQuestion[]
   pages: readonly ReturnedPage[]
   next: readonly string[]

@@ -1,6 +1,5 @@
 import type { HalfMarks } from '@/lib/core/marks'
-import type { AdjustmentLine, PointResult } from '@/lib/core/returned'
-import type { Pen } from '@/lib/core/stamp'
+import type { PointResult, ScriptScore } from '@/lib/core/returned'
 
 /** One question's line. `mark` is null while it is not to be shown as a figure (withdrawn); `remark` says "nothing written" and the like. */
 export type QuestionResult = Readonly<{
@@ -16,7 +15,7 @@ export type QuestionResult = Readonly<{
  * All that the summary page says; it works nothing out. `total` is the final one, adjustments counted. Sentences (`about`, `gradeSays`,
  * `asking`) come ready, dates in words.
  */
-export type Summary = Readonly<{
+export type Summary = ScriptScore & Readonly<{
   title: string
   /** "Kestrel Bay School, class 8K, spring test" */
   where: string
@@ -24,14 +23,6 @@ export type Summary = Readonly<{
   candidateNumber: string
   /** "handed back 18 March, marked by R. Adeyemi, sample second-marked" */
   about: string
-  total: HalfMarks
-  ticks: HalfMarks
-  adjustments: readonly AdjustmentLine[]
-  maximum: HalfMarks
-  percent: number | null
-  grade: string | null
-  gradeSays: string
-  pen: Pen
   questions: readonly QuestionResult[]
   next: readonly string[]
   /** Model solutions by question, where they are handed back. */

@@ -56,15 +56,15 @@ export async function addLeafReading(db: Db, sheafId: string, reading: LeafReadi
   }).onConflict().ignore()
 }
 
-/** The positions of a sheaf that were read already. */
-export async function listReadPositions(db: Db, sheafId: string): Promise<number[]> {
-  return (await db<LeafRow>('leaves').where({ sheaf_id: sheafId }).orderBy('position').pluck('position')) as number[]
-}
-
 /** The leaves of a sheaf in order, each with what the engine saw. */
 export async function listLeavesWithEvidence(db: Db, sheafId: string): Promise<{ leaf: Leaf; evidence: LeafEvidence }[]> {
   const rows = await db<LeafRow>('leaves').where({ sheaf_id: sheafId }).orderBy(['position', 'half'])
   return rows.map((row) => ({ leaf: toLeaf(row), evidence: toEvidence(row) }))
+}
+
+/** The leaves of a sheaf in order, without the engine's findings. */
+export async function listLeavesOfSheaf(db: Db, sheafId: string): Promise<Leaf[]> {
+  return ((await db('leaves').where({ sheaf_id: sheafId }).orderBy(['position', 'half']).select(light)) as LeafRow[]).map(toLeaf)
 }
 
 /** Every leaf of a paper in order of sheaf and position, without the engine's findings. */

@@ -3,8 +3,9 @@ import { costs, otherOrderCost, scriptCost, tangleCost, type Seen } from './scri
 /** Neighbouring leaves (positions of the sequence) taken together. `margin` is by how much every explanation that parts or joins them otherwise is dearer. */
 export type Block = Readonly<{ kind: 'script' | 'tangle' | 'stray'; leaves: readonly number[]; disordered: boolean; margin: number }>
 
-type Option = Readonly<{ kind: Block['kind']; from: number; to: number; cost: number; key: string }>
-type Direction = Readonly<{ forth: Float64Array; back: Float64Array; total: number; options: readonly Option[]; into: readonly (readonly Option[])[] }>
+export type Option = Readonly<{ kind: Block['kind']; from: number; to: number; cost: number; key: string }>
+/** The search in one direction: `forth` and `back` hold the cheapest cost up to and from each position, `into` the options that end there. */
+export type Direction = Readonly<{ forth: Float64Array; back: Float64Array; total: number; options: readonly Option[]; into: readonly (readonly Option[])[] }>
 
 /** What it costs to hold two leaves (positions) for one student's, by how they were written; below 0 where it speaks for it. */
 export type Together = (one: number, other: number) => number
@@ -25,9 +26,17 @@ export function explainSequence(sequence: readonly Seen[], pages: number, togeth
   return explain(sequence, pages, otherOrderCost(swapped.length, whole.length), together)
 }
 
+/** The search forwards, and as if the whole sheaf were scanned backwards. */
+export function searchBothWays(sequence: readonly Seen[], pages: number, otherOrder: number, together: Together): readonly [Direction, Direction] {
+  const turned = sequence.map((page) => (page === null ? null : pages + 1 - page))
+  return [search(sequence, pages, 0, otherOrder, together), search(turned, pages, backwardsCost, otherOrder, together)]
+}
+
+/** The most neighbouring leaves that one option holds. */
+export const longestRun = (pages: number): number => 2 * pages + 2
+
 function explain(sequence: readonly Seen[], pages: number, otherOrder: number, together: Together): Block[] {
-  const forwards = search(sequence, pages, 0, otherOrder, together)
-  const backwards = search(sequence.map((page) => (page === null ? null : pages + 1 - page)), pages, backwardsCost, otherOrder, together)
+  const [forwards, backwards] = searchBothWays(sequence, pages, otherOrder, together)
   const best = forwards.total <= backwards.total ? forwards : backwards
   return path(best).map((option) => ({
     kind: option.kind,
@@ -40,7 +49,7 @@ function explain(sequence: readonly Seen[], pages: number, otherOrder: number, t
 function search(sequence: readonly Seen[], pages: number, start: number, otherOrder: number, together: Together): Direction {
   const n = sequence.length
   const options: Option[] = []
-  for (let from = 0; from < n; from++) for (let to = from + 1; to <= Math.min(n, from + 2 * pages + 2); to++) options.push(...optionsFor(sequence, from, to, pages, otherOrder, together))
+  for (let from = 0; from < n; from++) for (let to = from + 1; to <= Math.min(n, from + longestRun(pages)); to++) options.push(...optionsFor(sequence, from, to, pages, otherOrder, together))
   const out = Array.from({ length: n + 1 }, (): Option[] => [])
   const into = Array.from({ length: n + 1 }, (): Option[] => [])
   for (const option of options) {

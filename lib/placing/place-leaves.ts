@@ -1,7 +1,8 @@
 import type { LeafFinding, LeafReading, LeafReason } from '@/lib/core/leaf'
-import { explainSequence, type Block } from './explain-sequence'
+import { explainSequence, type Block, type Together } from './explain-sequence'
 import { penCost } from './pen-cost'
 import { inkOf, sameness, type Sameness } from './same-ink'
+import { settledBlocks } from './settled-blocks'
 
 /** An explanation must be this much likelier than any other before leaves are put together by it: about 80 to 1. */
 const certain = 4.4
@@ -19,6 +20,21 @@ type Verdict = Readonly<{ kind: LeafFinding['kind']; script: number | null; reas
  * @param pages how many pages the blank paper has
  */
 export function placeLeaves(readings: readonly LeafReading[], pages: number): LeafFinding[] {
+  const { leaves, sequence, verdicts, compare, together } = lineUp(readings)
+  let script = 0
+  for (const block of explainSequence(sequence.map((leaf) => leaf.page), pages, together)) {
+    const members = block.leaves.map((at) => sequence[at]!)
+    const verdict = judge(block, members, sequence, pages, compare)
+    if (verdict.kind === 'script') script++
+    for (const leaf of members) verdicts.set(leaf.position, leaf.page === null ? plain('loose', whyUnclear(leaf)) : { ...verdict, script: verdict.kind === 'script' ? script : null })
+  }
+  return leaves.map((leaf) => finding(leaf, verdicts.get(leaf.position)!))
+}
+
+/** What the leaves of a sheaf show, so far as one decision over all of them needs it. */
+type LineUp = Readonly<{ leaves: readonly Leaf[]; sequence: readonly Leaf[]; verdicts: Map<number, Verdict>; compare: (a: Leaf, b: Leaf) => Sameness; together: Together }>
+
+function lineUp(readings: readonly LeafReading[]): LineUp {
   const leaves = readings.map((reading, position): Leaf => ({ ...reading, position, page: reading.clear ? reading.guesses[0]!.paperPage : null }))
   const inks = leaves.map((leaf) => inkOf(leaf.ink))
   const verdicts = new Map<number, Verdict>()
@@ -28,15 +44,30 @@ export function placeLeaves(readings: readonly LeafReading[], pages: number): Le
     else if (isSecondScan(leaf, sequence, inks)) verdicts.set(leaf.position, plain('loose', ['duplicate_page']))
     else sequence.push(leaf)
   }
-  const compare = (a: Leaf, b: Leaf): Sameness => sameness(inks[a.position]!, inks[b.position]!)
+  return { leaves, sequence, verdicts, compare: (a, b) => sameness(inks[a.position]!, inks[b.position]!), together: (a, b) => penCost(sequence[a]!.pen, sequence[b]!.pen) }
+}
+
+/** Beyond `certain`, for what was measured in steps. */
+const slack = 0.5
+
+/**
+ * Whole scripts at the start of a sheaf that is still being read which placeLeaves will find just so, whatever the leaves to come show.
+ * @param readings the first leaves of the sheaf without a gap, in scan order
+ * @param from leaves before this one were found certain earlier and are not looked at again
+ */
+export function placeFirstLeaves(readings: readonly LeafReading[], pages: number, from = 0): LeafFinding[] {
+  const { sequence, compare, together } = lineUp(readings)
+  const looked = sequence.findIndex(({ position }) => position >= from)
+  const found: LeafFinding[] = []
   let script = 0
-  for (const block of explainSequence(sequence.map((leaf) => leaf.page), pages, (a, b) => penCost(sequence[a]!.pen, sequence[b]!.pen))) {
+  for (const block of settledBlocks(sequence.map((leaf) => leaf.page), pages, certain + slack, together, looked === -1 ? sequence.length : looked)) {
     const members = block.leaves.map((at) => sequence[at]!)
-    const together = judge(block, members, sequence, pages, compare)
-    if (together.kind === 'script') script++
-    for (const leaf of members) verdicts.set(leaf.position, leaf.page === null ? plain('loose', whyUnclear(leaf)) : { ...together, script: together.kind === 'script' ? script : null })
+    const verdict = judge(block, members, sequence, pages, compare)
+    if (verdict.kind !== 'script') continue
+    script++
+    for (const leaf of members) if (leaf.page !== null) found.push(finding(leaf, { ...verdict, script }))
   }
-  return leaves.map((leaf) => finding(leaf, verdicts.get(leaf.position)!))
+  return found
 }
 
 function isSecondScan(leaf: Leaf, before: readonly Leaf[], inks: readonly (Float32Array | null)[]): boolean {

@@ -10,6 +10,9 @@ export function otherOrderCost(swapped: number, whole: number): number {
   return whole >= 8 ? costs.neverSwapped : costs.otherOrder
 }
 
+/** What otherOrderCost may come to, from end to end in small steps. */
+export const possibleOrderCosts: readonly number[] = [2.5, 3, 3.5, costs.otherOrder, costs.neverSwapped]
+
 /** A leaf of the sequence: the page it certainly is, or null for one that could not be told. */
 export type Seen = number | null
 

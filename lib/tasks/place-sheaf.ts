@@ -1,40 +1,61 @@
 import { newId } from '@/lib/core/ids'
-import type { LeafFinding } from '@/lib/core/leaf'
+import type { LeafFinding, LeafReading } from '@/lib/core/leaf'
 import { addAuditLine } from '@/db/audit'
 import type { Db } from '@/db/knex'
-import { listLeavesWithEvidence, moveLeaf, type Leaf, type LeafEvidence } from '@/db/leaves'
+import { listLeavesOfSheaf, listLeavesWithEvidence, moveLeaf, type Leaf } from '@/db/leaves'
 import { addScript, addScriptPage, nextScriptPosition } from '@/db/scripts'
 import { ensureResponses } from '@/db/responses'
 import { endSheaf, listSheafClassSets, type Sheaf } from '@/db/sheaves'
 import { placeLeaves } from '@/lib/placing/place-leaves'
 import { renewSuggestions } from './renew-suggestions'
 
+type Found = Readonly<{ leaf: Leaf; reading: LeafReading; finding: LeafFinding }>
+
 /**
  * Puts the leaves of a sheaf that is read into scripts, all in the caller's transaction. What is not certain becomes a loose
- * sheet, an empty page stays as a blank one; names are suggested, never given.
+ * sheet, an empty page stays as a blank one; names are suggested, never given. What was placed while the sheaf was still being
+ * read, and what a person decided since, stays as it is.
  */
 export async function placeSheaf(trx: Db, sheaf: Sheaf, pages: number): Promise<void> {
   const leaves = await listLeavesWithEvidence(trx, sheaf.id)
   const findings = placeLeaves(leaves.map(({ evidence }) => evidence.reading), pages)
+  await putFound(trx, sheaf, leaves.map(({ leaf, evidence }, k) => ({ leaf, reading: evidence.reading, finding: findings[k]! })))
+  await endSheaf(trx, sheaf.id, { state: 'placed' })
+  const count = (kind: LeafFinding['kind']) => findings.filter((finding) => finding.kind === kind).length
+  const scripts = new Set(findings.flatMap(({ script }) => script ?? [])).size
+  const to = `scripts ${scripts}, placed ${count('script')}, loose ${count('loose')}, blank ${count('blank')}`
+  await addAuditLine(trx, null, { act: 'sheaf.placed', objectKind: 'sheaf', objectId: sheaf.id, paperId: sheaf.paperId, to })
+}
+
+/** Puts whole scripts at the start of a sheaf in place while the rest is being read, so that they can be marked. Put in place twice it is done once. */
+export async function placeFirst(trx: Db, sheaf: Sheaf, readings: readonly LeafReading[], findings: readonly LeafFinding[]): Promise<void> {
+  const leaves = await listLeavesOfSheaf(trx, sheaf.id)
+  const same = (one: { half?: 0 | 1 }, leaf: Leaf): boolean => (one.half ?? null) === leaf.half
+  const found = findings.flatMap((finding): Found[] => {
+    const leaf = leaves.find((one) => one.position === finding.index && same(finding, one))
+    const reading = readings.find((one) => one.index === finding.index && one.half === finding.half)
+    return leaf && reading ? [{ leaf, reading, finding }] : []
+  })
+  await putFound(trx, sheaf, found)
+}
+
+async function putFound(trx: Db, sheaf: Sheaf, found: readonly Found[]): Promise<void> {
   const classSetId = (await listSheafClassSets(trx, sheaf.id))[0]!
   const first = await nextScriptPosition(trx, sheaf.paperId)
+  // A script of which a leaf lies in place already is there, whole: nothing is added to it by itself.
+  const there = new Set(found.flatMap(({ leaf, finding }) => (leaf.state === 'read' ? [] : (finding.script ?? []))))
   const scriptIds = new Map<number, string>()
-  for (const [k, { leaf, evidence }] of leaves.entries()) {
-    const finding = findings[k]!
-    if (finding.kind !== 'script') {
-      await lay(trx, leaf, evidence, finding)
-      continue
+  for (const { leaf, reading, finding } of found) {
+    if (leaf.state !== 'read') continue
+    if (finding.kind !== 'script') await lay(trx, leaf, reading, finding)
+    else if (there.has(finding.script!)) await lay(trx, leaf, reading, { ...finding, kind: 'loose', script: null, homography: null, reasons: ['order_unclear'] })
+    else {
+      if (!scriptIds.has(finding.script!)) scriptIds.set(finding.script!, await startScript(trx, classSetId, first + scriptIds.size))
+      await putIn(trx, scriptIds.get(finding.script!)!, leaf, reading, finding)
     }
-    const running = finding.script!
-    if (!scriptIds.has(running)) scriptIds.set(running, await startScript(trx, classSetId, first + running - 1))
-    await putIn(trx, scriptIds.get(running)!, leaf, evidence, finding)
   }
   await ensureResponses(trx, sheaf.paperId)
   await renewSuggestions(trx, sheaf.paperId)
-  await endSheaf(trx, sheaf.id, { state: 'placed' })
-  const count = (kind: LeafFinding['kind']) => findings.filter((finding) => finding.kind === kind).length
-  const to = `scripts ${scriptIds.size}, placed ${count('script')}, loose ${count('loose')}, blank ${count('blank')}`
-  await addAuditLine(trx, null, { act: 'sheaf.placed', objectKind: 'sheaf', objectId: sheaf.id, paperId: sheaf.paperId, to })
 }
 
 async function startScript(trx: Db, classSetId: string, position: number): Promise<string> {
@@ -43,7 +64,7 @@ async function startScript(trx: Db, classSetId: string, position: number): Promi
   return id
 }
 
-async function putIn(trx: Db, scriptId: string, leaf: Leaf, { reading }: LeafEvidence, finding: LeafFinding): Promise<void> {
+async function putIn(trx: Db, scriptId: string, leaf: Leaf, reading: LeafReading, finding: LeafFinding): Promise<void> {
   const id = newId()
   const paperPage = finding.paperPage!
   await addScriptPage(trx, { id, scriptId, paperPage, extra: false, position: paperPage, leafId: leaf.id })
@@ -53,7 +74,7 @@ async function putIn(trx: Db, scriptId: string, leaf: Leaf, { reading }: LeafEvi
 }
 
 /** Lays a leaf on the sorting table, or among the empty backs. */
-async function lay(trx: Db, leaf: Leaf, { reading }: LeafEvidence, finding: LeafFinding): Promise<void> {
+async function lay(trx: Db, leaf: Leaf, reading: LeafReading, finding: LeafFinding): Promise<void> {
   const paperPage = reading.clear ? (reading.guesses[0]?.paperPage ?? null) : null
   await moveLeaf(trx, leaf.id, {
     state: finding.kind === 'blank' ? 'blank' : 'loose', turn: finding.rotation, homography: null, paperPage, confidence: finding.confidence, evidence: { reading, placed: finding },

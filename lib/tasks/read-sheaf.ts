@@ -1,20 +1,23 @@
 import { AppError } from '@/lib/core/errors'
 import type { Paper } from '@/lib/core/paper'
 import type { BlankPage } from '@/lib/core/grey-picture'
+import type { LeafFinding, LeafReading } from '@/lib/core/leaf'
 import { db, transaction } from '@/db/knex'
-import { addLeafReading, listReadPositions } from '@/db/leaves'
+import { addLeafReading, listLeavesWithEvidence } from '@/db/leaves'
 import { getPaper } from '@/db/papers'
-import { getSheaf, startSheaf } from '@/db/sheaves'
+import { getSheaf, startSheaf, type Sheaf } from '@/db/sheaves'
 import { getStoredFile } from '@/db/stored-files'
 import { env } from '@/lib/infra/env'
 import { keptPath, readKept } from '@/lib/infra/file-store'
+import { placeFirstLeaves } from '@/lib/placing/place-leaves'
 import { openBlankPaper } from '@/lib/reading/open-blank-paper'
-import { openLeaves, readLeaves } from './read-leaves'
-import { placeSheaf } from './place-sheaf'
+import { openLeaves, readLeaves, type LeafReader } from './read-leaves'
+import { placeFirst, placeSheaf } from './place-sheaf'
 
 /**
- * Reads a sheaf leaf by leaf and then puts it into scripts. Each leaf's finding is stored as it is read, so it may be killed and
- * started again at any point: it goes on with the leaves that are missing, and the placing is one transaction.
+ * Reads a sheaf leaf by leaf and then puts it into scripts; scripts that are certain whatever follows are put in place on the way.
+ * Each leaf's finding is stored as it is read, so it may be killed and started again at any point: it goes on with the leaves
+ * that are missing, and the placing of the rest is one transaction. A sheaf that is taken away meanwhile is left alone.
  * @param goOn asked before each leaf is stored; once false nothing more is written and the answer is false
  */
 export async function readSheaf(sheafId: string, goOn: () => boolean): Promise<boolean> {
@@ -24,13 +27,13 @@ export async function readSheaf(sheafId: string, goOn: () => boolean): Promise<b
   const reader = await openLeaves(keptPath(sheaf.sha256), await blankPagesOf(paper), env.SHEAFMARK_THREADS)
   try {
     await transaction((trx) => startSheaf(trx, sheafId, reader.pageCount))
-    if (!(await readMissing(reader, sheafId, goOn))) return false
+    if (!(await readMissing(reader, sheaf, paper!.pages.length, goOn))) return false
   } finally {
     await reader.close()
   }
   return transaction(async (trx) => {
     if (!goOn()) return false
-    if ((await getSheaf(trx, sheafId))?.state === 'reading') await placeSheaf(trx, sheaf, paper!.pages.length)
+    if (await isBeingRead(trx, sheafId)) await placeSheaf(trx, sheaf, paper!.pages.length)
     return true
   })
 }
@@ -42,15 +45,29 @@ export async function blankPagesOf(paper: Paper | null): Promise<BlankPage[]> {
   return openBlankPaper(await readKept(file.sha256))
 }
 
-async function readMissing(reader: Awaited<ReturnType<typeof openLeaves>>, sheafId: string, goOn: () => boolean): Promise<boolean> {
-  const known = new Set(await listReadPositions(db(), sheafId))
+/** Whether a sheaf is still there to be read: somebody may have stopped it. */
+async function isBeingRead(db: Parameters<typeof getSheaf>[0], sheafId: string): Promise<boolean> {
+  return (await getSheaf(db, sheafId))?.state === 'reading'
+}
+
+async function readMissing(reader: LeafReader, sheaf: Sheaf, pages: number, goOn: () => boolean): Promise<boolean> {
+  const readings = (await listLeavesWithEvidence(db(), sheaf.id)).map(({ evidence }) => evidence.reading)
+  const known = new Set(readings.map(({ index }) => index))
+  const placeMore = firstPlacer(pages)
   // Once one lane has stopped, the reader is closing and what the other lanes bring is no finding.
   let open = true
-  const store = async (reading: Parameters<typeof addLeafReading>[2]) => {
+  const store = async (reading: LeafReading) => {
     open &&= goOn()
     if (!open) return
     try {
-      await transaction((trx) => addLeafReading(trx, sheafId, reading))
+      readings.push(reading)
+      const first = placeMore(readings)
+      await transaction(async (trx) => {
+        open &&= await isBeingRead(trx, sheaf.id)
+        if (!open) return
+        await addLeafReading(trx, sheaf.id, reading)
+        if (first.findings.length > 0) await placeFirst(trx, sheaf, first.readings, first.findings)
+      })
     } catch (error) {
       open = false
       throw error
@@ -58,4 +75,31 @@ async function readMissing(reader: Awaited<ReturnType<typeof openLeaves>>, sheaf
   }
   await readLeaves(reader, (index) => known.has(index) || !open, store, env.SHEAFMARK_THREADS)
   return open && goOn()
+}
+
+/** Looked again for scripts that are certain after so many more leaves, and so large a part of those known: the longer the sheaf, the rarer. */
+const oftenest = 4
+const part = 0.08
+
+type First = Readonly<{ readings: readonly LeafReading[]; findings: readonly LeafFinding[] }>
+
+/** Finds scripts that can be put in place, each once. Asked with all readings so far, in any order. */
+function firstPlacer(pages: number): (readings: readonly LeafReading[]) => First {
+  let looked = 0
+  let placed = 0
+  return (readings) => {
+    const first = fromTheStart(readings)
+    if (first.length - looked < Math.max(oftenest, part * looked)) return { readings: [], findings: [] }
+    looked = first.length
+    const findings = placeFirstLeaves(first, pages, placed).filter(({ index }) => index >= placed)
+    placed = Math.max(placed, ...findings.map(({ index }) => index + 1))
+    return { readings: first, findings }
+  }
+}
+
+/** The readings up to the first leaf that is not read yet, in order. */
+function fromTheStart(readings: readonly LeafReading[]): LeafReading[] {
+  const inOrder = [...readings].sort((a, b) => a.index - b.index || (a.half ?? 0) - (b.half ?? 0))
+  const gap = inOrder.findIndex(({ index }, k) => index > (inOrder[k - 1]?.index ?? -1) + 1)
+  return gap === -1 ? inOrder : inOrder.slice(0, gap)
 }

@@ -50,6 +50,11 @@ export async function listSamples(db: Db, paperId: string): Promise<Sample[]> {
   return (await selectSamples(db).where('class_sets.paper_id', paperId)) as Sample[]
 }
 
+/** Whether a sample of a paper was ever drawn. */
+export async function hasSample(db: Db, paperId: string): Promise<boolean> {
+  return Boolean(await selectSamples(db).where('class_sets.paper_id', paperId).first())
+}
+
 export async function getSample(db: Db, id: string): Promise<Sample | null> {
   return ((await selectSamples(db).where('samples.id', id).first()) as Sample | undefined) ?? null
 }

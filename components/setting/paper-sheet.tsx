@@ -27,7 +27,7 @@ export function PaperSheet({ state, send }: { state: SetState; send: Dispatch<Se
       <h2>Rules of the paper</h2>
       <dl className={css.rules}>
         <dt>Marking step</dt><dd><StepChoice step={setting.step} send={send} /></dd>
-        <dt>Tolerance</dt><dd className="flex items-baseline gap-2"><span className="w-12"><WorthInput label="Tolerance of the paper, in marks" least={0} worth={setting.tolerance} onWorth={(tolerance) => send({ type: 'ruled', patch: { tolerance } })} /></span> <span className="soft">between first and second mark</span></dd>
+        <dt>Tolerance</dt><dd className="flex items-baseline gap-2"><span className="w-12"><WorthInput label="Tolerance of the paper, in marks" least={0} disabled={view.sampled} worth={setting.tolerance} onWorth={(tolerance) => send({ type: 'ruled', patch: { tolerance } })} /></span> <span className="soft">{view.sampled ? 'fixed: a sample has been drawn' : 'between first and second mark'}</span></dd>
       </dl>
       <div className={css.acts}>
         <Link className="btn" href={`/papers/${view.paperId}/details`}>Classes, people, blank paper</Link>

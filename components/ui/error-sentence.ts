@@ -22,6 +22,7 @@ const sentences: Record<ErrorCode | 'failed', string | ((detail: ErrorDetail) =>
   moderator_not_blind: ({ moderates }) => moderates ? 'This person second-marks a sample of this paper, so it cannot be theirs too. Share it with someone else.' : 'This person owns the paper or gave first marks in this class set, so they could not mark it blind.',
   sample_closed: 'This second marking is closed. Its decisions stand as they are.',
   moderation_open: 'Some marks lie outside the tolerance and nobody has decided on them yet.',
+  tolerance_fixed: 'A sample has been drawn, so the tolerance stays as it was set before the second marking.',
   paper_invalid: 'The paper cannot be used as it is. See the lines below.',
   has_stamps: 'Marks have been given here, so it is kept. Withdraw it instead.',
   pages_differ: 'This PDF has another number of pages, or another size, than the answer spaces were drawn for.',

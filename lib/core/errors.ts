@@ -23,6 +23,7 @@ export const errorStatus = {
   moderator_not_blind: 409,
   sample_closed: 409,
   moderation_open: 409,
+  tolerance_fixed: 409,
   nothing_stamped: 409,
   nought_with_marks: 422,
   base_missing: 422,

@@ -14,4 +14,6 @@ export type SettingView = Readonly<{
   stamped: readonly string[]
   withdrawnQuestions: Readonly<Record<string, Withdrawal>>
   withdrawnPoints: readonly string[]
+  /** A sample has been drawn: the tolerances stay as they are. */
+  sampled: boolean
 }>

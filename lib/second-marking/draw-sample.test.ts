@@ -35,7 +35,17 @@ describe('drawing a sample', () => {
       expect(drawSample([...scripts].reverse(), wanted, seed)).toEqual(drawSample(scripts, wanted, seed))
     }))
   })
-  it('is read highest, lowest, middle first', () => {
+  it('is read highest, lowest, middle first, whatever was drawn', () => {
+    fc.assert(fc.property(cohort, size, fc.string(), (scripts, wanted, seed) => {
+      const drawn = drawSample(scripts, wanted, seed)
+      const totals = drawn.map(({ scriptId }) => scripts.find((one) => one.scriptId === scriptId)!.total)
+      expect(totals[0]).toBe(Math.max(...totals))
+      if (drawn.length > 1) expect(totals[1]).toBe(Math.min(...totals))
+      if (drawn.length > 2) expect(totals[2]).toBe([...totals].sort((a, b) => a - b)[Math.floor((totals.length - 1) / 2)])
+      expect(drawn.map(({ drawnAs }) => drawnAs).slice(0, 2)).toEqual(['highest', 'lowest'].slice(0, drawn.length))
+    }))
+  })
+  it('has as many read before the middle as after', () => {
     const scripts = Array.from({ length: 30 }, (_, k) => ({ scriptId: `s${k}`, total: halves(k), markedBy: [] }))
     const drawn = drawSample(scripts, 15, 'seed')
     expect(drawn.slice(0, 2)).toEqual([{ scriptId: 's29', drawnAs: 'highest' }, { scriptId: 's0', drawnAs: 'lowest' }])

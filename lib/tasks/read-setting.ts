@@ -4,6 +4,7 @@ import { settingOf } from '@/lib/core/setting'
 import type { SettingView } from '@/lib/core/setting-view'
 import { db } from '@/db/knex'
 import { getPaper } from '@/db/papers'
+import { hasSample } from '@/db/samples'
 import { touchedByMarking } from '@/db/touched-by-marking'
 import { gatePaper } from './gate-paper'
 
@@ -18,5 +19,6 @@ export async function readSetting(actor: Actor, paperId: string): Promise<Settin
     stamped: [...touched.questions, ...touched.points],
     withdrawnQuestions: Object.fromEntries(paper.questions.flatMap(({ id, withdrawn }) => (withdrawn ? [[id, withdrawn]] : []))),
     withdrawnPoints: paper.questions.flatMap(({ points }) => points.filter((point) => point.withdrawn).map(({ id }) => id)),
+    sampled: await hasSample(db(), paperId),
   }
 }

@@ -2,6 +2,7 @@ import type { Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
 import type { Paper } from '@/lib/core/paper'
 import { settingOf, type Setting } from '@/lib/core/setting'
+import { assertToleranceKept } from '@/lib/setting/assert-tolerance-kept'
 import { checkSetting } from '@/lib/setting/check-setting'
 import { planChanges, type Touched } from '@/lib/setting/plan-changes'
 import { faultLines, placeInWords } from '@/lib/setting/setting-fault'
@@ -10,18 +11,20 @@ import type { Db } from '@/db/knex'
 import { getPaper, putMarkingRules, setPaperBoxes } from '@/db/papers'
 import { dropPoints, dropQuestions, dropSpaces, idsOfOtherPapers, parkLabels, putQuestion } from '@/db/questions'
 import { ensureResponses } from '@/db/responses'
+import { hasSample } from '@/db/samples'
 import { addSchemeVersion } from '@/db/scheme-versions'
 import { touchedByMarking } from '@/db/touched-by-marking'
 
 /**
  * Puts a checked setting in place of the stored one, inside the caller's transaction and after its gate: keeps the scheme's next
- * version, the responses of new questions and the audit line. Returns the version; throws paper_invalid or has_stamps.
+ * version, the responses of new questions and the audit line. Returns the version; throws paper_invalid, has_stamps or tolerance_fixed.
  */
 export async function storeSetting(trx: Db, actor: Actor, paper: Paper, next: Setting): Promise<number> {
   const withdrawn = new Set(paper.questions.flatMap(({ points }) => points.filter((point) => point.withdrawn).map(({ id }) => id)))
   const faults = checkSetting(next, paper.pages, withdrawn)
   if (faults.length > 0) throw new AppError('paper_invalid', { lines: faultLines(faults, placeInWords) })
   const plan = planChanges(paper.questions, next, (await touchedByMarking(trx, paper.id)) satisfies Touched)
+  if (await hasSample(trx, paper.id)) assertToleranceKept(paper, next)
   await assertOwnIds(trx, paper.id, next)
   await dropSpaces(trx, plan.dropSpaces)
   await dropPoints(trx, plan.dropPoints)

@@ -3,6 +3,7 @@ import { db } from '@/db/knex'
 import { sampleResponseIds } from '@/db/samples'
 import type { Actor } from '@/lib/core/actor'
 import { newId } from '@/lib/core/ids'
+import { halves, type HalfMarks } from '@/lib/core/marks'
 import { drawSample as draw } from '@/lib/second-marking/draw-sample'
 import { addToSample } from '@/lib/tasks/add-to-sample'
 import { closeSample } from '@/lib/tasks/close-sample'
@@ -12,6 +13,8 @@ import { drawSample } from '@/lib/tasks/draw-sample'
 import { readMarkBook } from '@/lib/tasks/read-mark-book'
 import { readSecondMarking } from '@/lib/tasks/read-second-marking'
 import { readStages } from '@/lib/tasks/read-stages'
+import { readSetting } from '@/lib/tasks/read-setting'
+import { saveSetting } from '@/lib/tasks/save-setting'
 import { sharePaper } from '@/lib/tasks/share-paper'
 import { sampleCandidates } from '@/lib/tasks/sample-candidates'
 import { placeLeaves } from '@/tests/make/leaves'
@@ -93,6 +96,46 @@ describe('second marking', () => {
     await db()('class_set_students').where({ class_set_id: classSetId, student_id: studentIds[1] }).update({ attendance: 'absent' })
     const { sampleId } = await drawSample(teacher, { classSetId, moderatorId: moderator.userId })
     expect((await sampledScripts(sampleId)).sort()).toEqual([scriptIds[0], scriptIds[2], scriptIds[3]].sort())
+  })
+
+  it('keeps the tolerances as they were set from the draw on, whatever else of the scheme changes', async () => {
+    const { teacher, moderator, paperId, classSetId } = await aMarkedSet(4)
+    const save = async (patch: { tolerance?: HalfMarks; own?: HalfMarks | null; text?: string }) => {
+      const { setting, version } = await readSetting(teacher, paperId)
+      const questions = setting.questions.map((question, k) => (k > 0 ? question : { ...question, text: patch.text ?? question.text, tolerance: patch.own === undefined ? question.tolerance : patch.own }))
+      return saveSetting(teacher, { paperId, version, setting: { ...setting, tolerance: patch.tolerance ?? setting.tolerance, questions } })
+    }
+    await save({ tolerance: halves(2), own: halves(0) })
+    await drawSample(teacher, { classSetId, moderatorId: moderator.userId })
+    expect((await readSetting(teacher, paperId)).sampled).toBe(true)
+    await expect(save({ tolerance: halves(4) })).rejects.toMatchObject({ code: 'tolerance_fixed', detail: { lines: [{ path: 'Paper', says: 'its tolerance stays at 1' }] } })
+    await expect(save({ own: halves(4) })).rejects.toMatchObject({ code: 'tolerance_fixed' })
+    await save({ text: 'Why is the sky blue?' })
+    expect((await readSetting(teacher, paperId)).setting).toMatchObject({ tolerance: 2, questions: [{ tolerance: 0, text: 'Why is the sky blue?' }, { tolerance: null }] })
+    expect((await readSecondMarking(teacher, paperId)).samples[0]!.questions.map(({ tolerance }) => tolerance)).toEqual([0, 2])
+  })
+
+  it('takes the number the paper sets, else the one asked for, never more scripts than sat', async () => {
+    const { teacher, paperId, classSetId } = await aMarkedSet(8)
+    await db()('papers').where({ id: paperId }).update({ sample_size: 5 })
+    const drawn = async (size?: number) => {
+      const { sampleId } = await drawSample(teacher, { classSetId, moderatorId: (await anActor('moderator')).userId, ...(size === undefined ? {} : { size }) })
+      return [(await sampledScripts(sampleId)).length, await db()('samples').where({ id: sampleId }).first<object>('size', 'default_size')]
+    }
+    expect(await drawn()).toEqual([5, { size: 5, default_size: 8 }])
+    expect(await drawn(3)).toEqual([3, { size: 3, default_size: 8 }])
+    expect((await drawn(50))[0]).toBe(8)
+  })
+
+  it('shows every marker of every question, on top of the number asked for where it must', async () => {
+    const { teacher, moderator, classSetId, scriptIds, q1 } = await aMarkedSet(20)
+    const once = [await anActor('marker'), await anActor('marker')]
+    for (const [k, { userId }] of once.entries()) {
+      const { responseId } = await responseOf(scriptIds[7 + k]!, q1)
+      await db()('markings').where({ response_id: responseId }).update({ marker_id: userId })
+    }
+    const { sampleId } = await drawSample(teacher, { classSetId, moderatorId: moderator.userId, size: 2 })
+    expect(await sampledScripts(sampleId)).toEqual(expect.arrayContaining([scriptIds[7], scriptIds[8]]))
   })
 
   it('shows the moderator nothing of the first marking before their own mark is settled', async () => {

@@ -64,3 +64,12 @@ export async function countSheavesInWork(db: Db, classSetId: string): Promise<nu
   return (await db('sheaf_class_sets').join('sheaves', 'sheaves.id', 'sheaf_class_sets.sheaf_id').where({ class_set_id: classSetId }).whereIn('sheaves.state', ['waiting', 'reading']).count({ n: '*' }).first<{ n: number }>()).n
 }
 
+
+export type SignedStamp = Readonly<{ stampId: string; questionId: string; responseId: string; savedAt: number; settledAt: number }>
+
+/** When each stamp of a script's counting markings was pressed, and when its marking was settled. */
+export async function listSignedStamps(db: Db, scriptId: string): Promise<SignedStamp[]> {
+  return (await db('responses').join('counting_decisions', 'counting_decisions.response_id', 'responses.id').join('markings', 'markings.id', 'counting_decisions.marking_id').join('stamps', 'stamps.marking_id', 'markings.id')
+    .where({ 'responses.script_id': scriptId, 'markings.state': 'settled', 'stamps.removed': 0 }).whereNull('counting_decisions.superseded_at')
+    .select({ stampId: 'stamps.id', questionId: 'responses.question_id', responseId: 'responses.id', savedAt: 'stamps.saved_at', settledAt: 'markings.settled_at' })) as SignedStamp[]
+}

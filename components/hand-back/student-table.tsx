@@ -1,4 +1,4 @@
-import { Download } from 'lucide-react'
+import { Download, MessageSquareText } from 'lucide-react'
 import { MarkFigure } from '@/components/ui/mark-figure'
 import { sayTime } from '@/components/ui/say-time'
 import { sayMark } from '@/lib/core/marks'
@@ -14,10 +14,10 @@ export function StudentTable({ view: { students, maximum } }: { view: HandBackVi
       <h2 className="mb-2">Students</h2>
       <div className={styles.scroll} tabIndex={0} role="region" aria-label="Students and their scripts">
         <table className={`tbl ${styles.students}`}>
-          <thead><tr><th scope="col">student</th><th scope="col">total of {sayMark(maximum)}</th><th scope="col">grade</th><th scope="col">state</th>{out && <><th scope="col">read by the student</th><th scope="col">file</th></>}</tr></thead>
+          <thead><tr><th scope="col">student</th><th scope="col">total of {sayMark(maximum)}</th><th scope="col">grade</th><th scope="col">state</th>{out && <th scope="col">read by the student</th>}<th scope="col">files</th></tr></thead>
           <tbody>
             {students.map((student) => {
-              const { key, name, candidateNumber, total, grade, returned, changed } = student
+              const { key, name, candidateNumber, scriptNumber, total, grade, returned, changed } = student
               return (
                 <tr key={key}>
                   <th scope="row" className={styles.name}>{name} <span className="soft">{candidateNumber}</span></th>
@@ -25,7 +25,10 @@ export function StudentTable({ view: { students, maximum } }: { view: HandBackVi
                   <td>{grade ?? '–'}</td>
                   <td className={returned && !changed ? undefined : changed ? styles.in : 'soft'}>{stateWords(student)}{returned && returned.revision > 1 ? `, revision ${returned.revision}` : ''}</td>
                   {out && <td className="soft">{returned ? (returned.firstReadAt ? sayTime(returned.firstReadAt) : 'not yet') : ''}</td>}
-                  {out && <td>{returned && <a className="inline-flex min-h-6 items-center gap-1" href={`/api/returned/${returned.id}/pdf`} download><Download className="ic" aria-hidden />PDF<span className="vh"> of {name}</span></a>}</td>}
+                  <td>
+                    {returned && <a className="inline-flex min-h-6 items-center gap-1" href={`/api/returned/${returned.id}/pdf`} download><Download className="ic" aria-hidden />PDF<span className="vh"> of {name}</span></a>}
+                    {scriptNumber !== null && <a className="ml-3 inline-flex min-h-6 items-center gap-1" href={`/api/scripts/${key}/annotated-pdf`} download title="For staff: the marking as annotations, each with who gave it and when"><MessageSquareText className="ic" aria-hidden />annotated<span className="vh"> copy of {name}, for staff</span></a>}
+                  </td>
                 </tr>
               )
             })}

@@ -72,7 +72,7 @@ function boxOf(ink: Ink): PaperRect | null {
 }
 
 /** Points along a path: ends of steps, and eight on each curve, which is true to well under a line's width. */
-function pointsOn(path: readonly Step[]): PaperPoint[] {
+export function pointsOn(path: readonly Step[]): PaperPoint[] {
   const points: PaperPoint[] = []
   for (const step of path) {
     const from = points.at(-1)

@@ -28,9 +28,9 @@ export function drawMarkedPage({ paper, image, homography, stamps, marks, total 
   const places = ringPlaces(marks.map(({ space }) => space), shown, rightAt)
   const foot = shown.y + shown.h
   return [
-    ...kept(stamps).map(({ stamp, pen }) => ({ pen, inks: drawStamp(stamp) })),
-    ...marks.map(({ mark, pen }, k) => ({ pen, inks: ringOfMark(mark, pen, places[k]!) })),
-    ...(total ? [{ pen: total.pen, inks: pageTotal(total.mark, total.pen, { ...shown, w: Math.min(rightAt(foot - 34), rightAt(foot)) - shown.x }) }] : []),
+    ...kept(stamps).map(({ stamp, pen, label }) => ({ pen, inks: drawStamp(stamp), of: { id: stamp.id, kind: stamp.kind, label, says: sayStamp(stamp), text: stamp.text.trim() } })),
+    ...marks.map(({ mark, pen, label }, k) => ({ pen, inks: ringOfMark(mark, pen, places[k]!), of: { id: `mark-${label}`, kind: 'question-mark' as const, label, says: `Mark ${sayMark(mark)}`, text: '' } })),
+    ...(total ? [{ pen: total.pen, inks: pageTotal(total.mark, total.pen, { ...shown, w: Math.min(rightAt(foot - 34), rightAt(foot)) - shown.x }), of: { id: 'page-total', kind: 'page-total' as const, label: null, says: `Page total ${sayMark(total.mark)}`, text: '' } }] : []),
   ]
 }
 

@@ -22,3 +22,9 @@ export function packed(context: PDFContext, operators: string): PDFRef {
   const bytes = deflateSync(Buffer.from(operators, 'latin1'))
   return context.register(PDFRawStream.of(context.obj({ Filter: 'FlateDecode', Length: bytes.length }), bytes))
 }
+
+/** Operators as a form that draws in the space round it: its box is where it lies, and nothing moves or stretches it. */
+export function packedForm(context: PDFContext, operators: string, box: readonly number[], fonts: PDFRef): PDFRef {
+  const bytes = deflateSync(Buffer.from(operators, 'latin1'))
+  return context.register(PDFRawStream.of(context.obj({ Type: 'XObject', Subtype: 'Form', BBox: [...box], Resources: { Font: fonts }, Filter: 'FlateDecode', Length: bytes.length }), bytes))
+}

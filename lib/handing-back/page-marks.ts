@@ -24,8 +24,8 @@ function marksOn(page: GatheredPage, pages: readonly GatheredPage[], marked: rea
   })
 }
 
-/** One page of a script with all its marking, ready to be built. `number` counts from 1. */
-export function pageToReturn(script: GatheredScript, page: GatheredPage, number: number): ScriptPage {
+/** One page of a script with its marking, ready to be built. `number` counts from 1; a page of which only some questions are shown gets no sum. */
+export function pageToReturn(script: GatheredScript, page: GatheredPage, number: number, withSum = true): ScriptPage {
   const { leaf } = page
   const marked = script.paper.questions.flatMap((question) => {
     const answer = script.answers.find(({ questionId }) => questionId === question.id)
@@ -34,7 +34,7 @@ export function pageToReturn(script: GatheredScript, page: GatheredPage, number:
   const stamps = stampsOn(page, marked)
   const marks = marksOn(page, script.pages, marked)
   const image = { width: leaf.width, height: leaf.height }
-  const total = marks.length > 1 ? { mark: sum(marks.map(({ mark }) => mark)), pen: marks[0]!.pen } : null
+  const total = withSum && marks.length > 1 ? { mark: sum(marks.map(({ mark }) => mark)), pen: marks[0]!.pen } : null
   return {
     sheaf: leaf.sheafId, index: leaf.position, ...(leaf.half === null ? {} : { half: leaf.half }), homography: leaf.homography, image,
     drawings: leaf.homography ? drawMarkedPage({ paper: paperSize(script.paper, page), image, homography: leaf.homography, stamps, marks, total }) : [],

@@ -1,6 +1,7 @@
 import { PDFArray, PDFDict, PDFName, PDFNumber, type PDFDocument, type PDFObject, type PDFPage } from 'pdf-lib'
 import { AppError } from '@/lib/core/errors'
 import { compose, turnOf, type Homography } from '@/lib/core/paper-space'
+import { addAnnotations, type Signing } from './add-annotations'
 import { readContent } from './content-reader'
 import type { ObjectCopier } from './object-copier'
 import { packed } from './operators'
@@ -26,12 +27,15 @@ export type ScriptPage = Readonly<{
   words: string
 }>
 
+/** A file that is being built: what all its pages share. With `signing` the marking lies over the pages as annotations and is not drawn into them. */
+export type FileInWork = Readonly<{ pdf: PDFDocument; type: Typesetter; structure: Structure; signing: Signing | null }>
+
 /**
  * Adds a page of a sheaf to a returned script: its own content and images untouched, byte for byte, the marking drawn over them, turned
  * so that the paper reads upright. Throws page_shared where the picture also shows another page, page_unreadable for content in a coding
  * that cannot be looked through.
  */
-export function addReturnedPage(pdf: PDFDocument, source: PDFDocument, page: ScriptPage, copier: ObjectCopier, type: Typesetter, structure: Structure): void {
+export function addReturnedPage({ pdf, type, structure, signing }: FileInWork, source: PDFDocument, page: ScriptPage, copier: ObjectCopier): void {
   if (page.half !== undefined) throw new AppError('page_shared', { page: page.index + 1 })
   const from = source.getPage(page.index)
   const content = readable(from, page.index)
@@ -40,8 +44,9 @@ export function addReturnedPage(pdf: PDFDocument, source: PDFDocument, page: Scr
   const resources = copier.copyResources(content, from.node.Resources())
   const toPage = page.homography && compose(pixelsToPage(from, content, page.image), page.homography)
   to.node.set(PDFName.of('Rotate'), PDFNumber.of(toPage ? uprightTurn(toPage) : from.getRotation().angle))
-  const ink = toPage ? paintInk(page.drawings, toPage, type) : ''
+  const ink = toPage && !signing ? paintInk(page.drawings, toPage, type) : ''
   structure.within('Figure', () => drawOver(pdf, to, from, copier, content, ink, structure), page.words)
+  if (toPage && signing) addAnnotations(pdf, to, page.drawings, toPage, type, signing)
   resources.set(PDFName.of('Font'), withFonts(resources.lookup(PDFName.of('Font')), type.resources()))
   to.node.set(PDFName.of('Resources'), resources)
 }

@@ -1,5 +1,6 @@
 import { PDFDocument } from 'pdf-lib'
 import { AppError } from '@/lib/core/errors'
+import type { Signing } from './add-annotations'
 import { ObjectCopier } from './object-copier'
 import { addReturnedPage, type ScriptPage } from './returned-page'
 import { Structure } from './structure'
@@ -8,7 +9,15 @@ import { addSummary } from './add-summary'
 import { Typesetter } from './typesetter'
 
 /** One student's script to hand back. `builtAt` is written into the file, so that the same script built again is the same file. */
-export type ScriptToReturn = Readonly<{ summary: Summary; pages: readonly ScriptPage[]; builtAt: Date }>
+export type ScriptToReturn = Readonly<{
+  /** Null for a copy of the pages alone, named `title`. */
+  summary: Summary | null
+  title?: string
+  pages: readonly ScriptPage[]
+  builtAt: Date
+  /** Who marked what and when: the marking then lies over the pages as annotations that other programs list, for staff. */
+  signing?: Signing | null
+}>
 /** Sheaves as loaded once for all students, by the name that pages give. */
 export type LoadedSheaves = ReadonlyMap<string, PDFDocument>
 
@@ -22,18 +31,18 @@ export async function loadSheaf(bytes: Uint8Array): Promise<PDFDocument> {
  * marking over them as vectors. Nothing else of a sheaf gets in: no other student's image, no metadata, attachments, annotations or
  * actions. Throws sheaf_missing, not_found for a page the sheaf has not, page_shared and page_unreadable.
  */
-export async function buildReturnedScript(sheaves: LoadedSheaves, { summary, pages, builtAt }: ScriptToReturn): Promise<Uint8Array> {
+export async function buildReturnedScript(sheaves: LoadedSheaves, { summary, title, pages, builtAt, signing = null }: ScriptToReturn): Promise<Uint8Array> {
   const pdf = await PDFDocument.create({ updateMetadata: false })
-  describe(pdf, summary, builtAt)
+  describe(pdf, title ?? (summary ? `${summary.title}, ${summary.student}` : ''), builtAt)
   const type = await Typesetter.for(pdf.context)
   const structure = new Structure()
-  addSummary(pdf, summary, pages.length, type, structure)
+  if (summary) addSummary(pdf, summary, pages.length, type, structure)
   const copiers = new Map<PDFDocument, ObjectCopier>()
   for (const page of pages) {
     const source = sheafOf(sheaves, page)
     const copier = copiers.get(source) ?? new ObjectCopier(source.context, pdf.context)
     copiers.set(source, copier)
-    addReturnedPage(pdf, source, page, copier, type, structure)
+    addReturnedPage({ pdf, type, structure, signing }, source, page, copier)
   }
   structure.store(pdf)
   await type.embed()
@@ -48,8 +57,8 @@ function sheafOf(sheaves: LoadedSheaves, { sheaf, index }: ScriptPage): PDFDocum
   return source
 }
 
-function describe(pdf: PDFDocument, { title, student }: Summary, builtAt: Date): void {
-  pdf.setTitle(`${title}, ${student}`, { showInWindowTitleBar: true })
+function describe(pdf: PDFDocument, title: string, builtAt: Date): void {
+  pdf.setTitle(title, { showInWindowTitleBar: true })
   pdf.setLanguage('en-GB')
   pdf.setCreator('Sheafmark')
   pdf.setProducer('Sheafmark')

@@ -4,13 +4,13 @@ import { addAuditLine } from '@/db/audit'
 import { db, transaction } from '@/db/knex'
 import { getRelease, markReleaseFailed, markReleased, type Release } from '@/db/releases'
 import { countBuilt, isBuilt, listScriptsToBuild, markBuilt, markNotBuilt, type ScriptToBuild } from '@/db/returned-scripts'
-import { getSheaf } from '@/db/sheaves'
 import { addStoredFile } from '@/db/stored-files'
 import { now } from '@/lib/infra/clock'
-import { keepBytes, readKept } from '@/lib/infra/file-store'
-import { buildReturnedScript, loadSheaf } from '@/lib/handing-back/returned-script'
+import { keepBytes } from '@/lib/infra/file-store'
+import { buildReturnedScript, type loadSheaf } from '@/lib/handing-back/returned-script'
 import { scriptResult, summaryOf, type ScriptResult } from '@/lib/handing-back/script-result'
 import { gatherClassSet, gatheredScript, type GatheredSet } from './gather-class-set'
+import { loadSheavesOf } from './load-sheaves-of'
 import { mailReleased } from './mail-released'
 import { keptBackReason } from './scripts-to-go'
 
@@ -62,7 +62,8 @@ async function buildOne(release: Release, gathered: GatheredSet, script: ScriptT
   }
   try {
     const result = scriptResult(source)
-    await loadSheaves(result, sheaves)
+    // A sheaf is read and loaded once for all its students.
+    await loadSheavesOf(result.pages, sheaves)
     const summary = summaryOf(source, result, { day: new Date(release.createdAt).toISOString().slice(0, 10), revision: script.revision })
     const kept = await keepBytes(await buildReturnedScript(sheaves, { summary, pages: result.pages, builtAt: new Date(release.createdAt) }))
     await store(script, result, kept, release)
@@ -80,15 +81,4 @@ async function store(script: ScriptToBuild, { detail, key }: ScriptResult, kept:
     await addStoredFile(trx, { id: fileId, ...kept, mediaType: 'application/pdf', originalName: `${detail.title}.pdf`, createdBy: release.createdBy })
     await markBuilt(trx, script.id, { fileId, contentKey: key, at: now(), detail })
   })
-}
-
-/** A sheaf is read and loaded once for all its students. */
-async function loadSheaves({ pages }: ScriptResult, sheaves: Sheaves): Promise<void> {
-  for (const { sheaf: id } of pages) {
-    if (sheaves.has(id)) continue
-    const sheaf = await getSheaf(db(), id)
-    const bytes = sheaf && (await readKept(sheaf.sha256).catch(() => null))
-    if (!bytes) throw new AppError('sheaf_missing')
-    sheaves.set(id, await loadSheaf(bytes).catch(() => { throw new AppError('page_unreadable') }))
-  }
 }

@@ -55,10 +55,14 @@ function answersOf(gathered: GatheredSet, scriptId: string): GatheredAnswer[] {
   }))
 }
 
-/** One script with its student as the builder takes it; null while its name is open. */
-export function gatheredScript(gathered: GatheredSet, scriptId: string): GatheredScript | null {
+type Named = Pick<GatheredScript, 'givenName' | 'familyName' | 'candidateNumber'>
+
+/** One script with its student as the builder takes it. While its name is open it goes by `otherwise`; null without that. */
+export function gatheredScript(gathered: GatheredSet, scriptId: string): GatheredScript | null
+export function gatheredScript(gathered: GatheredSet, scriptId: string, otherwise: Named): GatheredScript
+export function gatheredScript(gathered: GatheredSet, scriptId: string, otherwise: Named | null = null): GatheredScript | null {
   const script = gathered.scripts.find((one) => one.scriptId === scriptId)
-  const student = gathered.students.find(({ studentId }) => studentId === script?.studentId)
+  const student = gathered.students.find(({ studentId }) => studentId === script?.studentId) ?? otherwise
   if (!student) return null
   const { paper, set } = gathered
   const total = totalOf(paper.questions, (gathered.cells.get(scriptId) ?? []))

@@ -1,13 +1,12 @@
 import type { Actor, PaperStanding } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
 import type { Paper } from '@/lib/core/paper'
-import { mayOnPaper } from '@/lib/core/actor'
 import { cutKey, type Cut } from '@/lib/cutting/cut-key'
-import { db, type Db } from '@/db/knex'
+import { db } from '@/db/knex'
 import { getPaper } from '@/db/papers'
-import { getResponse, getScriptPage, listScriptPages, placeOfScript, sampledScriptIds } from '@/db/runs'
+import { getResponse, getScriptPage, listScriptPages, placeOfScript } from '@/db/runs'
 import { drawCut, type Picture } from './draw-cut'
-import { gatePaper } from './gate-paper'
+import { gateScript } from './gate-script'
 import { cutOf, hidesNames, masksOf, wholePage } from './pictures-of-script'
 
 type Asked = Readonly<{ dpi: number; key: string | null }>
@@ -34,15 +33,6 @@ export async function readScriptPagePicture(actor: Actor, { scriptPageId, ...ask
   const rect = wholePage(page, paper)
   if (!rect) throw new AppError('not_found')
   return draw(paper, standing, asked, (masked) => cutOf(page, rect, masked ? masksOf(paper, page.paperPage) : []))
-}
-
-/** Markers see the scripts they mark; a moderator only those of their own samples. */
-async function gateScript(db: Db, actor: Actor, at: Readonly<{ paperId: string; scriptId: string; questionId?: string }>): Promise<PaperStanding> {
-  const standing = await gatePaper(db, actor, 'see', at.paperId)
-  const marks = at.questionId === undefined ? actor.roles.includes('marker') && standing.marks.length > 0 : mayOnPaper(actor, 'mark', standing, at.questionId)
-  if (marks || mayOnPaper(actor, 'change', standing)) return standing
-  if (mayOnPaper(actor, 'second-mark', standing) && (await sampledScriptIds(db, actor.userId, at.paperId)).has(at.scriptId)) return standing
-  throw new AppError('not_allowed')
 }
 
 /** The covered picture is sent unless the address asks for the open one and this person may see it. */

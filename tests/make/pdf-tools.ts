@@ -49,10 +49,13 @@ export function pageCountOf(file: string): number {
   return Number(run('qpdf', '--show-npages', file))
 }
 
-/** Where green ink lies on a page drawn at 200 dpi, in pixels, and how large the picture is; edges are pixel edges. */
-export function greenInk(file: string, page: number): { left: number; right: number; top: number; bottom: number; lowestX: number; width: number; height: number } {
+export type InkBox = { left: number; right: number; top: number; bottom: number; lowestX: number; width: number; height: number }
+
+/** Where green ink lies on a page drawn at 200 dpi by poppler or mupdf, in pixels, and how large the picture is; edges are pixel edges. */
+export function greenInk(file: string, page: number, by: 'poppler' | 'mupdf' = 'poppler'): InkBox {
   const folder = mkdtempSync(join(tmpdir(), 'sheafmark-drawn-'))
-  run('pdftoppm', '-r', '200', '-f', String(page), '-l', String(page), '-singlefile', file, join(folder, 'page'))
+  if (by === 'poppler') run('pdftoppm', '-r', '200', '-f', String(page), '-l', String(page), '-singlefile', file, join(folder, 'page'))
+  else run('mutool', 'draw', '-q', '-r', '200', '-c', 'rgb', '-o', join(folder, 'page.ppm'), file, String(page))
   const { data, width, height } = pixelsOf(readFileSync(join(folder, 'page.ppm')))
   const seen: { x: number; y: number }[] = []
   for (let k = 0; k < width * height; k++) {
@@ -64,6 +67,16 @@ export function greenInk(file: string, page: number): { left: number; right: num
   const lowest = seen.filter(({ y }) => y === bottom)
   const lowestX = lowest.reduce((total, { x }) => total + x, 0) / lowest.length
   return { left: Math.min(...xs), right: Math.max(...xs) + 1, top: Math.min(...ys), bottom: bottom + 1, lowestX, width, height }
+}
+
+export type ListedAnnotation = Readonly<{ type: string; author: string; contents: string; modified: number }>
+
+/** The annotations of a page as mupdf lists them, dates in milliseconds. */
+export function annotationsOf(file: string, page: number): ListedAnnotation[] {
+  const script = join(mkdtempSync(join(tmpdir(), 'sheafmark-list-')), 'list.js')
+  writeFileSync(script, `var page = new PDFDocument(scriptArgs[0]).loadPage(Number(scriptArgs[1]) - 1)
+print(JSON.stringify(page.getAnnotations().map(function (one) { return { type: one.getType(), author: one.getAuthor(), contents: one.getContents(), modified: Number(one.getModificationDate()) } })))`)
+  return JSON.parse(run('mutool', 'run', script, file, String(page))) as ListedAnnotation[]
 }
 
 /** The pixels of a PPM file: "P6", width, height, 255, then red, green, blue. */

@@ -64,6 +64,12 @@ export const routeRows: readonly RouteRow[] = [
   route('GET /api/returned/[returnedScriptId]/pdf', 'the file of the classmate', (o) => `/api/returned/${o.back.mate}/pdf`, '  401   200   404   404    404    404   404   200'),
   route('GET /api/returned/[returnedScriptId]/pdf', 'no file', () => `/api/returned/${nothing}/pdf`, '                         401   404   404   404    404    404   404   404'),
 
+  // With the marks on it: markers get those of their questions, a moderator those they need not read blind.
+  route('GET /api/scripts/[scriptId]/annotated-pdf', 'a script the marker marks', (o) => `/api/scripts/${o.half.theirs.script}/annotated-pdf`, ' 401 200 404 200 404 404 404 404'),
+  route('GET /api/scripts/[scriptId]/annotated-pdf', 'a script of the sample', (o) => `/api/scripts/${o.sampled.unread.script}/annotated-pdf`, ' 401 200 404 404 200 404 404 404'),
+  route('GET /api/scripts/[scriptId]/annotated-pdf', 'a script outside the sample', (o) => `/api/scripts/${o.sampled.outside.script}/annotated-pdf`, ' 401 200 404 404 403 404 404 404'),
+  route('GET /api/scripts/[scriptId]/annotated-pdf', 'no script', () => `/api/scripts/${nothing}/annotated-pdf`, ' 401 404 404 404 404 404 404 404'),
+
   // Setting and scanning.
   ...onPapers('GET', 'demo-pile', () => ({}), '200'),
   change('POST /api/papers', 'a paper without a title', () => '/api/papers', () => ({ multipart: { form: JSON.stringify({ id: nothing, title: '', step: 1, classSets: [] }) } }), ' 401 400 400 403 403 403 403 403'),

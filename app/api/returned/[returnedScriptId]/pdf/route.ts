@@ -1,3 +1,4 @@
+import { downloadResponse } from '@/app/_door/download-response'
 import { requireActor } from '@/app/_door/require-actor'
 import { respond } from '@/lib/infra/respond'
 import { openReturnedPdf } from '@/lib/tasks/read-returned-script'
@@ -6,12 +7,6 @@ import { openReturnedPdf } from '@/lib/tasks/read-returned-script'
 export async function GET(request: Request, { params }: { params: Promise<{ returnedScriptId: string }> }): Promise<Response> {
   return respond(request, async () => {
     const { bytes, name } = await openReturnedPdf(await requireActor(), (await params).returnedScriptId)
-    const plain = name.normalize('NFKD').replace(/[^\w.,() -]/g, '')
-    return new Response(new Uint8Array(bytes), {
-      headers: {
-        'content-type': 'application/pdf', 'content-length': String(bytes.length), 'cache-control': 'private, no-store',
-        'content-disposition': `attachment; filename="${plain}"; filename*=UTF-8''${encodeURIComponent(name)}`,
-      },
-    })
+    return downloadResponse(bytes, name)
   })
 }

@@ -1,4 +1,4 @@
-import { readFile, writeFile } from 'node:fs/promises'
+import { open, readFile, writeFile } from 'node:fs/promises'
 import { join } from 'node:path'
 import { parseArgs } from 'node:util'
 import { z } from 'zod'
@@ -27,6 +27,16 @@ async function input(path: string): Promise<Buffer> {
   })
 }
 
+/** A file that is read piece by piece must be there too. */
+async function assertReadable(path: string): Promise<void> {
+  const handle = await open(path).catch((error: NodeJS.ErrnoException) => {
+    throw new BadInput(`${path} ${error.code === 'ENOENT' ? 'does not exist' : 'cannot be read'}`)
+  })
+  const isFile = (await handle.stat()).isFile()
+  await handle.close()
+  if (!isFile) throw new BadInput(`${path} is a folder, not a file`)
+}
+
 /** What of a paper.json the engine needs. */
 const PaperFile = z.object({ pages: z.int().min(1).optional() })
 
@@ -51,7 +61,8 @@ async function main(): Promise<void> {
   const paper = await named(paperFile, input(paperFile).then((bytes) => openBlankPaper(bytes)))
   if (said !== undefined && said !== paper.length) throw new BadInput(`${paperFile} has ${paper.length} pages, paper.json says ${said}`)
   const called = performance.now()
-  const result = await named(values.sheaf, input(values.sheaf).then((bytes) => ingestSheaf({ sheaf: bytes, paper, threads })))
+  await assertReadable(values.sheaf)
+  const result = await named(values.sheaf, ingestSheaf({ sheaf: values.sheaf, paper, threads }))
   const pages = result.findings.map(({ index, half, kind, script, paperPage, rotation, homography, confidence, reasons, problem }) => ({
     index, ...(half === undefined ? {} : { half }), kind, script, paper_page: paperPage, rotation, homography, confidence: Number(confidence.toFixed(3)), reasons, ...(problem ? { problem } : {}),
   }))

@@ -18,7 +18,8 @@ export function* contentTokens(bytes: Uint8Array): Generator<ContentToken> {
     else if (c === 0x25) while (at < bytes.length && bytes[at] !== 10 && bytes[at] !== 13) at++
     else if (c === 0x2f) {
       at++
-      yield { kind: 'name', value: word() }
+      const text = word()
+      yield { kind: 'name', value: text.includes('#') ? text.replace(/#([0-9a-fA-F]{2})/g, (_, hex: string) => String.fromCharCode(Number.parseInt(hex, 16))) : text }
     } else if (c === 0x28) {
       at = afterString(bytes, at)
       yield { kind: 'other' }

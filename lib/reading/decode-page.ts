@@ -3,37 +3,35 @@ import { AppError } from '@/lib/core/errors'
 import type { GreyPicture } from '@/lib/core/grey-picture'
 import type { PageImage } from '@/lib/core/leaf'
 import { g4Tiff } from './g4-tiff'
-import type { OpenDocument } from './pdfium'
+import type { OpenSheaf } from './open-sheaf'
+import { openDocument, resetPdfium, type OpenDocument } from './pdfium'
 import { boxOf, drawPage, frameOf, renderedImage } from './render-page'
-import { mostPixels, type SheafPage } from './sheaf-page'
+import { mostPixels, type LiftedImage } from './sheaf-page'
 
 /** A page's stored image in grey, with the frame it is in. */
 export type DecodedPage = Readonly<{ image: PageImage; picture: GreyPicture }>
 
 /**
- * Decodes a page's stored image to grey, in full. `sheaf` opens the whole file; it is asked only when the page has to be drawn
- * (an image stream that turns out broken is tried that way too) and stays open. Throws page_unreadable, with detail `too_large` for pages of absurd size.
+ * Decodes a page's stored image to grey, in full. A page without an image of its own is drawn; an image stream that turns out
+ * broken is tried that way too. Throws page_unreadable, with detail `too_large` for pages of absurd size.
  */
-export async function decodePage(page: SheafPage, sheaf: () => Promise<OpenDocument>): Promise<DecodedPage> {
+export async function decodePage(sheaf: OpenSheaf, index: number): Promise<DecodedPage> {
+  const page = sheaf.page(index)
   if (page.image) {
     const picture = await decodeStream(page).catch(() => null)
     if (picture) return { image: { ...page.image, width: picture.width, height: picture.height }, picture }
-  } else if (page.problem !== 'must_render') throw unreadable(page.index, page.problem === 'page_too_large')
-  const open = await sheaf().catch(() => {
-    throw unreadable(page.index)
-  })
-  return drawStoredPage(open, page.index, 1)
+  } else if (page.problem !== 'must_render') throw unreadable(index, page.problem === 'page_too_large')
+  return drawStoredPage(sheaf, index, 1)
 }
 
 /** The image behind a page as sharp reads it: its own pixels, not turned, true black on white. */
-export function sharpOf(page: SheafPage & { image: PageImage }): Sharp {
-  const { image, bytes, inverted } = page
+export function sharpOf({ image, bytes, inverted }: LiftedImage): Sharp {
   if (image.encoding === 'g4') return sharp(g4Tiff(bytes, image.width, image.height, inverted), { failOn: 'none', limitInputPixels: mostPixels })
   const picture = sharp(bytes, { failOn: 'none', limitInputPixels: mostPixels })
   return inverted ? picture.negate() : picture
 }
 
-async function decodeStream(page: SheafPage & { image: PageImage }): Promise<GreyPicture> {
+async function decodeStream(page: LiftedImage): Promise<GreyPicture> {
   const { data, info } = await sharpOf(page).toColourspace('b-w').raw().toBuffer({ resolveWithObject: true })
   if (info.channels === 1) return { width: info.width, height: info.height, data }
   const grey = new Uint8Array(info.width * info.height)
@@ -42,14 +40,31 @@ async function decodeStream(page: SheafPage & { image: PageImage }): Promise<Gre
 }
 
 /**
- * Draws one page of an open sheaf in its stored frame; three channels are red, green, blue. Throws page_unreadable, also when an image is
+ * Draws one page of a sheaf in its stored frame; three channels are red, green, blue. Throws page_unreadable, also when an image is
  * there and nothing of it can be seen: such a page must not pass for an empty one.
  */
-export function drawStoredPage({ engine, document }: OpenDocument, index: number, channels: 1 | 3): DecodedPage {
-  const page = engine._FPDF_LoadPage(document, index)
+export async function drawStoredPage(sheaf: OpenSheaf, index: number, channels: 1 | 3): Promise<DecodedPage> {
+  const { parts, unit } = sheaf.alone(index)
+  const document = await openDocument(parts).catch(() => {
+    throw unreadable(index)
+  })
+  try {
+    return drawOnly(document, index, channels, unit)
+  } catch (error) {
+    if (error instanceof AppError) throw error
+    // the engine gave up in the middle: what it holds is not to be trusted any more
+    resetPdfium()
+    throw unreadable(index)
+  } finally {
+    document.close()
+  }
+}
+
+function drawOnly({ engine, document }: OpenDocument, index: number, channels: 1 | 3, unit: number): DecodedPage {
+  const page = engine._FPDF_LoadPage(document, 0)
   if (!page) throw unreadable(index)
   try {
-    const box = boxOf(engine, page)
+    const box = { ...boxOf(engine, page), unit }
     const { frame, hasImages } = frameOf(engine, page, box)
     if (frame.width * frame.height > mostPixels) throw unreadable(index, true)
     const picture = drawPage(engine, page, box, frame, channels)

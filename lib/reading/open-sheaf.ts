@@ -1,70 +1,74 @@
-import { EncryptedPDFError, PDFDocument } from 'pdf-lib'
 import { AppError } from '@/lib/core/errors'
 import { liftImage } from './lift-image'
-import { openDocument } from './pdfium'
+import { pageAlone } from './page-alone'
+import { pageSource, type PageSource } from './page-source'
+import { listPages, type PageEntry } from './page-tree'
+import { FileWindow } from './pdf/file-window'
+import { PdfFile, isFault } from './pdf/pdf-file'
+import { TooLarge } from './pdf/value'
 import type { SheafPage } from './sheaf-page'
 
 const mostPages = 2000
 
-/** A sheaf whose pages can be taken out one after the other. `index` counts from 0. */
-export type OpenSheaf = Readonly<{ pageCount: number; page: (index: number) => SheafPage }>
+/** A sheaf whose pages can be taken out one after the other, read from its file as they are asked for. `index` counts from 0. Close it after use. */
+export type OpenSheaf = Readonly<{
+  pageCount: number
+  /** Never throws for what is wrong with a page. */
+  page: (index: number) => SheafPage
+  /** The page as a PDF of its own, in pieces, for drawing, and the points of its unit. Throws page_unreadable. */
+  alone: (index: number) => Readonly<{ parts: readonly Uint8Array[]; unit: number }>
+  close: () => void
+}>
 
 /**
- * Opens a sheaf from its bytes, judging by content alone.
+ * Opens a sheaf, judging by content alone. Only what is asked for is read, whatever the file's size.
  * Throws file_empty, file_not_pdf, file_encrypted (asks for a password), file_damaged, file_no_pages or too_many_pages.
  * A single bad page is not an error: `page` marks it and it becomes a loose sheet.
  */
-export async function openSheaf(bytes: Uint8Array): Promise<OpenSheaf> {
-  if (bytes.length === 0) throw new AppError('file_empty')
-  if (!hasHeader(bytes)) throw new AppError('file_not_pdf')
-  const sheaf = (await walkable(bytes)) ?? (await withoutEnd(bytes)) ?? (await drawable(bytes))
-  if (sheaf.pageCount === 0) throw new AppError('file_no_pages')
-  if (sheaf.pageCount > mostPages) throw new AppError('too_many_pages', { pages: sheaf.pageCount, most: mostPages })
-  return sheaf
-}
-
-/** %PDF- within the first kilobyte, as readers agree to accept it. */
-function hasHeader(bytes: Uint8Array): boolean {
-  return Buffer.from(bytes.buffer, bytes.byteOffset, Math.min(1024, bytes.length)).includes('%PDF-')
-}
-
-/** The sheaf by its object tree; null when that cannot be walked (enciphered, or too damaged). */
-async function walkable(bytes: Uint8Array): Promise<OpenSheaf | null> {
-  let pages
+export function openSheaf(path: string): OpenSheaf {
+  const file = new FileWindow(path)
   try {
-    pages = (await PDFDocument.load(bytes, { updateMetadata: false })).getPages()
+    if (file.size === 0) throw new AppError('file_empty')
+    // within the first kilobyte, as readers agree to accept it
+    if (!file.read(0, 1024).includes('%PDF-')) throw new AppError('file_not_pdf')
+    const pdf = new PdfFile(file)
+    const pages = pagesOf(pdf)
+    const source = (index: number): PageSource | null => pageSource(pdf, pages[index]!)
+    return { pageCount: pages.length, page: (index) => pageOf(source, index), alone: (index) => aloneOf(source, index), close: () => file.close() }
   } catch (error) {
-    if (error instanceof AppError) throw error
-    if (!(error instanceof EncryptedPDFError) && !(error instanceof Error)) throw error
-    return null
+    file.close()
+    throw error instanceof AppError || !isFault(error) ? error : new AppError('file_damaged')
   }
-  const page = (index: number): SheafPage => {
-    try {
-      return liftImage(pages[index]!, index) ?? mustRender(index)
-    } catch {
-      return mustRender(index)
-    }
+}
+
+function pagesOf(pdf: PdfFile): PageEntry[] {
+  const pages = listPages(pdf)
+  if (!pages) throw new AppError('file_damaged')
+  if (pages.length === 0) throw new AppError('file_no_pages')
+  if (pages.length > mostPages) throw new AppError('too_many_pages', { pages: pages.length, most: mostPages })
+  return pages
+}
+
+function pageOf(source: (index: number) => PageSource | null, index: number): SheafPage {
+  try {
+    const found = source(index)
+    if (!found) return { index, image: null, problem: 'page_unreadable' }
+    const lifted = liftImage(found)
+    if (lifted === 'too_large') return { index, image: null, problem: 'page_too_large' }
+    return lifted ? { index, ...lifted } : { index, image: null, problem: 'must_render' }
+  } catch (error) {
+    if (!isFault(error)) throw error
+    return { index, image: null, problem: error instanceof TooLarge ? 'page_too_large' : 'must_render' }
   }
-  return { pageCount: pages.length, page }
 }
 
-/** A file that broke off: its whole objects alone, up to the last one, when they still hold pages. */
-async function withoutEnd(bytes: Uint8Array): Promise<OpenSheaf | null> {
-  const view = Buffer.from(bytes.buffer, bytes.byteOffset, bytes.length)
-  if (view.includes('/Encrypt')) return null
-  const end = view.lastIndexOf('endobj')
-  const sheaf = end < 0 ? null : await walkable(bytes.subarray(0, end + 'endobj'.length + 1))
-  return sheaf && sheaf.pageCount > 0 ? sheaf : null
-}
-
-/** The sheaf as the PDF engine sees it: every page is drawn. */
-async function drawable(bytes: Uint8Array): Promise<OpenSheaf> {
-  const { engine, document, close } = await openDocument(bytes)
-  const pageCount = engine._FPDF_GetPageCount(document)
-  close()
-  return { pageCount, page: mustRender }
-}
-
-function mustRender(index: number): SheafPage {
-  return { index, image: null, bytes: null, problem: 'must_render' }
+function aloneOf(source: (index: number) => PageSource | null, index: number): ReturnType<OpenSheaf['alone']> {
+  try {
+    const found = source(index)
+    if (found) return { parts: pageAlone(found), unit: found.box.unit ?? 1 }
+  } catch (error) {
+    if (!isFault(error)) throw error
+    throw new AppError('page_unreadable', { page: index + 1, too_large: error instanceof TooLarge })
+  }
+  throw new AppError('page_unreadable', { page: index + 1, too_large: false })
 }

@@ -22,16 +22,37 @@ type Calls = {
   _FPDFBitmap_FillRect(bitmap: number, left: number, top: number, width: number, height: number, colour: number): void
   _FPDFBitmap_Destroy(bitmap: number): void
   _FPDF_RenderPageBitmapWithMatrix(bitmap: number, page: number, matrix: number, clip: number, flags: number): void
-  wasmExports: { malloc(size: number): number; free(at: number): void }
+  wasmExports: { malloc(size: number): number; free(at: number): void; memory: WebAssembly.Memory }
   HEAPU8: Uint8Array
 }
 export type Pdfium = Calls
 
+/** The engine may take this much memory: a page of the most pixels, its picture, and what stands between. */
+const mostBytes = 900 << 20
+/** An engine that has grown beyond this is let go of: its memory never shrinks. */
+const mostKept = 192 << 20
+const blockBytes = 65536
+
 let loading: Promise<Calls> | null = null
 /** The PDF engine, loaded once a thread. */
 export function pdfium(): Promise<Pdfium> {
-  loading ??= PDFiumLibrary.init().then((library) => (library as unknown as { module: Calls }).module)
+  loading ??= PDFiumLibrary.init().then((library) => limited((library as unknown as { module: Calls }).module))
   return loading
+}
+
+/** Takes a fresh engine for what follows. */
+export function resetPdfium(): void {
+  loading = null
+}
+
+function limited(engine: Calls): Calls {
+  const { memory } = engine.wasmExports
+  const grow = memory.grow.bind(memory)
+  memory.grow = (blocks) => {
+    if (memory.buffer.byteLength + blocks * blockBytes > mostBytes) throw new RangeError('a page takes too much memory')
+    return grow(blocks)
+  }
+  return engine
 }
 
 const wrongPassword = 4
@@ -39,23 +60,43 @@ const wrongPassword = 4
 /** A document in the engine's memory. Close it after use. */
 export type OpenDocument = Readonly<{ engine: Pdfium; document: number; close: () => void }>
 
-/** Opens a document from its bytes. Throws file_encrypted when it asks for a password, file_damaged when it cannot be read. */
-export async function openDocument(bytes: Uint8Array): Promise<OpenDocument> {
+/** Opens a document from its bytes, in one or more pieces. Throws file_encrypted when it asks for a password, file_damaged when it cannot be read. */
+export async function openDocument(bytes: Uint8Array | readonly Uint8Array[]): Promise<OpenDocument> {
+  const parts = bytes instanceof Uint8Array ? [bytes] : bytes
+  const size = parts.reduce((total, part) => total + part.length, 0)
   const engine = await pdfium()
-  const at = engine.wasmExports.malloc(bytes.length)
+  const at = engine.wasmExports.malloc(size)
   if (!at) throw new AppError('file_too_large')
-  engine.HEAPU8.set(bytes, at)
-  const document = engine._FPDF_LoadMemDocument(at, bytes.length, 0)
-  if (!document) {
-    const error = engine._FPDF_GetLastError()
-    engine.wasmExports.free(at)
-    throw new AppError(error === wrongPassword ? 'file_encrypted' : 'file_damaged')
+  let to = at
+  for (const part of parts) {
+    engine.HEAPU8.set(part, to)
+    to += part.length
   }
+  const document = loaded(engine, at, size)
   const close = () => {
-    engine._FPDF_CloseDocument(document)
-    engine.wasmExports.free(at)
+    // an engine that gave up does not let itself be tidied either
+    try {
+      engine._FPDF_CloseDocument(document)
+      engine.wasmExports.free(at)
+    } catch {
+      resetPdfium()
+    }
+    if (engine.HEAPU8.length > mostKept) resetPdfium()
   }
   return { engine, document, close }
+}
+
+function loaded(engine: Pdfium, at: number, size: number): number {
+  try {
+    const document = engine._FPDF_LoadMemDocument(at, size, 0)
+    if (document) return document
+  } catch {
+    resetPdfium()
+    throw new AppError('file_damaged')
+  }
+  const error = engine._FPDF_GetLastError()
+  engine.wasmExports.free(at)
+  throw new AppError(error === wrongPassword ? 'file_encrypted' : 'file_damaged')
 }
 
 /** Lends `floats` 32-bit numbers of the engine's memory to `work`, which gets their address and a reader. */

@@ -1,8 +1,8 @@
 import type { Turn } from '@/lib/core/paper-space'
 import { chain, undo, type Affine } from './affine'
 
-/** The shown part of a page in its own user space (points, y up), and its /Rotate. */
-export type PageBox = Readonly<{ left: number; bottom: number; width: number; height: number; turn: Turn }>
+/** The shown part of a page in its own user space (y up), its /Rotate, and how many points a unit of that space is (1 where it says nothing). */
+export type PageBox = Readonly<{ left: number; bottom: number; width: number; height: number; turn: Turn; unit?: number }>
 /** The stored image's frame: its pixels, their density on the page, how the page shows it, and user space -> pixels. */
 export type StoredFrame = Readonly<{ width: number; height: number; dpiX: number; dpiY: number; shownTurn: Turn; toPixels: Affine }>
 
@@ -12,9 +12,10 @@ const coversPage = 0.9
 export function imageFrame(box: PageBox, matrix: Affine, width: number, height: number): StoredFrame | null {
   const [a, b, c, d] = matrix
   const back = undo(matrix)
-  const along = Math.hypot(a, b)
-  const down = Math.hypot(c, d)
-  if (!back || a * d - b * c <= 0 || Math.abs(a * c + b * d) > 0.02 * along * down) return null
+  const { unit = 1 } = box
+  const along = Math.hypot(a, b) * unit
+  const down = Math.hypot(c, d) * unit
+  if (!back || a * d - b * c <= 0 || Math.abs(a * c + b * d) * unit * unit > 0.02 * along * down) return null
   const quarter = Math.round((Math.atan2(b, a) * 2) / Math.PI)
   const shownTurn = ((((box.turn / 90 - quarter) % 4) + 4) % 4) * 90
   return {
@@ -25,7 +26,7 @@ export function imageFrame(box: PageBox, matrix: Affine, width: number, height: 
 
 /** The frame of a page drawn as a whole: before its /Rotate, at so many dots per inch. */
 export function pageFrame(box: PageBox, dpi: number): StoredFrame {
-  const k = dpi / 72
+  const k = (dpi * (box.unit ?? 1)) / 72
   return {
     width: Math.max(1, Math.round(box.width * k)), height: Math.max(1, Math.round(box.height * k)), dpiX: dpi, dpiY: dpi, shownTurn: box.turn,
     toPixels: [k, 0, 0, -k, -box.left * k, (box.bottom + box.height) * k],

@@ -4,7 +4,8 @@ import { placeLeaves } from '@/lib/placing/place-leaves'
 import { openLeaves, readLeaves } from './read-leaves'
 
 export type SheafInput = Readonly<{
-  sheaf: Uint8Array | string
+  /** The path of its file. */
+  sheaf: string
   paper: readonly BlankPage[]
   threads?: number
   /** Readings stored before: those leaves are not read again. */

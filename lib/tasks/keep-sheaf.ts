@@ -1,4 +1,3 @@
-import { readFile } from 'node:fs/promises'
 import type { Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
 import { newId } from '@/lib/core/ids'
@@ -8,8 +7,8 @@ import { db, transaction } from '@/db/knex'
 import { addSheaf, findSheafOfBytes } from '@/db/sheaves'
 import { addStoredFile } from '@/db/stored-files'
 import { keepFile } from '@/lib/infra/file-store'
-import { openSheaf } from '@/lib/reading/open-sheaf'
 import { gatePaper } from './gate-paper'
+import { lookAtSheaf } from './look-at-sheaf'
 
 export type KeepSheaf = Readonly<{ paperId: string; /** A file on this disk; it is moved into the store. */ file: string; name: string; classSetIds: readonly string[] }>
 
@@ -19,7 +18,7 @@ export type KeepSheaf = Readonly<{ paperId: string; /** A file on this disk; it 
  */
 export async function keepSheaf(actor: Actor, { paperId, file, name, classSetIds }: KeepSheaf): Promise<string> {
   await gatePaper(db(), actor, 'change', paperId)
-  const leafCount = (await openSheaf(await readFile(file))).pageCount
+  const { pageCount: leafCount } = await lookAtSheaf(file)
   const { sha256, size } = await keepFile(file)
   return transaction(async (trx) => {
     if (await findSheafOfBytes(trx, paperId, sha256)) throw new AppError('file_same')

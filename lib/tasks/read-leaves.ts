@@ -1,13 +1,13 @@
-import { readFile } from 'node:fs/promises'
 import type { BlankPage } from '@/lib/core/grey-picture'
 import { unread, type LeafReading, type PageGuess } from '@/lib/core/leaf'
 import { newId } from '@/lib/core/ids'
 import { threadPool } from '@/lib/infra/thread-pool'
-import { openSheaf } from '@/lib/reading/open-sheaf'
-import type { LeafAnswer, LeafJob } from './leaf-thread'
+import { answered } from './look-at-sheaf'
+import type { LeafAnswer, LeafJob, LookJob } from './leaf-thread'
+import type { SheafAnswer } from './sheaf-thread'
 
 /** A page that takes longer than this is given up, in milliseconds; its thread with it. */
-const longest = 90_000
+const longest = 45_000
 
 /** Reads leaves of one sheaf against one blank paper, on threads of its own. Close it after use. */
 export type LeafReader = Readonly<{
@@ -23,25 +23,28 @@ export type LeafReader = Readonly<{
 
 /**
  * Opens a sheaf for reading leaf by leaf. Throws the file errors: file_empty, file_not_pdf, file_encrypted, file_damaged, file_no_pages, too_many_pages.
- * @param sheaf its bytes, or the path of its file
+ * @param file the path of the sheaf's file; only the leaf in work is in memory
  * @param paper the blank paper's pages, as openBlankPaper gives them
  */
-export async function openLeaves(sheaf: Uint8Array | string, paper: readonly BlankPage[], threads = 1): Promise<LeafReader> {
-  const bytes = shared(typeof sheaf === 'string' ? await readFile(sheaf) : sheaf)
-  const open = await openSheaf(bytes)
+export async function openLeaves(file: string, paper: readonly BlankPage[], threads = 1): Promise<LeafReader> {
   const pool = threadPool('lib/tasks/leaf-thread.ts', threads)
+  const look = pool.run({ look: file } satisfies LookJob, { signal: AbortSignal.timeout(longest) }) as Promise<SheafAnswer>
+  const { pageCount } = await answered(look, 'file_damaged').catch(async (error: unknown) => {
+    await pool.destroy()
+    throw error
+  })
   const pages = paper.map((page) => ({ ...page, picture: { ...page.picture, data: shared(page.picture.data) } }))
   const paperKey = newId()
-  const common = { sheaf: bytes, paperKey, paper: pages }
+  const common = { file, paperKey, paper: pages }
   const run = async (index: number, onto?: number): Promise<LeafAnswer | null> => {
-    const job: LeafJob = { page: open.page(index), ...common, ...(onto === undefined ? {} : { onto }) }
+    const job: LeafJob = { index, ...common, ...(onto === undefined ? {} : { onto }) }
     // a page that kills its thread is reported like one that cannot be read
     return (pool.run(job, { signal: AbortSignal.timeout(longest) }) as Promise<LeafAnswer>).catch(() => null)
   }
   return {
-    pageCount: open.pageCount,
+    pageCount,
     ready: async () => {
-      await Promise.all(Array.from({ length: threads }, () => pool.run({ page: null, ...common } satisfies LeafJob)))
+      await Promise.all(Array.from({ length: threads }, () => pool.run({ index: null, ...common } satisfies LeafJob)))
     },
     read: async (index) => (await run(index))?.reading ?? unread(index, 'page_unreadable'),
     readOnto: async (index, paperPage) => (await run(index, paperPage))?.onto ?? null,

@@ -2,14 +2,17 @@ import next from 'eslint-config-next/core-web-vitals'
 import tseslint from 'typescript-eslint'
 
 // Who may import whom: the table of DEVELOPERS.md. A folder always may import itself.
-const arrows = ['setting', 'reading', 'registering', 'placing', 'cutting', 'marking', 'second-marking', 'results', 'handing-back'].map((name) => `lib/${name}`)
-const everything = ['lib/core', ...arrows, 'lib/infra', 'lib/tasks', 'db', 'components', 'app', 'scripts', 'seeds', 'tests', 'migrations']
+const arrows = ['setting', 'printing', 'reading', 'registering', 'placing', 'cutting', 'marking', 'second-marking', 'results', 'handing-back'].map((name) => `lib/${name}`)
+// Type for PDFs that are made here: two arrows set it.
+const typesetting = 'lib/typesetting'
+const everything = ['lib/core', typesetting, ...arrows, 'lib/infra', 'lib/tasks', 'db', 'components', 'app', 'scripts', 'seeds', 'tests', 'migrations']
 const mayImport = {
   'lib/core': [],
-  ...Object.fromEntries(arrows.map((arrow) => [arrow, ['lib/core']])),
+  [typesetting]: ['lib/core'],
+  ...Object.fromEntries(arrows.map((arrow) => [arrow, ['lib/core', ...(['lib/printing', 'lib/handing-back'].includes(arrow) ? [typesetting] : [])]])),
   'lib/infra': ['lib/core'],
   db: ['lib/core', 'lib/infra'],
-  'lib/tasks': ['lib/core', ...arrows, 'lib/infra', 'db'],
+  'lib/tasks': ['lib/core', typesetting, ...arrows, 'lib/infra', 'db'],
   components: ['lib/core'],
   app: ['lib/core', 'lib/infra', 'lib/tasks', 'components'],
   migrations: [],

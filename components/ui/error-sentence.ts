@@ -1,5 +1,15 @@
 import type { ErrorCode, ErrorDetail } from '@/lib/core/errors'
 
+/** What a place for a code is wrong for, after its page. */
+export const codeFaults: Record<string, string> = {
+  off_page: 'the code is too near the edge, where printers leave white. Move it in.',
+  too_small: 'a copier could not read a code that small. It needs 18 mm with the white round it.',
+  too_large: 'the code is larger than it needs to be. 40 mm is the most.',
+  over_print: 'print lies under the code. Move it to where the paper is white.',
+  over_space: 'the code lies on an answer space or a box to write in. Move it off.',
+  no_room_for_name: 'there is no free line beside the code for the student’s name. Move it to where there is more white.',
+}
+
 const sentences: Record<ErrorCode | 'failed', string | ((detail: ErrorDetail) => string)> = {
   failed: 'Something went wrong here, and it has been written down. Nothing you saved is lost. Try once more.',
   signed_out: 'You have been signed out. Sign in again to go on.',
@@ -37,6 +47,9 @@ const sentences: Record<ErrorCode | 'failed', string | ((detail: ErrorDetail) =>
   too_many_pages: ({ most }) => `This PDF has more than ${most ?? 2000} pages. Split it and choose the parts.`,
   file_same: 'This very file is here already. Nothing was added.',
   page_unreadable: 'This page cannot be read. Scan that sheet again.',
+  file_locked: 'This blank paper is locked against changes, so no codes can be printed on it. Print it to a new PDF, and put that in as the blank paper.',
+  code_place_bad: ({ page, why }) => `Page ${page}: ${codeFaults[String(why)] ?? 'the code cannot stand there.'}`,
+  code_place_missing: ({ page }) => `Page ${page ?? 1} has no place for its code yet. Give it one first.`,
   place_taken: 'There is a page in that place already. Take it out first, or make this one an extra page.',
   no_registration: 'The printed lines do not fit that page. Drag its four corners to show where the page lies.',
   name_taken: ({ script }) => `Script ${script ?? 'elsewhere'} bears this name already. Look at both name boxes: one of them is someone else’s.`,

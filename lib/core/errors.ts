@@ -44,6 +44,9 @@ export const errorStatus = {
   too_many_pages: 422,
   file_same: 409,
   page_unreadable: 422,
+  file_locked: 422,
+  code_place_bad: 422,
+  code_place_missing: 409,
   // placing
   place_taken: 409,
   no_registration: 422,

@@ -1,9 +1,9 @@
 import { PDFHexString, PDFName, PDFString, type PDFDict, type PDFDocument, type PDFPage, type PDFRef } from 'pdf-lib'
 import { boundsOf, penColour, pointsOn, type Ink } from '@/lib/core/ink'
 import { corners, toPixels, type Homography } from '@/lib/core/paper-space'
-import { num, packedForm } from './operators'
+import { num, packedForm } from '@/lib/typesetting/operators'
 import { paintInk, type Drawing, type Drawn } from './paint-ink'
-import type { Typesetter } from './typesetter'
+import type { Typesetter } from '@/lib/typesetting/typesetter'
 
 /** Who put a drawing on the page, and when. */
 export type Signing = (of: Drawn) => Readonly<{ author: string; at: Date }>

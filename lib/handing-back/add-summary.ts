@@ -7,7 +7,7 @@ import type { Summary } from './summary'
 import { drawColumns } from './draw-columns'
 import { SummarySheets, frame, leading, small, soft } from './summary-sheets'
 import { drawTable } from './draw-table'
-import type { Typesetter } from './typesetter'
+import type { Typesetter } from '@/lib/typesetting/typesetter'
 
 /** Draws the summary and returns how many sheets it took. `following` is how many pages of the script come after it. */
 export function addSummary(pdf: PDFDocument, summary: Summary, following: number, type: Typesetter, structure: Structure): number {

@@ -2,9 +2,9 @@ import type { FontRole } from '@/lib/core/text-widths'
 import { penColour, type Ink, type LineInk, type TextInk } from '@/lib/core/ink'
 import { toPixels, type Homography, type PaperPoint } from '@/lib/core/paper-space'
 import type { Pen, StampKind } from '@/lib/core/stamp'
-import type { Face } from './font-files'
-import { actualText, colour, num } from './operators'
-import type { Typesetter } from './typesetter'
+import type { Face } from '@/lib/typesetting/font-files'
+import { actualText, colour, num } from '@/lib/typesetting/operators'
+import type { Typesetter } from '@/lib/typesetting/typesetter'
 
 /** What a drawing is, for a copy whose marking other programs list: a stamp by its id, a question's ring or a page's sum. */
 export type Drawn = Readonly<{ id: string; kind: StampKind | 'question-mark' | 'page-total'; label: string | null; says: string; text: string }>

@@ -4,12 +4,12 @@ import { compose, turnOf, type Homography } from '@/lib/core/paper-space'
 import { addAnnotations, type Signing } from './add-annotations'
 import { readContent } from './content-reader'
 import type { ObjectCopier } from './object-copier'
-import { packed } from './operators'
+import { packed } from '@/lib/typesetting/operators'
 import { pageContent } from './own-resources'
 import { paintInk, type Drawing } from './paint-ink'
 import { pageBox, pixelsToPage, type ImageSize } from './picture-place'
 import type { Structure } from './structure'
-import type { Typesetter } from './typesetter'
+import type { Typesetter } from '@/lib/typesetting/typesetter'
 
 /** A page of a script as it came in and what was marked on it. */
 export type ScriptPage = Readonly<{

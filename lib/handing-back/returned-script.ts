@@ -6,7 +6,7 @@ import { addReturnedPage, type ScriptPage } from './returned-page'
 import { Structure } from './structure'
 import type { Summary } from './summary'
 import { addSummary } from './add-summary'
-import { Typesetter } from './typesetter'
+import { Typesetter } from '@/lib/typesetting/typesetter'
 
 /** One student's script to hand back. `builtAt` is written into the file, so that the same script built again is the same file. */
 export type ScriptToReturn = Readonly<{

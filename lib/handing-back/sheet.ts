@@ -1,10 +1,10 @@
 import { PDFName, type PDFDocument, type PDFPage } from 'pdf-lib'
 import type { Homography } from '@/lib/core/paper-space'
-import type { Face } from './font-files'
-import { actualText, colour, num, packed } from './operators'
+import type { Face } from '@/lib/typesetting/font-files'
+import { actualText, colour, num, packed } from '@/lib/typesetting/operators'
 import { paintInk, type Drawing } from './paint-ink'
 import { Structure } from './structure'
-import type { Typesetter } from './typesetter'
+import type { Typesetter } from '@/lib/typesetting/typesetter'
 
 /** A4 in points. */
 export const sheetSize = { width: 595.28, height: 841.89 }

@@ -6,7 +6,7 @@ import { tickAnchor } from '@/lib/core/stamp-shapes'
 import { ink, type Sheet } from './sheet'
 import type { PointResult } from '@/lib/core/returned'
 import { leading, plain } from './summary-sheets'
-import type { Typesetter } from './typesetter'
+import type { Typesetter } from '@/lib/typesetting/typesetter'
 
 /** A word of a mark point on a line, `x` from the line's left; the point's sign comes after its last word. */
 type Placed = Readonly<{ words: string; x: number; point: PointResult; signX: number | null }>

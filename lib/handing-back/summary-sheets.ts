@@ -1,7 +1,7 @@
 import type { PDFDocument } from 'pdf-lib'
 import { Sheet, ink, sheetSize, type Style } from './sheet'
 import type { Structure } from './structure'
-import type { Typesetter } from './typesetter'
+import type { Typesetter } from '@/lib/typesetting/typesetter'
 
 /** The frame of the summary in points: text runs from left to right, and down to bottom. */
 export const frame = { left: 48, right: sheetSize.width - 48, top: 42, bottom: sheetSize.height - 62 }

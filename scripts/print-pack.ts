@@ -50,7 +50,7 @@ async function main(): Promise<void> {
   await mkdir(values.out, { recursive: true })
   await writeFile(join(values.out, 'pack.pdf'), pdf)
   const printed = packPages(scripts.length, pages.length, values['two-sided'])
-  await writeFile(join(values.out, 'pages.csv'), csv([['pdf_page', 'candidate_number', 'paper_page'], ...printed.flatMap((page, k) => (page ? [[k + 1, scripts[page.script]!.number, page.paperPage]] : []))]))
+  await writeFile(join(values.out, 'pages.csv'), csv([['pdf_page', 'candidate_number', 'paper_page'], ...printed.flatMap((page, k) => (page ? [[k + 1, scripts[page.script]!.number || scripts[page.script]!.name.toLowerCase().replace(' ', '-'), page.paperPage]] : []))]))
   const tokens = scripts.flatMap((script, s) => script.tokens.map((token, k) => [token, s + 1, script.number, k + 1, places[k]!.rect.x, places[k]!.rect.y, places[k]!.rect.w]))
   await writeFile(join(values.out, 'tokens.csv'), csv([['token', 'script', 'candidate_number', 'paper_page', 'x', 'y', 'side'], ...tokens]))
   console.log(`${scripts.length} scripts of ${pages.length} pages in ${took.toFixed(0)} ms, ${(pdf.length / 1024).toFixed(0)} KB`)

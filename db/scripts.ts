@@ -1,20 +1,20 @@
 import type { Db } from './knex'
 
 type ScriptRow = {
-  id: string; class_set_id: string; position: number; student_id: string | null; suggested_student_id: string | null; suggestion_reason: string | null
+  id: string; class_set_id: string; position: number; student_id: string | null; suggested_student_id: string | null; suggestion_reason: string | null; suggestion_certainty: number | null
   confirmed_by: string | null; confirmed_at: number | null; created_at: number
 }
 type PageRow = { id: string; script_id: string; paper_page: number | null; extra: 0 | 1; position: number; leaf_id: string | null }
 
 /** One student's answered test. `studentId` is a confirmed name, else the student is only suggested, for a reason. */
-export type Script = Readonly<{ id: string; classSetId: string; position: number; studentId: string | null; suggestedStudentId: string | null; suggestionReason: string | null; confirmedBy: string | null; confirmedAt: number | null }>
+export type Script = Readonly<{ id: string; classSetId: string; position: number; studentId: string | null; suggestedStudentId: string | null; suggestionReason: string | null; suggestionCertainty: number | null; confirmedBy: string | null; confirmedAt: number | null }>
 /** A page of a script; `leafId` is the scan that holds now. An extra page has no page of the paper behind it. */
 export type ScriptPage = Readonly<{ id: string; scriptId: string; paperPage: number | null; extra: boolean; position: number; leafId: string | null }>
 
 function toScript(row: ScriptRow): Script {
   return {
     id: row.id, classSetId: row.class_set_id, position: row.position, studentId: row.student_id, suggestedStudentId: row.suggested_student_id,
-    suggestionReason: row.suggestion_reason, confirmedBy: row.confirmed_by, confirmedAt: row.confirmed_at,
+    suggestionReason: row.suggestion_reason, suggestionCertainty: row.suggestion_certainty, confirmedBy: row.confirmed_by, confirmedAt: row.confirmed_at,
   }
 }
 
@@ -37,16 +37,16 @@ export async function getScript(db: Db, id: string): Promise<(Script & { paperId
 export async function addScript(db: Db, script: Script): Promise<void> {
   await db<ScriptRow>('scripts').insert({
     id: script.id, class_set_id: script.classSetId, position: script.position, student_id: script.studentId, suggested_student_id: script.suggestedStudentId,
-    suggestion_reason: script.suggestionReason, confirmed_by: script.confirmedBy, confirmed_at: script.confirmedAt, created_at: Date.now(),
+    suggestion_reason: script.suggestionReason, suggestion_certainty: script.suggestionCertainty, confirmed_by: script.confirmedBy, confirmed_at: script.confirmedAt, created_at: Date.now(),
   })
 }
 
-export type ScriptName = Pick<Script, 'classSetId' | 'studentId' | 'suggestedStudentId' | 'suggestionReason' | 'confirmedBy' | 'confirmedAt'>
+export type ScriptName = Pick<Script, 'classSetId' | 'studentId' | 'suggestedStudentId' | 'suggestionReason' | 'suggestionCertainty' | 'confirmedBy' | 'confirmedAt'>
 
 /** Names a script, or takes its name away. The class set goes with the student. */
 export async function setScriptName(db: Db, id: string, name: ScriptName): Promise<void> {
   await db<ScriptRow>('scripts').where({ id }).update({
-    class_set_id: name.classSetId, student_id: name.studentId, suggested_student_id: name.suggestedStudentId, suggestion_reason: name.suggestionReason, confirmed_by: name.confirmedBy, confirmed_at: name.confirmedAt,
+    class_set_id: name.classSetId, student_id: name.studentId, suggested_student_id: name.suggestedStudentId, suggestion_reason: name.suggestionReason, suggestion_certainty: name.suggestionCertainty, confirmed_by: name.confirmedBy, confirmed_at: name.confirmedAt,
   })
 }
 

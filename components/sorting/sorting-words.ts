@@ -72,7 +72,7 @@ export function leftToSort({ loose, scripts }: Pick<SortingTable, 'loose' | 'scr
 }
 
 const actWords: Record<string, string> = {
-  'leaf.placed': 'placing', 'leaf.extra': 'extra page', 'leaf.loosened': 'taking out', 'leaf.set-aside': 'setting aside', 'leaf.turned': 'turn', 'script.named': 'name', 'script.unnamed': 'taking a name away',
+  'leaf.placed': 'placing', 'leaf.extra': 'extra page', 'leaf.loosened': 'taking out', 'leaf.set-aside': 'setting aside', 'leaf.turned': 'turn', 'script.named': 'name', 'script.certain-named': 'certain names', 'script.unnamed': 'taking a name away',
   'student.attendance': 'attendance',
 }
 /** What Z takes back. */

@@ -1,3 +1,4 @@
+import type { NumberReading } from './digit-reading'
 import type { Homography, Turn } from './paper-space'
 
 /**
@@ -26,7 +27,7 @@ export type PageGuess = Readonly<{ paperPage: number; rotation: Turn; homography
  * What one leaf shows by itself, whatever its neighbours are: stored leaf by leaf, so that reading can be taken up again.
  * `guesses` are best first. `clear` says that the first is certain: its print is there and no other page explains it as well.
  * `ink` is the writing on the first guess's page (see InkMap), for telling a second scan of a page from another student's;
- * `pen` is what it was written with.
+ * `pen` is what it was written with; `number` what stands in the candidate number's boxes on that page, when it has any.
  */
 export type LeafReading = Readonly<{
   index: number
@@ -37,6 +38,7 @@ export type LeafReading = Readonly<{
   clear: boolean
   ink: InkMap | null
   pen?: PenTrace | null
+  number?: NumberReading | null
   problem?: LeafProblem
 }>
 

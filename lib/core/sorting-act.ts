@@ -10,6 +10,7 @@ export const SortingAct = z.discriminatedUnion('act', [
   z.object({ act: z.literal('lay'), leafId: z.uuid(), to: z.enum(['loose', 'set_aside']) }),
   z.object({ act: z.literal('turn'), leafId: z.uuid(), turn: z.union([z.literal(0), z.literal(90), z.literal(180), z.literal(270)]) }),
   z.object({ act: z.literal('name'), scriptId: z.uuid(), classSetId: z.uuid(), studentId: z.uuid() }),
+  z.object({ act: z.literal('certain_names'), names: z.array(z.object({ scriptId: z.uuid(), classSetId: z.uuid(), studentId: z.uuid() })).min(1).max(1000) }),
   z.object({ act: z.literal('unname'), scriptId: z.uuid() }),
   z.object({ act: z.literal('attendance'), classSetId: z.uuid(), studentId: z.uuid(), attendance: z.enum(['expected', 'absent', 'excused']) }),
   z.object({ act: z.literal('undo') }),

@@ -8,6 +8,9 @@ export type PlaceTarget = Readonly<{ scriptId: string } | { classSetId: string; 
 export type PlaceReason = 'follows' | 'precedes' | 'second_scan' | 'no_script'
 export type LikelyPlace = Readonly<{ target: PlaceTarget; reason: PlaceReason; apart: number }>
 
+/** From this certainty on a suggested name may be confirmed with others at a glance; only a number that is plainly read gets there. */
+export const certainName = 0.99
+
 export type SortStudent = Readonly<{
   classSetId: string
   className: string
@@ -31,7 +34,12 @@ export type SortScript = Readonly<{
   classSetId: string
   studentId: string | null
   suggestedStudentId: string | null
+  /** Why that student: `number` (the digits in the boxes) or `list_order`. */
   suggestionReason: string | null
+  /** How sure the suggestion is, 0 to 1; from `certainName` on it may be confirmed at a glance. */
+  suggestionCertainty: number | null
+  /** The candidate number as it was read, a dot for each digit that is not sure; null when nothing was read. */
+  numberRead: string | null
   pages: readonly SortScriptPage[]
   missing: readonly number[]
 }>

@@ -16,7 +16,7 @@ export async function confirmName(actor: Actor, { scriptId, classSetId, studentI
     if (other && other.id !== scriptId) throw new AppError('name_taken', { script: other.position })
     await touch.script(scriptId)
     await markPresent(trx, touch, classSetId, studentId)
-    await setScriptName(trx, scriptId, { classSetId, studentId, suggestedStudentId: null, suggestionReason: null, confirmedBy: actor.userId, confirmedAt: now() })
+    await setScriptName(trx, scriptId, { classSetId, studentId, suggestedStudentId: null, suggestionReason: null, suggestionCertainty: null, confirmedBy: actor.userId, confirmedAt: now() })
   })
 }
 
@@ -28,6 +28,6 @@ export async function takeNameAway(actor: Actor, { scriptId }: { scriptId: strin
     const current = await getScript(trx, scriptId)
     if (!current?.studentId) throw new AppError('out_of_date')
     await touch.script(scriptId)
-    await setScriptName(trx, scriptId, { classSetId: current.classSetId, studentId: null, suggestedStudentId: null, suggestionReason: null, confirmedBy: null, confirmedAt: null })
+    await setScriptName(trx, scriptId, { classSetId: current.classSetId, studentId: null, suggestedStudentId: null, suggestionReason: null, suggestionCertainty: null, confirmedBy: null, confirmedAt: null })
   })
 }

@@ -60,7 +60,7 @@ async function putFound(trx: Db, sheaf: Sheaf, found: readonly Found[]): Promise
 
 async function startScript(trx: Db, classSetId: string, position: number): Promise<string> {
   const id = newId()
-  await addScript(trx, { id, classSetId, position, studentId: null, suggestedStudentId: null, suggestionReason: null, confirmedBy: null, confirmedAt: null })
+  await addScript(trx, { id, classSetId, position, studentId: null, suggestedStudentId: null, suggestionReason: null, suggestionCertainty: null, confirmedBy: null, confirmedAt: null })
   return id
 }
 

@@ -1,4 +1,5 @@
 import type { Actor } from '@/lib/core/actor'
+import { sayNumberRead, type NumberReading } from '@/lib/core/digit-reading'
 import { AppError } from '@/lib/core/errors'
 import type { Turn } from '@/lib/core/paper-space'
 import type { LeafNeighbour, LeafStub, LooseLeaf, PlaceTarget, SortScript, SortScriptPage, SortStudent, SortingTable } from '@/lib/core/sorting'
@@ -11,6 +12,7 @@ import { listSheaves } from '@/db/sheaves'
 import { lastSortingDecision } from '@/db/sorting-decisions'
 import { likelyPlaces } from '@/lib/placing/likely-places'
 import { gatePaper } from './gate-paper'
+import { readNumbers } from './read-numbers'
 
 /** Loose sheets with what is known of them, names to confirm, and everyone's script: what the sorting table shows. */
 export async function readSortingTable(actor: Actor, paperId: string): Promise<SortingTable> {
@@ -53,13 +55,18 @@ async function studentsOf(classes: readonly SittingClass[]): Promise<SortStudent
 async function scriptsOf(paperId: string, paperPages: readonly number[], turns: ReadonlyMap<string, Turn>): Promise<SortScript[]> {
   const pages = new Map<string, SortScriptPage[]>()
   for (const { id, scriptId, paperPage, leafId } of await listScriptPages(db(), paperId)) pages.set(scriptId, [...(pages.get(scriptId) ?? []), { id, paperPage, leafId, turn: turns.get(leafId ?? '') ?? 0 }])
+  const numbers = await readNumbers(db(), paperId)
   return (await listScripts(db(), paperId)).map((script) => {
     const own = pages.get(script.id) ?? []
     return {
       id: script.id, number: script.position, classSetId: script.classSetId, studentId: script.studentId, suggestedStudentId: script.suggestedStudentId,
-      suggestionReason: script.suggestionReason, pages: own, missing: paperPages.filter((page) => !own.some(({ paperPage, leafId }) => paperPage === page && leafId !== null)),
+      suggestionReason: script.suggestionReason, suggestionCertainty: script.suggestionCertainty, numberRead: sayNumberOf(numbers.get(script.id)), pages: own, missing: paperPages.filter((page) => !own.some(({ paperPage, leafId }) => paperPage === page && leafId !== null)),
     }
   })
+}
+
+function sayNumberOf(number: NumberReading | undefined): string | null {
+  return number ? sayNumberRead(number) : null
 }
 
 function looseOf(leaf: Leaf, evidence: LeafEvidence | null, pile: Pile): Omit<LooseLeaf, keyof LeafStub> {

@@ -24,7 +24,7 @@ export async function scriptFor(trx: Db, touch: Touch, actor: Actor, paperId: st
   const id = newId()
   await touch.script(id)
   await markPresent(trx, touch, classSetId, studentId)
-  await addScript(trx, { id, classSetId, position: await nextScriptPosition(trx, paperId), studentId, suggestedStudentId: null, suggestionReason: null, confirmedBy: actor.userId, confirmedAt: now() })
+  await addScript(trx, { id, classSetId, position: await nextScriptPosition(trx, paperId), studentId, suggestedStudentId: null, suggestionReason: null, suggestionCertainty: null, confirmedBy: actor.userId, confirmedAt: now() })
   return id
 }
 

@@ -72,8 +72,8 @@ export async function rowsNow(db: Db, ids: Ids): Promise<SortingRows> {
 
 function withoutPaper(script: Script | null): Script | null {
   if (!script) return null
-  const { id, classSetId, position, studentId, suggestedStudentId, suggestionReason, confirmedBy, confirmedAt } = script
-  return { id, classSetId, position, studentId, suggestedStudentId, suggestionReason, confirmedBy, confirmedAt }
+  const { id, classSetId, position, studentId, suggestedStudentId, suggestionReason, suggestionCertainty, confirmedBy, confirmedAt } = script
+  return { id, classSetId, position, studentId, suggestedStudentId, suggestionReason, suggestionCertainty, confirmedBy, confirmedAt }
 }
 
 /** Whether rows stand as they were left. What is only suggested may have changed meanwhile. */

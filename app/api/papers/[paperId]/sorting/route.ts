@@ -3,6 +3,7 @@ import type { Actor } from '@/lib/core/actor'
 import { SortingAct, type GivenSortingAct } from '@/lib/core/sorting-act'
 import { respond } from '@/lib/infra/respond'
 import { addExtraPage } from '@/lib/tasks/add-extra-page'
+import { confirmCertainNames } from '@/lib/tasks/confirm-certain-names'
 import { confirmName, takeNameAway } from '@/lib/tasks/confirm-name'
 import { layLeaf, turnLeaf } from '@/lib/tasks/lay-leaf'
 import { noteAttendance } from '@/lib/tasks/note-attendance'
@@ -34,6 +35,7 @@ async function perform(actor: Actor, paperId: string, act: GivenSortingAct): Pro
     case 'lay': return layLeaf(actor, act)
     case 'turn': return turnLeaf(actor, act)
     case 'name': return confirmName(actor, act)
+    case 'certain_names': return confirmCertainNames(actor, paperId, act.names)
     case 'unname': return takeNameAway(actor, act)
     case 'attendance': return noteAttendance(actor, act)
     case 'undo': return undoSorting(actor, paperId)

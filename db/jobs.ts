@@ -49,3 +49,8 @@ export async function postponeJob(db: Db, id: string, worker: string, delayMs: n
 export async function releaseJob(db: Db, id: string, worker: string): Promise<void> {
   await db<JobRow>('jobs').where({ id, worker, state: 'running' }).update({ state: 'waiting', run_after: Date.now(), lease_until: null, attempts: db.raw('attempts - 1') })
 }
+
+/** Takes back all work asked for on a subject that is going away; a worker in the middle of it finds its lease lost. */
+export async function dropJobs(db: Db, kind: JobKind, subjectId: string): Promise<void> {
+  await db<JobRow>('jobs').where({ kind, subject_id: subjectId }).delete()
+}

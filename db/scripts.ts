@@ -122,3 +122,12 @@ export async function findScriptOfStudent(db: Db, classSetId: string, studentId:
   const row = await db<ScriptRow>('scripts').where({ class_set_id: classSetId, student_id: studentId }).first()
   return row ? toScript(row) : null
 }
+
+/** The scripts all of whose pages were scanned in one sheaf, and those of them in which somebody gave a mark or raised a flag. */
+export async function scriptsOfSheafAlone(db: Db, sheafId: string): Promise<{ ids: string[]; marked: string[] }> {
+  const ids = (await db('scripts').whereExists(db('script_pages').join('leaves', 'leaves.script_page_id', 'script_pages.id').whereRaw('script_pages.script_id = scripts.id').where('leaves.sheaf_id', sheafId))
+    .whereNotExists(db('script_pages').join('leaves', 'leaves.script_page_id', 'script_pages.id').whereRaw('script_pages.script_id = scripts.id').whereNot('leaves.sheaf_id', sheafId)).pluck('scripts.id')) as string[]
+  const touched = (table: 'markings' | 'flags') => db('responses').join(table, `${table}.response_id`, 'responses.id').whereIn('responses.script_id', ids).distinct('responses.script_id').pluck('responses.script_id')
+  const marked = new Set<string>([...((await touched('markings')) as string[]), ...((await touched('flags')) as string[])])
+  return { ids, marked: [...marked] }
+}

@@ -64,3 +64,9 @@ export async function endSheaf(db: Db, id: string, end: { state: 'placed' } | { 
 export async function reopenSheaf(db: Db, id: string): Promise<void> {
   await db<SheafRow>('sheaves').where({ id, state: 'failed' }).update({ state: 'waiting', problem: null, problem_detail: null, finished_at: null })
 }
+
+/** Removes a sheaf with its leaves, none of which lies in a script any more. */
+export async function dropSheaf(db: Db, id: string): Promise<void> {
+  await db('leaves').where({ sheaf_id: id }).delete()
+  await db<SheafRow>('sheaves').where({ id }).delete()
+}

@@ -22,3 +22,10 @@ export async function lastSortingDecision<Rows>(db: Db, paperId: string, userId:
 export async function setSortingUndone(db: Db, id: string): Promise<void> {
   await db<Row>('sorting_decisions').where({ id }).update({ undone_at: Date.now() })
 }
+
+/** Drops what was decided about the leaves of a sheaf, and the scripts in it, that are going away: it can be neither shown nor undone without them. */
+export async function dropDecisionsOnSheaf(db: Db, sheafId: string, scriptIds: readonly string[]): Promise<void> {
+  const onLeaf = "exists (select 1 from json_each(sorting_decisions.before, '$.leaves') touched join leaves on leaves.id = touched.key where leaves.sheaf_id = ?)"
+  const onScript = "exists (select 1 from json_each(sorting_decisions.before, '$.scripts') touched join json_each(?) gone on gone.value = touched.key)"
+  await db<Row>('sorting_decisions').whereRaw(onLeaf, [sheafId]).orWhereRaw(onScript, [JSON.stringify(scriptIds)]).delete()
+}

@@ -13,3 +13,13 @@ export async function getStoredFile(db: Db, id: string): Promise<StoredFile | nu
   const row = await db<FileRow>('stored_files').where({ id }).first()
   return row ? { id: row.id, sha256: row.sha256, size: row.size, mediaType: row.media_type, originalName: row.original_name } : null
 }
+
+/** Drops the row of a file. Its bytes may go too once no other row names them: see isStored. */
+export async function dropStoredFile(db: Db, id: string): Promise<void> {
+  await db<FileRow>('stored_files').where({ id }).delete()
+}
+
+/** Whether any row names these bytes. */
+export async function isStored(db: Db, sha256: string): Promise<boolean> {
+  return Boolean(await db<FileRow>('stored_files').where({ sha256 }).first('id'))
+}

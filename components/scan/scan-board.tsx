@@ -56,7 +56,7 @@ export function ScanBoard({ paperId, start }: { paperId: string; start: ScanPage
       {asking && <ChooseClasses file={asking.name} classSets={data.classSets} onClose={() => setAsking(null)} onChosen={(ids) => { upload.send(asking, ids); setAsking(null) }} />}
       {data.sheaves.length === 0 ? <Empty paperId={paperId} data={data} ready={ready}>{place(true, 'Choose the sheaf')}</Empty> : (
         <div className={style.body}>
-          {data.sheaves.toReversed().map((sheaf, k) => <SheafSection key={sheaf.id} sheaf={sheaf} paperId={paperId} first={k === 0} onAgain={() => readAgain(sheaf.id)} />)}
+          {data.sheaves.toReversed().map((sheaf, k) => <SheafSection key={sheaf.id} sheaf={sheaf} paperId={paperId} first={k === 0} onAgain={() => readAgain(sheaf.id)} onStopped={again} />)}
           <section className={style.next} aria-label="Another sheaf">{place(false, 'Choose another sheaf')}</section>
         </div>
       )}

@@ -2,13 +2,14 @@ import Link from 'next/link'
 import { errorSentence } from '@/components/ui/error-sentence'
 import type { SheafProgress } from '@/lib/core/sheaf-progress'
 import { DrawnLeaves } from './drawn-leaves'
-import { counted, tally, timeLeft } from './sheaf-words'
+import { counted, saidProgress, tally, timeLeft } from './sheaf-words'
+import { StopReading } from './stop-reading'
 import style from './scan.module.css'
 
-type SheafSectionProps = Readonly<{ sheaf: SheafProgress; paperId: string; first: boolean; onAgain: () => void }>
+type SheafSectionProps = Readonly<{ sheaf: SheafProgress; paperId: string; first: boolean; onAgain: () => void; onStopped: () => void }>
 
 /** One sheaf: its leaves as they are read, then what was found in words and where to go next. */
-export function SheafSection({ sheaf, paperId, first, onAgain }: SheafSectionProps) {
+export function SheafSection({ sheaf, paperId, first, onAgain, onStopped }: SheafSectionProps) {
   const Title = first ? 'h1' : 'h2'
   return (
     <section className={style.sheaf} aria-label={sheaf.name}>
@@ -16,7 +17,8 @@ export function SheafSection({ sheaf, paperId, first, onAgain }: SheafSectionPro
       <Title>{titleOf(sheaf)}</Title>
       {sheaf.state === 'failed' && <p role="alert" className="mt-1.5 max-w-[44rem]">{errorSentence(sheaf.problem ?? 'failed', sheaf.problemDetail)} {safe(sheaf)}</p>}
       <DrawnLeaves sheaf={sheaf} />
-      <p className={style.count} role={sheaf.state === 'reading' ? 'status' : undefined}><Count sheaf={sheaf} /></p>
+      <p className={style.count}><Count sheaf={sheaf} /></p>
+      <p className="vh" role="status">{saidProgress(sheaf)}</p>
       {sheaf.leaves.length > 0 && (
         <table className={style.tally}>
           <tbody>
@@ -24,7 +26,7 @@ export function SheafSection({ sheaf, paperId, first, onAgain }: SheafSectionPro
           </tbody>
         </table>
       )}
-      <Next sheaf={sheaf} paperId={paperId} first={first} onAgain={onAgain} />
+      <Next {...{ sheaf, paperId, first, onAgain, onStopped }} />
     </section>
   )
 }
@@ -47,9 +49,17 @@ function Count({ sheaf }: { sheaf: SheafProgress }) {
   return <><span><span className="swipe">leaf {leaves.length + 1}</span> of {leafCount}</span><span>{secondsLeft === null ? '' : timeLeft(secondsLeft)}</span></>
 }
 
-function Next({ sheaf, paperId, first, onAgain }: SheafSectionProps) {
-  if (sheaf.state === 'failed') return <div className={style.row}><button type="button" className="btn" onClick={onAgain}>Read it again</button></div>
-  if (sheaf.state !== 'placed') return <p className={`${style.row} soft`}>You can leave this page: reading goes on, and what is read is kept.</p>
+function Next({ sheaf, paperId, first, onAgain, onStopped }: SheafSectionProps) {
+  if (sheaf.state === 'failed') return <div className={style.row}><button type="button" className="btn" onClick={onAgain}>Read it again</button><StopReading sheaf={sheaf} onStopped={onStopped} /></div>
+  if (sheaf.state !== 'placed') return (
+    <>
+      <div className={style.row}>
+        {sheaf.scripts > 0 && <Link className={`btn ${first ? 'lead' : ''}`} href={`/papers/${paperId}/mark`}>Begin to mark</Link>}
+        <StopReading sheaf={sheaf} onStopped={onStopped} />
+      </div>
+      <p className="soft mt-3">{sheaf.scripts > 0 ? `${counted(sheaf.scripts, 'script is', 'scripts are')} whole and can be marked already; the others follow.` : 'You can leave this page: reading goes on, and what is read is kept.'}</p>
+    </>
+  )
   const loose = sheaf.leaves.filter(({ look }) => look === 'loose' || look === 'unreadable').length
   return (
     <div className={style.row}>

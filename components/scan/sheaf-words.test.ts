@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type { LeafLine } from '@/lib/core/sheaf-progress'
-import { namedLeaves, tally, timeLeft } from './sheaf-words'
+import { namedLeaves, saidProgress, tally, timeLeft } from './sheaf-words'
 
 const leaf = (number: number, look: LeafLine['look'], turned = false): LeafLine => ({ number, look, turned })
 
@@ -24,8 +24,20 @@ describe('what a sheaf is said to hold', () => {
     expect(lines.map(({ what, count }) => [what, count])).toEqual([['Pages recognised', 1], ['Not sure yet', 1]])
   })
 
+  it('counts scripts that are in place before the rest is read', () => {
+    const [found] = tally({ state: 'reading', leaves: [leaf(1, 'placed'), leaf(2, 'placed'), leaf(3, 'clear')], leafCount: 9, scripts: 1 })
+    expect(found).toEqual({ what: 'Pages recognised', count: 3, says: '1 script in place' })
+  })
+
   it('says the time left in round figures', () => {
-    expect(timeLeft(18)).toBe('about 18 s left')
-    expect(timeLeft(200)).toBe('about 3 min left')
+    expect([4, 18, 50, 80, 200, 4000, 9000].map(timeLeft)).toEqual([
+      'a few seconds left', 'about half a minute left', 'about a minute left', 'about a minute left', 'about 3 minutes left', 'about 67 minutes left', 'about 3 hours left',
+    ])
+  })
+
+  it('tells a listener only at every tenth of the way', () => {
+    const after = (n: number) => saidProgress({ state: 'reading', leaves: Array.from({ length: n }, (_, k) => leaf(k + 1, 'clear')), leafCount: 40, secondsLeft: 20 })
+    expect(new Set(Array.from({ length: 41 }, (_, n) => after(n))).size).toBe(11)
+    expect(after(20)).toBe('50 per cent read, about half a minute left')
   })
 })

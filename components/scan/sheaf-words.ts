@@ -14,9 +14,22 @@ export function namedLeaves(numbers: readonly number[]): string {
   return `${numbers.length === 1 ? 'leaf' : 'leaves'} ${list}`
 }
 
-/** "about 18 s left", "about 3 min left". */
+/** "a few seconds left", "about half a minute left", "about 3 minutes left": round enough that it does not flicker from look to look. */
 export function timeLeft(seconds: number): string {
-  return seconds < 90 ? `about ${seconds} s left` : `about ${Math.round(seconds / 60)} min left`
+  if (seconds < 10) return 'a few seconds left'
+  if (seconds < 45) return 'about half a minute left'
+  const minutes = Math.round(seconds / 60)
+  if (minutes < 2) return 'about a minute left'
+  return minutes < 90 ? `about ${minutes} minutes left` : `about ${Math.round(minutes / 60)} hours left`
+}
+
+/** Which leaf is being read, for whoever listens: said anew only at every tenth part of the sheaf. */
+export function saidProgress({ state, leaves, leafCount, secondsLeft }: Pick<SheafProgress, 'state' | 'leaves' | 'leafCount' | 'secondsLeft'>): string {
+  if (state === 'waiting') return 'Waiting to be read'
+  if (state !== 'reading') return ''
+  const tenths = Math.floor((10 * leaves.length) / Math.max(1, leafCount))
+  if (tenths >= 10) return 'All leaves read'
+  return tenths === 0 ? 'Reading has begun' : `${tenths * 10} per cent read${secondsLeft === null ? '' : `, ${timeLeft(secondsLeft)}`}`
 }
 
 export type TallyLine = Readonly<{ what: string; count: number; says: string }>
@@ -27,10 +40,10 @@ export function tally({ state, leaves, leafCount, scripts }: Pick<SheafProgress,
   const numbers = (lines: readonly LeafLine[]) => lines.map(({ number }) => number)
   const turned = leaves.filter((leaf) => leaf.turned && leaf.look !== 'unreadable')
   const done = state === 'placed'
-  const found = done ? of('placed') : of('clear')
+  const found = done ? of('placed') : of('clear', 'placed')
   const loose = of('loose', 'unclear', 'unreadable')
   const lines: TallyLine[] = [
-    { what: done ? 'Placed in scripts' : 'Pages recognised', count: found.length, says: done ? `in ${counted(scripts, 'script')}` : 'put into scripts at the end' },
+    { what: done ? 'Placed in scripts' : 'Pages recognised', count: found.length, says: done ? `in ${counted(scripts, 'script')}` : scripts > 0 ? `${counted(scripts, 'script')} in place` : 'put into scripts as soon as they are certain' },
     { what: 'Turned the right way up', count: turned.length, says: turned.length > 0 ? namedLeaves(numbers(turned)) : '' },
     { what: 'Empty backs', count: of('blank').length, says: 'kept, not shown while marking' },
     { what: done ? 'Loose sheets' : 'Not sure yet', count: loose.length, says: loose.length > 0 ? `${namedLeaves(numbers(loose))}${done ? ', for the sorting table' : ''}` : '' },

@@ -50,6 +50,7 @@ const sentences: Record<ErrorCode | 'failed', string | ((detail: ErrorDetail) =>
   file_locked: 'This blank paper is locked against changes, so no codes can be printed on it. Print it to a new PDF, and put that in as the blank paper.',
   code_place_bad: ({ page, why }) => `Page ${page}: ${codeFaults[String(why)] ?? 'the code cannot stand there.'}`,
   code_place_missing: ({ page }) => `Page ${page ?? 1} has no place for its code yet. Give it one first.`,
+  reading_marked: ({ scripts }) => `Marks have been given in ${scripts === 1 ? 'a script' : `${scripts ?? 'some'} scripts`} of this sheaf, so it is read to the end. What does not belong to this test can be set aside at the sorting table.`,
   place_taken: 'There is a page in that place already. Take it out first, or make this one an extra page.',
   no_registration: 'The printed lines do not fit that page. Drag its four corners to show where the page lies.',
   name_taken: ({ script }) => `Script ${script ?? 'elsewhere'} bears this name already. Look at both name boxes: one of them is someone else’s.`,

@@ -48,6 +48,7 @@ export const errorStatus = {
   code_place_bad: 422,
   code_place_missing: 409,
   // placing
+  reading_marked: 409,
   place_taken: 409,
   no_registration: 422,
   name_taken: 409,

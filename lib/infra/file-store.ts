@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto'
 import { createReadStream } from 'node:fs'
-import { mkdir, readFile, rename, stat, writeFile } from 'node:fs/promises'
+import { mkdir, readFile, rename, rm, stat, writeFile } from 'node:fs/promises'
 import path from 'node:path'
 import { newId } from '@/lib/core/ids'
 import { env } from './env'
@@ -38,4 +38,13 @@ export async function readKept(sha256: string): Promise<Buffer> {
 /** The path of a kept file, for readers that open files themselves. */
 export function keptPath(sha256: string): string {
   return placeOf(sha256)
+}
+
+/** Takes a file out of the store that no row names any more. */
+export async function dropKept(sha256: string): Promise<void> {
+  await rm(placeOf(sha256), { force: true })
+}
+
+export async function isKept(sha256: string): Promise<boolean> {
+  return stat(placeOf(sha256)).then(() => true, () => false)
 }

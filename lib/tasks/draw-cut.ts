@@ -16,7 +16,7 @@ export type Picture = Readonly<{ bytes: Buffer; type: string; key: string }>
 export async function drawCut(db: Db, cut: Cut, dpi: number): Promise<Picture> {
   const fineness = finenesses.find((candidate) => candidate >= dpi) ?? 300
   const key = cutKey(cut)
-  const bytes = await keptPicture(`${key}-${fineness}`, () => draw(db, cut, fineness))
+  const bytes = await keptPicture(cut.leafId, `${key}-${fineness}`, () => draw(db, cut, fineness))
   return { bytes, type: 'image/webp', key }
 }
 

@@ -6,7 +6,7 @@ import { addJob } from '@/db/jobs'
 import { db, transaction } from '@/db/knex'
 import { addSheaf, findSheafOfBytes } from '@/db/sheaves'
 import { addStoredFile } from '@/db/stored-files'
-import { keepFile } from '@/lib/infra/file-store'
+import { isKept, keepFile } from '@/lib/infra/file-store'
 import { gatePaper } from './gate-paper'
 import { lookAtSheaf } from './look-at-sheaf'
 
@@ -21,6 +21,8 @@ export async function keepSheaf(actor: Actor, { paperId, file, name, classSetIds
   const { pageCount: leafCount } = await lookAtSheaf(file)
   const { sha256, size } = await keepFile(file)
   return transaction(async (trx) => {
+    // A sheaf of the same bytes was stopped at this moment, and took them along.
+    if (!(await isKept(sha256))) throw new AppError('out_of_date')
     if (await findSheafOfBytes(trx, paperId, sha256)) throw new AppError('file_same')
     const fileId = newId()
     const sheafId = newId()

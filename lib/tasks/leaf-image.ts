@@ -12,5 +12,5 @@ import { sheafPicture } from './look-at-sheaf'
 export async function leafImage(db: Db, leafId: string): Promise<Buffer> {
   const source = await getLeafSource(db, leafId)
   if (!source) throw new AppError('not_found')
-  return keptPicture(`${leafId}-leaf`, () => sheafPicture(keptPath(source.sha256), source.index))
+  return keptPicture(leafId, 'leaf', () => sheafPicture(keptPath(source.sha256), source.index))
 }

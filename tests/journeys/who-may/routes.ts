@@ -82,6 +82,8 @@ export const routeRows: readonly RouteRow[] = [
   ...(['GET', 'HEAD', 'PATCH', 'DELETE'] as const).flatMap((verb) => onPapers(verb, `sheaves/upload/${'0'.repeat(32)}`, () => ({}), '404')),
   change('POST /api/sheaves/[sheafId]/again', 'a sheaf that is read', (o) => `/api/sheaves/${o.half.sheaf}/again`, () => ({}), ' 401 409 404 403 404 404 404 404'),
   change('POST /api/sheaves/[sheafId]/again', 'a sheaf of the sample', (o) => `/api/sheaves/${o.sampled.sheaf}/again`, () => ({}), ' 401 409 404 404 403 404 404 404'),
+  change('POST /api/sheaves/[sheafId]/stop', 'a sheaf that is read', (o) => `/api/sheaves/${o.half.sheaf}/stop`, () => ({}), '  401 409 404 403 404 404 404 404'),
+  change('POST /api/sheaves/[sheafId]/stop', 'a sheaf of the sample', (o) => `/api/sheaves/${o.sampled.sheaf}/stop`, () => ({}), '  401 409 404 404 403 404 404 404'),
 
   // Sorting: by way of the paper itself, and by way of a paper of one's own.
   ...sorting('a leaf put where no page is', (o) => ({ act: 'place', leafId: o.loose.leaf, target: { scriptId: o.loose.placed.script }, paperPage: 40 }), 'bad_input'),

@@ -1,12 +1,14 @@
 import type { HalfMarks } from '@/lib/core/marks'
 import type { Db } from './knex'
 
-/** An answer of a sampled script with a settled first mark. `second` is null until the moderator of the sample has settled theirs. Marks in halves. */
+/** An answer of a sampled script with a settled first mark, and who gave it ("R. Adeyemi"). `second` is null until the moderator of the sample has settled theirs. Marks in halves. */
 export type SampledAnswer = Readonly<{
   sampleId: string
   scriptId: string
   questionId: string
   responseId: string
+  markerId: string
+  marker: string
   first: HalfMarks
   second: HalfMarks | null
   countingRound: string | null
@@ -16,6 +18,7 @@ export type SampledAnswer = Readonly<{
 // The first marking is the earliest settled one that is not the moderator's own. Each look-up goes by an index that starts with the response.
 const statement = `
   select samples.id as sampleId, sample_scripts.script_id as scriptId, responses.question_id as questionId, responses.id as responseId,
+    first.marker_id as markerId, substr(users.given_name, 1, 1) || '. ' || users.family_name as marker,
     coalesce((select sum(worth) from stamps where marking_id = first.id and removed = 0), 0) as first,
     case when second.id is not null then coalesce((select sum(worth) from stamps where marking_id = second.id and removed = 0), 0) end as second,
     counting.round as countingRound, counting_decisions.reason as reason
@@ -25,6 +28,7 @@ const statement = `
   join responses on responses.script_id = sample_scripts.script_id
   join questions on questions.id = responses.question_id and questions.withdrawn_as is null
   join markings first on first.id = (select id from markings where response_id = responses.id and round = 'first' and state = 'settled' and marker_id <> samples.moderator_id order by created_at, id limit 1)
+  join users on users.id = first.marker_id
   left join markings second on second.response_id = responses.id and second.round = 'second' and second.marker_id = samples.moderator_id and second.state = 'settled'
   left join counting_decisions on counting_decisions.response_id = responses.id and counting_decisions.superseded_at is null
   left join markings counting on counting.id = counting_decisions.marking_id

@@ -4,6 +4,7 @@ import { useOutcome } from '@/components/ui/use-outcome'
 import type { Outcome } from '@/lib/core/outcome'
 import type { SampleView } from '@/lib/core/second-marking'
 import { counted } from '@/components/paper/stage-words'
+import { FiguresPanel } from './figures-panel'
 import { OutsideList } from './outside-list'
 import { QuestionTable } from './question-table'
 import { SampledScripts } from './sampled-scripts'
@@ -40,6 +41,7 @@ export function SampleSection({ paperId, sample, owner, acts }: SampleSectionPro
         <div><QuestionTable paperId={paperId} sample={sample} /><OutsideList paperId={paperId} sample={sample} /></div>
         <SampledScripts sample={sample} addScript={acts.addScript} />
       </div>
+      <FiguresPanel sample={sample} />
       <p className="small soft mt-3">Drawn on {dayOf(sample.drawnAt)}: {sample.size} asked, usual {sample.defaultSize}; the seed {sample.seed.slice(0, 8)} draws it again.</p>
       {closedAt !== null && <p className="dense mt-2">Closed on {dayOf(closedAt)}. Where nothing else was decided the first marks stand.</p>}
       {owner && closedAt === null && (

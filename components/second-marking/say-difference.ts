@@ -21,7 +21,7 @@ export function sayMean(meanDifference: number | null): string {
 }
 
 /** The caution a figure of few pairs carries. */
-export function sayCaution({ n, few }: AgreementFigures): string | null {
+export function sayCaution({ n, few }: Pick<AgreementFigures, 'n' | 'few'>): string | null {
   return n > 0 && few ? `n = ${n}: too few to judge the marker.` : null
 }
 

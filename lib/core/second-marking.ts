@@ -1,4 +1,5 @@
 import type { HalfMarks } from './marks'
+import type { ModerationFigures } from './moderation-figures'
 import type { StripPicture } from './run'
 import type { Stamp } from './stamp'
 
@@ -38,6 +39,8 @@ export type SampledScript = Readonly<{ scriptId: string; number: number; name: s
 export type ComparedAnswer = Readonly<{
   responseId: string
   questionId: string
+  /** Who gave the first mark. */
+  markerId: string
   scriptNumber: number
   first: HalfMarks
   second: HalfMarks
@@ -63,6 +66,7 @@ export type SampleView = Readonly<{
   addable: readonly { scriptId: string; number: number }[]
   questions: readonly SampleQuestion[]
   figures: AgreementFigures
+  moderation: ModerationFigures
   undecided: number
 }>
 

@@ -1,9 +1,11 @@
 import type { HalfMarks } from '@/lib/core/marks'
+import type { ModerationFigures } from '@/lib/core/moderation-figures'
 import type { AgreementFigures, ComparedAnswer, DrawnAs, SampledScript, SampleQuestion, Stands } from '@/lib/core/second-marking'
 import { agreementOf, withinTolerance } from './agreement'
+import { figuresBy } from './figures-by'
 
 /** A sampled answer as it was read: `second` null until it was settled. */
-export type Answer = Readonly<{ scriptId: string; questionId: string; responseId: string; first: HalfMarks; second: HalfMarks | null; countingRound: string | null; reason: string | null }>
+export type Answer = Readonly<{ scriptId: string; questionId: string; responseId: string; markerId: string; marker: string; first: HalfMarks; second: HalfMarks | null; countingRound: string | null; reason: string | null }>
 export type Script = Readonly<{ scriptId: string; number: number; name: string | null; drawnAs: DrawnAs }>
 type Column = Readonly<{ id: string; label: string; maximum: HalfMarks; tolerance: HalfMarks }>
 
@@ -14,11 +16,11 @@ export function standsOf(countingRound: string | null, reason: string | null): S
 }
 
 function comparedOf(answer: Answer & { second: HalfMarks }, tolerance: HalfMarks, numbers: ReadonlyMap<string, number>): ComparedAnswer {
-  const { responseId, questionId, scriptId, first, second, countingRound, reason } = answer
-  return { responseId, questionId, scriptNumber: numbers.get(scriptId) ?? 0, first, second, within: withinTolerance({ first, second, tolerance }), decided: standsOf(countingRound, reason) }
+  const { responseId, questionId, markerId, scriptId, first, second, countingRound, reason } = answer
+  return { responseId, questionId, markerId, scriptNumber: numbers.get(scriptId) ?? 0, first, second, within: withinTolerance({ first, second, tolerance }), decided: standsOf(countingRound, reason) }
 }
 
-type View = Readonly<{ scripts: SampledScript[]; questions: SampleQuestion[]; figures: AgreementFigures; undecided: number }>
+type View = Readonly<{ scripts: SampledScript[]; questions: SampleQuestion[]; figures: AgreementFigures; moderation: ModerationFigures; undecided: number }>
 
 /** How far a sample has been read, and what can be compared so far: only answers whose second mark is settled. */
 export function sampleView({ answers, scripts, columns, owner }: Readonly<{ answers: readonly Answer[]; scripts: readonly Script[]; columns: readonly Column[]; owner: boolean }>): View {
@@ -33,6 +35,7 @@ export function sampleView({ answers, scripts, columns, owner }: Readonly<{ answ
   }).filter(({ answers: n }) => n > 0)
   return {
     questions, figures: agreementOf(settled.map(pair)),
+    moderation: figuresBy({ answers: settled, columns: columns.filter(({ id }) => questions.some(({ questionId }) => questionId === id)), numbers }),
     undecided: questions.flatMap(({ compared }) => compared).filter(({ within, decided }) => !within && decided === null).length,
     scripts: scripts.map(({ scriptId, number, name, drawnAs }) => {
       const own = answers.filter((one) => one.scriptId === scriptId)

@@ -39,13 +39,13 @@ async function bench(name: string, folder: string): Promise<void> {
     startup.push(last.result.startupSeconds)
     peer.push(await drawing(join(folder, 'scan.pdf'), dpi))
   }
-  const { score, result } = last!
+  const { score, result, codes } = last!
   const count = result.readings.length
   const off = (p: number) => (score.errors.length ? percentile(score.errors, p).toFixed(3) : '-')
   const each = (of: readonly Took[], key: keyof Took) => (1000 * median(of.map((took) => took[key]))) / count
   const compared = (key: keyof Took) => `${each(leaves, key).toFixed(0)} / ${each(peer, key).toFixed(0)} = ${(each(leaves, key) / each(peer, key)).toFixed(2)}`
   console.log(
-    `${name.padEnd(10)} placed ${score.scripts - score.loose}/${score.scripts}  wrong ${score.wrong}  right kind ${score.rightKind}/${score.pages}  turn ${score.rightTurn}  split ${score.split}  mm p95 ${off(95)} max ${off(100)}  mark ${score.mark.toFixed(1)}` +
+    `${name.padEnd(10)} ${codes ? `codes read ${codes.read}/${codes.printed}  ` : ''}placed ${score.scripts - score.loose}/${score.scripts}  wrong ${score.wrong}  right kind ${score.rightKind}/${score.pages}  turn ${score.rightTurn}  split ${score.split}  mm p95 ${off(95)} max ${off(100)}  mark ${score.mark.toFixed(1)}` +
       `  |  ms a leaf against pdftoppm -r ${dpi}: cpu ${compared('cpu')}, wall ${compared('wall')}, start ${(1000 * median(startup)).toFixed(0)} ms`,
   )
   const steps = [0, 0.2, 0.4, 0.6, 0.8, 0.95, 1.01]

@@ -3,12 +3,13 @@ import { join } from 'node:path'
 import { parseArgs } from 'node:util'
 import { z } from 'zod'
 import { AppError, type ErrorCode } from '@/lib/core/errors'
+import { readTokensFile } from './read-tokens-file'
 import { ingestSheaf } from '@/lib/tasks/ingest-sheaf'
 
-// npm run -s ingest -- --paper PAPER_DIR --sheaf scan.pdf --out result.json [--threads 1]
+// npm run -s ingest -- --paper PAPER_DIR --sheaf scan.pdf --out result.json [--threads 1] [--codes tokens.csv]
 // Exit 0, or 2 with one line on standard error when the input cannot be used.
 
-const usage = 'usage: ingest --paper PAPER_DIR --sheaf scan.pdf --out result.json [--threads 1]'
+const usage = 'usage: ingest --paper PAPER_DIR --sheaf scan.pdf --out result.json [--threads 1] [--codes tokens.csv]'
 const sentences: Partial<Record<ErrorCode, string>> = {
   file_empty: 'is empty; send the file again',
   file_not_pdf: 'is not a PDF',
@@ -48,7 +49,7 @@ async function pagesSaid(path: string): Promise<number | undefined> {
 }
 
 async function main(): Promise<void> {
-  const { values } = parseArgs({ options: { paper: { type: 'string' }, sheaf: { type: 'string' }, out: { type: 'string' }, threads: { type: 'string', default: '1' } } })
+  const { values } = parseArgs({ options: { paper: { type: 'string' }, sheaf: { type: 'string' }, out: { type: 'string' }, threads: { type: 'string', default: '1' }, codes: { type: 'string' } } })
   const threads = Number(values.threads)
   if (!values.paper || !values.sheaf || !values.out || !Number.isInteger(threads) || threads < 1) throw new BadInput(usage)
   const paperFile = join(values.paper, 'paper.pdf')
@@ -60,11 +61,13 @@ async function main(): Promise<void> {
   const { openBlankPaper } = await import('@/lib/reading/open-blank-paper')
   const paper = await named(paperFile, input(paperFile).then((bytes) => openBlankPaper(bytes)))
   if (said !== undefined && said !== paper.length) throw new BadInput(`${paperFile} has ${paper.length} pages, paper.json says ${said}`)
+  const printed = values.codes === undefined ? null : readTokensFile((await input(values.codes)).toString('utf8'))
+  if (values.codes !== undefined && !printed) throw new BadInput(`${values.codes} is not a list of printed codes`)
   const called = performance.now()
   await assertReadable(values.sheaf)
-  const result = await named(values.sheaf, ingestSheaf({ sheaf: values.sheaf, paper, threads }))
-  const pages = result.findings.map(({ index, half, kind, script, paperPage, rotation, homography, confidence, reasons, problem }) => ({
-    index, ...(half === undefined ? {} : { half }), kind, script, paper_page: paperPage, rotation, homography, confidence: Number(confidence.toFixed(3)), reasons, ...(problem ? { problem } : {}),
+  const result = await named(values.sheaf, ingestSheaf({ sheaf: values.sheaf, paper, threads, ...(printed ? { codes: printed.codes } : {}) }))
+  const pages = result.findings.map(({ index, half, kind, script, printed: code, paperPage, rotation, homography, confidence, reasons, problem }) => ({
+    index, ...(half === undefined ? {} : { half }), kind, script, ...(printed ? { candidate_number: printed.candidates.get(code ?? '') ?? null } : {}), paper_page: paperPage, rotation, homography, confidence: Number(confidence.toFixed(3)), reasons, ...(problem ? { problem } : {}),
   }))
   const timings = { startup_s: (called + result.startupSeconds * 1000) / 1000, leaves_s: result.leavesSeconds }
   await writeFile(values.out, `${JSON.stringify({ pages, timings }, null, 1)}\n`).catch(() => {

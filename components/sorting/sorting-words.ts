@@ -11,6 +11,8 @@ const reasonWords: Record<LeafReason, string> = {
   page_missing: 'a page of its script is missing',
   order_unclear: 'the sheets around it can be put together in more than one way',
   pages_swapped: 'the pages lie in another order than the paper',
+  code_disagrees: 'its code is that of another page than its print shows',
+  code_unknown: 'its code was not printed for this paper here',
 }
 
 /** Why a sheet was left loose, as one sentence without a full stop. */

@@ -24,6 +24,12 @@ export type LeafProblem = 'page_unreadable' | 'page_too_large' | 'page_empty'
 export type PageGuess = Readonly<{ paperPage: number; rotation: Turn; homography: Homography; confidence: number }>
 
 /**
+ * A printed code seen on a leaf. `script` and `paperPage` are what it stands for, null for a code of another paper or school; `agrees` says
+ * that the print of that page lies where the code says. Only then does the code place the leaf.
+ */
+export type LeafCode = Readonly<{ token: string; script: string | null; paperPage: number | null; agrees: boolean }>
+
+/**
  * What one leaf shows by itself, whatever its neighbours are: stored leaf by leaf, so that reading can be taken up again.
  * `guesses` are best first. `clear` says that the first is certain: its print is there and no other page explains it as well.
  * `ink` is the writing on the first guess's page (see InkMap), for telling a second scan of a page from another student's;
@@ -39,6 +45,7 @@ export type LeafReading = Readonly<{
   ink: InkMap | null
   pen?: PenTrace | null
   number?: NumberReading | null
+  code?: LeafCode
   problem?: LeafProblem
 }>
 
@@ -65,6 +72,8 @@ export type LeafReason =
   | 'page_missing'
   | 'order_unclear'
   | 'pages_swapped'
+  | 'code_disagrees'
+  | 'code_unknown'
 
 /** Where a leaf goes. `script` is a running number from 1. `missing` names the pages that its script lacks. */
 export type LeafFinding = Readonly<{
@@ -72,6 +81,8 @@ export type LeafFinding = Readonly<{
   half?: 0 | 1
   kind: 'script' | 'blank' | 'loose'
   script: number | null
+  /** The printed script that its code stands for. */
+  printed?: string
   paperPage: number | null
   rotation: Turn
   homography: Homography | null

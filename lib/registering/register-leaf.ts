@@ -1,6 +1,6 @@
 import type { GreyPicture } from '@/lib/core/grey-picture'
 import type { LeafReading, PageGuess, PageImage } from '@/lib/core/leaf'
-import { turnOf, type Homography, type Turn } from '@/lib/core/paper-space'
+import { turnOf, type Homography, type PaperPoint, type Turn } from '@/lib/core/paper-space'
 import { blockFit } from './block-fit'
 import { bestShift, marginsFor, uprightInk, type CoarsePlace } from './coarse'
 import { printFound, shareFound } from './confirm'
@@ -10,15 +10,16 @@ import { inkMap } from './ink-map'
 import { level, type Levelled } from './level'
 import type { Cv } from './opencv'
 import { penOf } from './pen-of'
+import { placeByCode, turnedAbout } from './place-by-code'
 import { scanDensity } from './scan-density'
 import { boxShrink, shrinkTo, type Shrunk } from './shrink'
 import { skews } from './skews'
 import type { Template } from './template'
 import { confidences, type Rival } from './weigh'
 
-type Candidate = CoarsePlace & Readonly<{ template: Template }>
+export type Candidate = CoarsePlace & Readonly<{ template: Template }>
 /** A leaf made ready for being compared: levelled at 100 dpi. */
-type Ready = Readonly<{ shrunk: Shrunk; levelled: Levelled; ink12: GreyPicture }>
+export type Ready = Readonly<{ shrunk: Shrunk; levelled: Levelled; ink12: GreyPicture }>
 
 /** A share of print found from which no further look is needed, when no other page comes near. */
 const plainlyFound = 0.5
@@ -26,6 +27,8 @@ const rivalLikeness = 0.6
 const mostTried = 4
 
 const clearFrom = 0.5
+/** So much of a page's print has to lie where its code says before the two are believed. */
+const provenShare = 0.25
 
 /**
  * What one leaf shows by itself: which page of the paper it is, how it lies, whether it is empty.
@@ -53,6 +56,24 @@ export function registerToPage(cv: Cv, image: PageImage, picture: GreyPicture, p
   for (const degrees of tries) {
     const best = tryCandidates(cv, ready, [page], degrees)[0]
     if (best && best.share >= 0.2) return guessOf({ ...best, confidence: Math.min(1, best.share * 1.5) }, ready)
+  }
+  return null
+}
+
+/**
+ * Registers a leaf to the page whose code it carries: the code says which page, which way up and nearly where, so nothing is searched for.
+ * `code` takes the paper's points to the leaf's pixels, exactly at the symbol and roughly elsewhere; `at` is the symbol's middle in paper points.
+ * Null when the page's print is not found there: then the code and the print do not belong together.
+ */
+export function registerByCode(cv: Cv, image: PageImage, picture: GreyPicture, template: Template, code: Homography, at: PaperPoint): Omit<LeafReading, 'index'> | null {
+  const ready = prepare(cv, image, picture, [template])
+  const place = placeByCode(ready, template, code, at)
+  for (const off of [0, -0.7, 0.7]) {
+    const best = fitExactly(cv, ready, turnedAbout(place, template, at, off))
+    if (!best || best.share < provenShare) continue
+    const { white } = ready.levelled
+    const guess = guessOf({ ...best, confidence: Math.min(1, best.share * 1.6) }, ready)
+    return { image, empty: false, guesses: [guess], clear: true, pen: penOf(white, template, best.map), ink: inkMap(white, template, best.map) }
   }
   return null
 }

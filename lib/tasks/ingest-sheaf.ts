@@ -1,6 +1,7 @@
 import type { BlankPage } from '@/lib/core/grey-picture'
 import type { LeafFinding, LeafReading } from '@/lib/core/leaf'
-import { placeLeaves } from '@/lib/placing/place-leaves'
+import type { PrintedCodes } from '@/lib/core/printed-code'
+import { placePile } from '@/lib/placing/place-pile'
 import { openLeaves, readLeaves } from './read-leaves'
 
 export type SheafInput = Readonly<{
@@ -8,6 +9,8 @@ export type SheafInput = Readonly<{
   sheaf: string
   paper: readonly BlankPage[]
   threads?: number
+  /** Printed codes that may lie in the sheaf. */
+  codes?: PrintedCodes
   /** Readings stored before: those leaves are not read again. */
   stored?: readonly LeafReading[]
   /** Called with each leaf as it is read, and how many of how many are done; what it returns is waited for, so it may store. */
@@ -20,9 +23,9 @@ export type SheafResult = Readonly<{ readings: readonly LeafReading[]; findings:
  * The command and the worker use this one engine; the worker stores each reading and may stop and go on at any leaf.
  * Throws the file errors of openLeaves.
  */
-export async function ingestSheaf({ sheaf, paper, threads = 1, stored = [], onLeaf }: SheafInput): Promise<SheafResult> {
+export async function ingestSheaf({ sheaf, paper, threads = 1, codes, stored = [], onLeaf }: SheafInput): Promise<SheafResult> {
   const called = performance.now()
-  const reader = await openLeaves(sheaf, paper, threads)
+  const reader = await openLeaves(sheaf, paper, threads, codes)
   try {
     await reader.ready()
     const started = performance.now()
@@ -34,7 +37,7 @@ export async function ingestSheaf({ sheaf, paper, threads = 1, stored = [], onLe
     }
     await readLeaves(reader, (index) => readings.has(index), take, threads)
     const inOrder = [...readings.values()].sort((a, b) => a.index - b.index)
-    const findings = placeLeaves(inOrder, paper.length)
+    const findings = placePile(inOrder, paper.length)
     const { user, system } = process.cpuUsage(before)
     return { readings: inOrder, findings, startupSeconds: (started - called) / 1000, leavesSeconds: (performance.now() - started) / 1000, leavesCpuSeconds: (user + system) / 1e6 }
   } finally {

@@ -2,22 +2,26 @@ import sharp from 'sharp'
 import { AppError } from '@/lib/core/errors'
 import type { BlankPage } from '@/lib/core/grey-picture'
 import { unread, type LeafReading, type PageGuess } from '@/lib/core/leaf'
+import type { PrintedCodes, PrintedPage } from '@/lib/core/printed-code'
+import { loadCodeEngine } from '@/lib/reading/code-engine'
 import { decodePage } from '@/lib/reading/decode-page'
+import type { CodeWindow } from '@/lib/reading/find-code'
 import { openSheaf, type OpenSheaf } from '@/lib/reading/open-sheaf'
-import { opencv } from '@/lib/registering/opencv'
+import { opencv, type Cv } from '@/lib/registering/opencv'
 import { registerLeaf, registerToPage } from '@/lib/registering/register-leaf'
 import { makeTemplate, type Template } from '@/lib/registering/template'
+import { codeWindows, readByCode } from './read-by-code'
 import askSheaf, { type SheafAnswer } from './sheaf-thread'
 
-/** What a thread is handed: a leaf of a sheaf (none: only get ready), the sheaf's file, the blank paper and its name; or a file to be looked at. */
-export type LeafJob = Readonly<{ index: number | null; file: string; paperKey: string; paper: readonly BlankPage[]; onto?: number }>
+/** What a thread is handed: a leaf of a sheaf (none: only get ready), the sheaf's file, the blank paper and its name, printed codes as JSON; or a file to be looked at. */
+export type LeafJob = Readonly<{ index: number | null; file: string; paperKey: string; paper: readonly BlankPage[]; codes?: Uint8Array; onto?: number }>
 export type LookJob = Readonly<{ look: string }>
 export type LeafAnswer = Readonly<{ reading: LeafReading; onto: PageGuess | null }>
 
 sharp.concurrency(1)
 sharp.cache(false)
 
-let kept: { key: string; templates: Template[] } | null = null
+let kept: { key: string; templates: Template[]; codes: PrintedCodes; windows: CodeWindow[] } | null = null
 
 /** Looks at a sheaf, or decodes one leaf and registers it: to every page, or to the page `onto` (from 1) alone. A page that cannot be read is a reading with a problem. */
 export default async function work(job: LeafJob | LookJob): Promise<LeafAnswer | SheafAnswer> {
@@ -27,19 +31,30 @@ export default async function work(job: LeafJob | LookJob): Promise<LeafAnswer |
 async function readLeaf(job: LeafJob): Promise<LeafAnswer> {
   const sheaf = opened(job)
   const { cv } = await opencv()
-  if (kept?.key !== job.paperKey) kept = { key: job.paperKey, templates: job.paper.map((page) => makeTemplate(cv, page)) }
-  const { templates } = kept
+  if (kept?.key !== job.paperKey) kept = await makeReady(cv, job)
+  const { templates, codes, windows } = kept
   const index = job.index ?? 0
   try {
     if (job.index === null) return { reading: unread(index, 'page_empty'), onto: null }
     const { image, picture } = await decodePage(sheaf, index)
-    if (job.onto === undefined) return { reading: { index, ...registerLeaf(cv, image, picture, templates) }, onto: null }
+    if (job.onto === undefined) {
+      const coded = windows.length > 0 ? await readByCode(cv, image, picture, templates, codes, windows) : null
+      const seen = coded?.reading ?? registerLeaf(cv, image, picture, templates)
+      return { reading: { index, ...seen, ...(coded ? { code: coded.code } : {}) }, onto: null }
+    }
     const template = templates.find(({ page }) => page.page === job.onto)
     return { reading: unread(index, 'page_unreadable'), onto: template ? registerToPage(cv, image, picture, template) : null }
   } catch (error) {
     if (!(error instanceof AppError)) throw error
     return { reading: unread(index, error.detail['too_large'] ? 'page_too_large' : 'page_unreadable'), onto: null }
   }
+}
+
+async function makeReady(cv: Cv, { paperKey, paper, codes: coded }: LeafJob): Promise<NonNullable<typeof kept>> {
+  const templates = paper.map((page) => makeTemplate(cv, page))
+  const codes: PrintedCodes = new Map(coded ? (JSON.parse(Buffer.from(coded).toString()) as [string, PrintedPage][]) : [])
+  if (codes.size > 0) await loadCodeEngine()
+  return { key: paperKey, templates, codes, windows: codeWindows(codes, templates) }
 }
 
 let held: { key: string; sheaf: OpenSheaf } | null = null

@@ -1,5 +1,6 @@
 import type { BlankPage } from '@/lib/core/grey-picture'
 import { unread, type LeafReading, type PageGuess } from '@/lib/core/leaf'
+import type { PrintedCodes } from '@/lib/core/printed-code'
 import { newId } from '@/lib/core/ids'
 import { threadPool } from '@/lib/infra/thread-pool'
 import { answered } from './look-at-sheaf'
@@ -25,8 +26,9 @@ export type LeafReader = Readonly<{
  * Opens a sheaf for reading leaf by leaf. Throws the file errors: file_empty, file_not_pdf, file_encrypted, file_damaged, file_no_pages, too_many_pages.
  * @param file the path of the sheaf's file; only the leaf in work is in memory
  * @param paper the blank paper's pages, as openBlankPaper gives them
+ * @param codes printed codes that may lie in it; without any none is looked for
  */
-export async function openLeaves(file: string, paper: readonly BlankPage[], threads = 1): Promise<LeafReader> {
+export async function openLeaves(file: string, paper: readonly BlankPage[], threads = 1, codes?: PrintedCodes): Promise<LeafReader> {
   const pool = threadPool('lib/tasks/leaf-thread.ts', threads)
   const look = pool.run({ look: file } satisfies LookJob, { signal: AbortSignal.timeout(longest) }) as Promise<SheafAnswer>
   const { pageCount } = await answered(look, 'file_damaged').catch(async (error: unknown) => {
@@ -35,7 +37,7 @@ export async function openLeaves(file: string, paper: readonly BlankPage[], thre
   })
   const pages = paper.map((page) => ({ ...page, picture: { ...page.picture, data: shared(page.picture.data) } }))
   const paperKey = newId()
-  const common = { file, paperKey, paper: pages }
+  const common = { file, paperKey, paper: pages, ...(codes && codes.size > 0 ? { codes: shared(Buffer.from(JSON.stringify([...codes]))) } : {}) }
   const run = async (index: number, onto?: number): Promise<LeafAnswer | null> => {
     const job: LeafJob = { index, ...common, ...(onto === undefined ? {} : { onto }) }
     // a page that kills its thread is reported like one that cannot be read

@@ -1,22 +1,27 @@
 import { readFile } from 'node:fs/promises'
 import { join } from 'node:path'
 import { openBlankPaper } from '@/lib/reading/open-blank-paper'
+import { readTokensFile } from '@/scripts/read-tokens-file'
 import { ingestSheaf, type SheafResult } from '@/lib/tasks/ingest-sheaf'
 import { scoreResult, type ResultPage, type Score, type Truth } from './score-result'
 
 export const classSets = ['one-page', 'everyday', 'bitonal', 'booklet'] as const
-export type ScoredSet = Readonly<{ score: Score; result: SheafResult; truth: Truth }>
+/** `codes` counts the printed codes that were read of those that lie in the scan; null for a set without. */
+export type ScoredSet = Readonly<{ codes: { read: number; printed: number } | null; score: Score; result: SheafResult; truth: Truth }>
 
 export function classSetFolder(name: string): string {
   return join(process.cwd(), 'seeds/class-sets', name)
 }
 
-/** Ingests a folder's scan.pdf against its paper.pdf and scores it by its truth.json. */
+/** Ingests a folder's scan.pdf against its paper.pdf, by the printed codes of its tokens.csv if it has one, and scores it by its truth.json. */
 export async function scoreFolder(folder: string, threads = 1): Promise<ScoredSet> {
   const paper = await openBlankPaper(await readFile(join(folder, 'paper.pdf')))
   const truth = JSON.parse(await readFile(join(folder, 'truth.json'), 'utf8')) as Truth
-  const result = await ingestSheaf({ sheaf: join(folder, 'scan.pdf'), paper, threads })
-  return { score: scoreResult(truth, result.findings.map(resultPage)), result, truth }
+  const printed = readTokensFile(await readFile(join(folder, 'tokens.csv'), 'utf8').catch(() => ''))
+  const result = await ingestSheaf({ sheaf: join(folder, 'scan.pdf'), paper, threads, ...(printed ? { codes: printed.codes } : {}) })
+  const found = result.findings.map((finding) => ({ ...resultPage(finding), ...(printed ? { candidate_number: printed.candidates.get(finding.printed ?? '') ?? null } : {}) }))
+  const codes = printed && { read: result.readings.filter(({ code }) => code?.script).length, printed: truth.pages.filter(({ kind }) => kind === 'script' || kind === 'duplicate').length }
+  return { score: scoreResult(truth, found), result, truth, codes }
 }
 
 function resultPage({ index, kind, script, paperPage, rotation, homography, confidence }: SheafResult['findings'][number]): ResultPage {

@@ -7,6 +7,7 @@ export type PageBox = Readonly<{ left: number; bottom: number; width: number; he
 export type StoredFrame = Readonly<{ width: number; height: number; dpiX: number; dpiY: number; shownTurn: Turn; toPixels: Affine }>
 
 const coversPage = 0.9
+const mostBeyond = 1.3
 
 /** The frame of an image laid on the page by `matrix` (its unit square in user space); null for mirrored or slanted ones. */
 export function imageFrame(box: PageBox, matrix: Affine, width: number, height: number): StoredFrame | null {
@@ -33,13 +34,14 @@ export function pageFrame(box: PageBox, dpi: number): StoredFrame {
   }
 }
 
-/** Whether an image laid by `matrix` takes up nearly the whole page. */
+/** Whether an image laid by `matrix` takes up nearly the whole page and hardly more: where a box shows a part of a larger picture, the rest is another page's. */
 export function covers(box: PageBox, [a, b, c, d, e, f]: Affine): boolean {
   const left = e + Math.min(0, a) + Math.min(0, c)
   const bottom = f + Math.min(0, b) + Math.min(0, d)
-  const width = overlap(left, left + Math.abs(a) + Math.abs(c), box.left, box.left + box.width)
-  const height = overlap(bottom, bottom + Math.abs(b) + Math.abs(d), box.bottom, box.bottom + box.height)
-  return width * height >= coversPage * box.width * box.height
+  const wide = Math.abs(a) + Math.abs(c)
+  const high = Math.abs(b) + Math.abs(d)
+  const shown = overlap(left, left + wide, box.left, box.left + box.width) * overlap(bottom, bottom + high, box.bottom, box.bottom + box.height)
+  return shown >= coversPage * box.width * box.height && wide * high <= mostBeyond * box.width * box.height
 }
 function overlap(from: number, to: number, low: number, high: number): number {
   return Math.max(0, Math.min(to, high) - Math.max(from, low))

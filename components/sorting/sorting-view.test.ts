@@ -4,7 +4,7 @@ import { looseOrder, nextView, pageInHand, startView } from './sorting-view'
 import { leftToSort, sayNeighbour, whyThere, whyLoose } from './sorting-words'
 
 const leaf = (id: string, paperPage: number | null = null, guess?: number): LooseLeaf => ({
-  id, number: 1, sheafName: 'a.pdf', turn: 0, width: 1654, height: 2339, paperPage, guesses: guess ? [{ paperPage: guess, confidence: 0.3 }] : [], reasons: [], problem: null, before: null, after: null, places: [],
+  id, number: 1, half: null, sheafName: 'a.pdf', turn: 0, width: 1654, height: 2339, paperPage, guesses: guess ? [{ paperPage: guess, confidence: 0.3 }] : [], reasons: [], problem: null, before: null, after: null, places: [],
 })
 const script: SortScript = { id: 's', number: 4, classSetId: 'c', studentId: null, suggestedStudentId: 'jun', suggestionReason: 'list_order', suggestionCertainty: null, numberRead: null, pages: [], missing: [2] }
 const student = { classSetId: 'c', className: '8K', studentId: 'jun', candidateNumber: '8142', givenName: 'Jun', familyName: 'Rao', attendance: 'expected' as const, scriptId: null, sameName: false }

@@ -23,6 +23,9 @@ export type LeafProblem = 'page_unreadable' | 'page_too_large' | 'page_empty'
 /** A page of the blank paper that a leaf may be, with how the leaf lies on it. `confidence` runs from 0 to 1, alike for grey, colour and 1-bit scans. */
 export type PageGuess = Readonly<{ paperPage: number; rotation: Turn; homography: Homography; confidence: number }>
 
+/** A part of a stored image, in its pixels. */
+export type ImagePart = Readonly<{ x: number; y: number; w: number; h: number }>
+
 /**
  * A printed code seen on a leaf. `script` and `paperPage` are what it stands for, null for a code of another paper or school; `agrees` says
  * that the print of that page lies where the code says. Only then does the code place the leaf.
@@ -34,10 +37,13 @@ export type LeafCode = Readonly<{ token: string; script: string | null; paperPag
  * `guesses` are best first. `clear` says that the first is certain: its print is there and no other page explains it as well.
  * `ink` is the writing on the first guess's page (see InkMap), for telling a second scan of a page from another student's;
  * `pen` is what it was written with; `number` what stands in the candidate number's boxes on that page, when it has any.
+ * An image that shows two pages side by side gives two readings with one index: `half` 0 is the left one as
+ * they read, `part` is where it lies on the image. Homographies speak of the whole image all the same.
  */
 export type LeafReading = Readonly<{
   index: number
   half?: 0 | 1
+  part?: ImagePart
   image: PageImage | null
   empty: boolean
   guesses: readonly PageGuess[]

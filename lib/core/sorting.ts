@@ -44,11 +44,12 @@ export type SortScript = Readonly<{
   missing: readonly number[]
 }>
 
-/** A leaf by the number a person counts from 1, in its sheaf. */
-export type LeafStub = Readonly<{ id: string; number: number; sheafName: string; turn: Turn }>
+/** A leaf by the number a person counts from 1, in its sheaf. `half` tells the left (0) from the right page where one image shows two. */
+export type LeafStub = Readonly<{ id: string; number: number; half: 0 | 1 | null; sheafName: string; turn: Turn }>
 export type LeafNeighbour = Readonly<{ number: number; state: 'placed' | 'loose' | 'blank' | 'set_aside' | 'read'; paperPage: number | null; scriptId: string | null }>
 
 export type LooseLeaf = LeafStub & Readonly<{
+  /** Pixels of the leaf as stored: of its own part where an image shows two pages. */
   width: number | null
   height: number | null
   /** The page its print says it is; null when the print does not say. */

@@ -78,6 +78,15 @@ describe('placing leaves in scripts', () => {
     const found = placeLeaves(sheaf('A1 ? ? B2 C1 C2'), 2)
     expect(found[0]!.script === null || found[0]!.script !== found[3]!.script).toBe(true)
   })
+  it('reads two pages of an image one after the other, in the order of folded booklets as well', () => {
+    const sides = (text: string, pages: number) => placeLeaves(sheaf(text).map((leaf, k) => ({ ...leaf, index: k >> 1, half: (k % 2) as 0 | 1 })), pages).map(({ script, reasons }) => [script ?? '.', ...reasons].join(' ')).join(', ')
+    expect(sides('A1 A2 B1 B2 C1 -', 2)).toBe('1, 1, 2, 2, 3 page_missing, .')
+    expect(sides('A4 A1 A2 A3 B4 B1 B2 B3', 4)).toBe('1, 1, 1, 1, 2, 2, 2, 2')
+    expect(sides('A8 A1 A2 A7 A6 A3 A4 A5 B8 B1 B2 B7 B6 B3 B4 B5', 8)).toBe('1, 1, 1, 1, 1, 1, 1, 1, 2, 2, 2, 2, 2, 2, 2, 2')
+    expect(sides('A2 A3 A4 A1 B2 B3 B4 B1 C2 C3 C4 C1', 4)).toBe('1, 1, 1, 1, 2, 2, 2, 2, 3, 3, 3, 3')
+    // The halves of one sheet stay together where a missing page leaves it open.
+    expect(sides('A1 A2 B1 - C1 C2 D1 D2', 2)).toBe('1, 1, 2 page_missing, ., 3, 3, 4, 4')
+  })
   it('has nothing to say about no leaves', () => {
     expect(placeLeaves([], 2)).toEqual([])
   })

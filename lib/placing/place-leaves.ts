@@ -1,6 +1,7 @@
 import type { LeafFinding, LeafReading, LeafReason } from '@/lib/core/leaf'
-import { explainSequence, type Block, type Together } from './explain-sequence'
+import { explainSequence, type Block, type Context } from './explain-sequence'
 import { penCost } from './pen-cost'
+import { costs } from './script-cost'
 import { inkOf, sameness, type Sameness } from './same-ink'
 import { settledBlocks } from './settled-blocks'
 
@@ -20,9 +21,9 @@ type Verdict = Readonly<{ kind: LeafFinding['kind']; script: number | null; reas
  * @param pages how many pages the blank paper has
  */
 export function placeLeaves(readings: readonly LeafReading[], pages: number): LeafFinding[] {
-  const { leaves, sequence, verdicts, compare, together } = lineUp(readings)
+  const { leaves, sequence, verdicts, compare, context } = lineUp(readings, pages)
   let script = 0
-  for (const block of explainSequence(sequence.map((leaf) => leaf.page), pages, together)) {
+  for (const block of explainSequence(sequence.map((leaf) => leaf.page), context)) {
     const members = block.leaves.map((at) => sequence[at]!)
     const verdict = judge(block, members, sequence, pages, compare)
     if (verdict.kind === 'script') script++
@@ -32,9 +33,9 @@ export function placeLeaves(readings: readonly LeafReading[], pages: number): Le
 }
 
 /** What the leaves of a sheaf show, so far as one decision over all of them needs it. */
-type LineUp = Readonly<{ leaves: readonly Leaf[]; sequence: readonly Leaf[]; verdicts: Map<number, Verdict>; compare: (a: Leaf, b: Leaf) => Sameness; together: Together }>
+type LineUp = Readonly<{ leaves: readonly Leaf[]; sequence: readonly Leaf[]; verdicts: Map<number, Verdict>; compare: (a: Leaf, b: Leaf) => Sameness; context: Context }>
 
-function lineUp(readings: readonly LeafReading[]): LineUp {
+function lineUp(readings: readonly LeafReading[], pages: number): LineUp {
   const leaves = readings.map((reading, position): Leaf => ({ ...reading, position, page: reading.clear ? reading.guesses[0]!.paperPage : null }))
   const inks = leaves.map((leaf) => inkOf(leaf.ink))
   const verdicts = new Map<number, Verdict>()
@@ -44,7 +45,12 @@ function lineUp(readings: readonly LeafReading[]): LineUp {
     else if (isSecondScan(leaf, sequence, inks)) verdicts.set(leaf.position, plain('loose', ['duplicate_page']))
     else sequence.push(leaf)
   }
-  return { leaves, sequence, verdicts, compare: (a, b) => sameness(inks[a.position]!, inks[b.position]!), together: (a, b) => penCost(sequence[a]!.pen, sequence[b]!.pen) }
+  const context: Context = {
+    pages, twoUp: readings.some(({ half }) => half !== undefined),
+    together: (a, b) => penCost(sequence[a]!.pen, sequence[b]!.pen),
+    parting: (at) => (sequence[at]!.half === 1 && sequence[at - 1]!.index === sequence[at]!.index ? costs.partedSheet : 0),
+  }
+  return { leaves, sequence, verdicts, compare: (a, b) => sameness(inks[a.position]!, inks[b.position]!), context }
 }
 
 /** Beyond `certain`, for what was measured in steps. */
@@ -56,11 +62,11 @@ const slack = 0.5
  * @param from leaves before this one were found certain earlier and are not looked at again
  */
 export function placeFirstLeaves(readings: readonly LeafReading[], pages: number, from = 0): LeafFinding[] {
-  const { sequence, compare, together } = lineUp(readings)
+  const { sequence, compare, context } = lineUp(readings, pages)
   const looked = sequence.findIndex(({ position }) => position >= from)
   const found: LeafFinding[] = []
   let script = 0
-  for (const block of settledBlocks(sequence.map((leaf) => leaf.page), pages, certain + slack, together, looked === -1 ? sequence.length : looked)) {
+  for (const block of settledBlocks(sequence.map((leaf) => leaf.page), context, certain + slack, looked === -1 ? sequence.length : looked)) {
     const members = block.leaves.map((at) => sequence[at]!)
     const verdict = judge(block, members, sequence, pages, compare)
     if (verdict.kind !== 'script') continue

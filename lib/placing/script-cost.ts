@@ -2,7 +2,7 @@
  * What it costs to explain neighbouring leaves as one script, or as a tangle that only a person can part. Roughly minus the
  * logarithm of how often a fault happens at the copier: a missing page about once in 400 scripts, pages in another order once in 50.
  */
-export const costs = { missing: 6, eachMore: 0.5, otherOrder: 4, neverSwapped: 5.2, eachBreak: 2, stray: 3, unread: 2, interleaved: 6, tangled: 8, eachTangled: 1 } as const
+export const costs = { missing: 6, eachMore: 0.5, otherOrder: 4, neverSwapped: 5.2, eachBreak: 2, stray: 3, unread: 2, interleaved: 6, tangled: 8, eachTangled: 1, partedSheet: 6 } as const
 
 /** What pages in another order cost in a sheaf where `swapped` of `whole` complete scripts lie so: rarer the longer none has shown up. */
 export function otherOrderCost(swapped: number, whole: number): number {

@@ -42,9 +42,9 @@ describe('blocks that no later leaf can take apart', () => {
     let settled = 0
     for (let seed = 1; seed <= 120 / pages; seed++) {
       const sheaf = faultySheaf(seed, pages)
-      const whole = new Set(parts(explainSequence(sheaf.pages, pages, byPens(sheaf)), sheaf.pages))
+      const whole = new Set(parts(explainSequence(sheaf.pages, { pages, together: byPens(sheaf) }), sheaf.pages))
       for (let known = 2; known <= sheaf.pages.length; known += 5) {
-        for (const part of parts(settledBlocks(sheaf.pages.slice(0, known), pages, certain, byPens(sheaf)), sheaf.pages)) {
+        for (const part of parts(settledBlocks(sheaf.pages.slice(0, known), { pages, together: byPens(sheaf) }, certain), sheaf.pages)) {
           settled++
           expect(whole, `seed ${seed}, ${known} leaves known`).toContain(part)
         }
@@ -55,10 +55,10 @@ describe('blocks that no later leaf can take apart', () => {
 
   it('come soon in a sheaf in order: all but the last few leaves', () => {
     const sheaf = { pages: Array.from({ length: 40 }, (_, k) => (k % 2) + 1), hands: Array.from({ length: 40 }, (_, k) => Math.floor(k / 2)) }
-    expect(settledBlocks(sheaf.pages, 2, certain, byPens(sheaf)).flatMap(({ leaves }) => leaves)).toEqual(Array.from({ length: 34 }, (_, k) => k))
+    expect(settledBlocks(sheaf.pages, { pages: 2, together: byPens(sheaf) }, certain).flatMap(({ leaves }) => leaves)).toEqual(Array.from({ length: 34 }, (_, k) => k))
   })
 
   it('are none while so few leaves are known that anything may follow', () => {
-    expect(settledBlocks([1, 2, 1, 2], 2, certain)).toEqual([])
+    expect(settledBlocks([1, 2, 1, 2], { pages: 2 }, certain)).toEqual([])
   })
 })

@@ -20,8 +20,8 @@ export async function addExtraPage(actor: Actor, { leafId, target }: { leafId: s
   const leaf = await getLeaf(db(), leafId)
   if (!leaf) throw new AppError('not_found')
   await gatePaper(db(), actor, 'change', leaf.paperId)
-  const image = (await getLeafEvidence(db(), [leafId])).get(leafId)?.reading.image
-  const laid = laidAsItself(leaf, { x: image?.dpiX ?? 200, y: image?.dpiY ?? 200 })
+  const reading = (await getLeafEvidence(db(), [leafId])).get(leafId)?.reading
+  const laid = laidAsItself(leaf, { x: reading?.image?.dpiX ?? 200, y: reading?.image?.dpiY ?? 200 }, reading?.part)
   await decideSorting(actor, leaf.paperId, 'leaf.extra', { kind: 'leaf', id: leafId }, async (trx, touch) => {
     const current = await getLeaf(trx, leafId)
     if (!current || current.state === 'read') throw new AppError('out_of_date')

@@ -13,8 +13,8 @@ export type SheafInput = Readonly<{
   codes?: PrintedCodes
   /** Readings stored before: those leaves are not read again. */
   stored?: readonly LeafReading[]
-  /** Called with each leaf as it is read, and how many of how many are done; what it returns is waited for, so it may store. */
-  onLeaf?: (reading: LeafReading, done: number, of: number) => Promise<void> | void
+  /** Called with what each page of the sheaf shows (two leaves where it shows two pages), and how many of how many are done; what it returns is waited for, so it may store. */
+  onLeaf?: (readings: readonly LeafReading[], done: number, of: number) => Promise<void> | void
 }>
 export type SheafResult = Readonly<{ readings: readonly LeafReading[]; findings: readonly LeafFinding[]; startupSeconds: number; leavesSeconds: number; leavesCpuSeconds: number }>
 
@@ -30,13 +30,14 @@ export async function ingestSheaf({ sheaf, paper, threads = 1, codes, stored = [
     await reader.ready()
     const started = performance.now()
     const before = process.cpuUsage()
-    const readings = new Map(stored.map((reading) => [reading.index, reading]))
-    const take = async (reading: LeafReading): Promise<void> => {
-      readings.set(reading.index, reading)
-      await onLeaf?.(reading, readings.size, reader.pageCount)
+    const readings = new Map<number, readonly LeafReading[]>()
+    for (const reading of stored) readings.set(reading.index, [...(readings.get(reading.index) ?? []), reading])
+    const take = async (leaves: readonly LeafReading[]): Promise<void> => {
+      for (const { index } of leaves.slice(0, 1)) readings.set(index, leaves)
+      await onLeaf?.(leaves, readings.size, reader.pageCount)
     }
     await readLeaves(reader, (index) => readings.has(index), take, threads)
-    const inOrder = [...readings.values()].sort((a, b) => a.index - b.index)
+    const inOrder = [...readings.values()].flat().sort((a, b) => a.index - b.index || (a.half ?? 0) - (b.half ?? 0))
     const findings = placePile(inOrder, paper.length)
     const { user, system } = process.cpuUsage(before)
     return { readings: inOrder, findings, startupSeconds: (started - called) / 1000, leavesSeconds: (performance.now() - started) / 1000, leavesCpuSeconds: (user + system) / 1e6 }

@@ -1,29 +1,32 @@
 import sharp from 'sharp'
 import { AppError } from '@/lib/core/errors'
 import type { BlankPage } from '@/lib/core/grey-picture'
-import { unread, type LeafReading, type PageGuess } from '@/lib/core/leaf'
+import { unread, type ImagePart, type LeafReading, type PageGuess } from '@/lib/core/leaf'
 import type { PrintedCodes, PrintedPage } from '@/lib/core/printed-code'
 import { loadCodeEngine } from '@/lib/reading/code-engine'
 import { decodePage } from '@/lib/reading/decode-page'
 import type { CodeWindow } from '@/lib/reading/find-code'
 import { openSheaf, type OpenSheaf } from '@/lib/reading/open-sheaf'
 import { opencv, type Cv } from '@/lib/registering/opencv'
-import { registerLeaf, registerToPage } from '@/lib/registering/register-leaf'
+import { mayBeTwoUp, registerPartToPage, registerSheet } from '@/lib/registering/register-sheet'
 import { makeTemplate, type Template } from '@/lib/registering/template'
 import { codeWindows, readByCode } from './read-by-code'
 import askSheaf, { type SheafAnswer } from './sheaf-thread'
 
 /** What a thread is handed: a leaf of a sheaf (none: only get ready), the sheaf's file, the blank paper and its name, printed codes as JSON; or a file to be looked at. */
-export type LeafJob = Readonly<{ index: number | null; file: string; paperKey: string; paper: readonly BlankPage[]; codes?: Uint8Array; onto?: number }>
+export type LeafJob = Readonly<{ index: number | null; file: string; paperKey: string; paper: readonly BlankPage[]; codes?: Uint8Array; onto?: Onto }>
 export type LookJob = Readonly<{ look: string }>
-export type LeafAnswer = Readonly<{ reading: LeafReading; onto: PageGuess | null }>
+/** The page (from 1) that a person says a leaf is, and which part of its image that leaf is. */
+export type Onto = Readonly<{ paperPage: number; part?: ImagePart }>
+/** One reading, or two of an image that shows two pages. */
+export type LeafAnswer = Readonly<{ readings: readonly LeafReading[]; onto: PageGuess | null }>
 
 sharp.concurrency(1)
 sharp.cache(false)
 
 let kept: { key: string; templates: Template[]; codes: PrintedCodes; windows: CodeWindow[] } | null = null
 
-/** Looks at a sheaf, or decodes one leaf and registers it: to every page, or to the page `onto` (from 1) alone. A page that cannot be read is a reading with a problem. */
+/** Looks at a sheaf, or decodes one leaf and registers it: to every page, or to the page `onto` alone. A page that cannot be read is a reading with a problem. */
 export default async function work(job: LeafJob | LookJob): Promise<LeafAnswer | SheafAnswer> {
   return 'look' in job ? askSheaf({ file: job.look }) : readLeaf(job)
 }
@@ -35,18 +38,20 @@ async function readLeaf(job: LeafJob): Promise<LeafAnswer> {
   const { templates, codes, windows } = kept
   const index = job.index ?? 0
   try {
-    if (job.index === null) return { reading: unread(index, 'page_empty'), onto: null }
+    if (job.index === null) return { readings: [unread(index, 'page_empty')], onto: null }
     const { image, picture } = await decodePage(sheaf, index)
-    if (job.onto === undefined) {
-      const coded = windows.length > 0 ? await readByCode(cv, image, picture, templates, codes, windows) : null
-      const seen = coded?.reading ?? registerLeaf(cv, image, picture, templates)
-      return { reading: { index, ...seen, ...(coded ? { code: coded.code } : {}) }, onto: null }
+    const { onto } = job
+    if (onto === undefined) {
+      // Codes are looked for where they stand on one page: an image that shows two is told by its print.
+      const coded = windows.length > 0 && !mayBeTwoUp(image, templates) ? await readByCode(cv, image, picture, templates, codes, windows) : null
+      const seen = coded?.reading ? [coded.reading] : registerSheet(cv, image, picture, templates)
+      return { readings: seen.map((one) => ({ index, ...one, ...(coded ? { code: coded.code } : {}) })), onto: null }
     }
-    const template = templates.find(({ page }) => page.page === job.onto)
-    return { reading: unread(index, 'page_unreadable'), onto: template ? registerToPage(cv, image, picture, template) : null }
+    const template = templates.find(({ page }) => page.page === onto.paperPage)
+    return { readings: [], onto: template ? registerPartToPage(cv, image, picture, template, onto.part) : null }
   } catch (error) {
     if (!(error instanceof AppError)) throw error
-    return { reading: unread(index, error.detail['too_large'] ? 'page_too_large' : 'page_unreadable'), onto: null }
+    return { readings: [unread(index, error.detail['too_large'] ? 'page_too_large' : 'page_unreadable')], onto: null }
   }
 }
 

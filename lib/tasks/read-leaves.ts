@@ -4,7 +4,7 @@ import type { PrintedCodes } from '@/lib/core/printed-code'
 import { newId } from '@/lib/core/ids'
 import { threadPool } from '@/lib/infra/thread-pool'
 import { answered } from './look-at-sheaf'
-import type { LeafAnswer, LeafJob, LookJob } from './leaf-thread'
+import type { LeafAnswer, LeafJob, LookJob, Onto } from './leaf-thread'
 import type { SheafAnswer } from './sheaf-thread'
 
 /** A page that takes longer than this is given up, in milliseconds; its thread with it. */
@@ -15,10 +15,10 @@ export type LeafReader = Readonly<{
   pageCount: number
   /** Loads the threads' engines ahead of the first leaf. */
   ready: () => Promise<void>
-  /** One leaf, from 0. Never throws for what is wrong with the page: that is a reading with a problem. */
-  read: (index: number) => Promise<LeafReading>
-  /** Registers a leaf to the page (from 1) that a person says it is; null when its print is not found. */
-  readOnto: (index: number, paperPage: number) => Promise<PageGuess | null>
+  /** The leaves on one page of the sheaf, from 0: one, or the two halves of an image that shows two pages. Never throws for what is wrong with the page: that is a reading with a problem. */
+  read: (index: number) => Promise<readonly LeafReading[]>
+  /** Registers a leaf to the page that a person says it is; null when its print is not found. */
+  readOnto: (index: number, onto: Onto) => Promise<PageGuess | null>
   close: () => Promise<void>
 }>
 
@@ -38,7 +38,7 @@ export async function openLeaves(file: string, paper: readonly BlankPage[], thre
   const pages = paper.map((page) => ({ ...page, picture: { ...page.picture, data: shared(page.picture.data) } }))
   const paperKey = newId()
   const common = { file, paperKey, paper: pages, ...(codes && codes.size > 0 ? { codes: shared(Buffer.from(JSON.stringify([...codes]))) } : {}) }
-  const run = async (index: number, onto?: number): Promise<LeafAnswer | null> => {
+  const run = async (index: number, onto?: Onto): Promise<LeafAnswer | null> => {
     const job: LeafJob = { index, ...common, ...(onto === undefined ? {} : { onto }) }
     // a page that kills its thread is reported like one that cannot be read
     return (pool.run(job, { signal: AbortSignal.timeout(longest) }) as Promise<LeafAnswer>).catch(() => null)
@@ -48,8 +48,8 @@ export async function openLeaves(file: string, paper: readonly BlankPage[], thre
     ready: async () => {
       await Promise.all(Array.from({ length: threads }, () => pool.run({ index: null, ...common } satisfies LeafJob)))
     },
-    read: async (index) => (await run(index))?.reading ?? unread(index, 'page_unreadable'),
-    readOnto: async (index, paperPage) => (await run(index, paperPage))?.onto ?? null,
+    read: async (index) => (await run(index))?.readings ?? [unread(index, 'page_unreadable')],
+    readOnto: async (index, onto) => (await run(index, onto))?.onto ?? null,
     close: () => pool.destroy(),
   }
 }
@@ -58,7 +58,7 @@ export async function openLeaves(file: string, paper: readonly BlankPage[], thre
  * Reads the leaves of an open sheaf that `known` does not hold yet, a few at a time, and hands each over as it is done.
  * @param threads how many leaves are in work at once
  */
-export async function readLeaves(reader: LeafReader, known: (index: number) => boolean, onLeaf: (reading: LeafReading) => Promise<void> | void, threads = 1): Promise<void> {
+export async function readLeaves(reader: LeafReader, known: (index: number) => boolean, onLeaf: (readings: readonly LeafReading[]) => Promise<void> | void, threads = 1): Promise<void> {
   let next = 0
   const lane = async (): Promise<void> => {
     while (next < reader.pageCount) {

@@ -56,16 +56,16 @@ async function readMissing(reader: LeafReader, sheaf: Sheaf, pages: number, goOn
   const placeMore = firstPlacer(pages)
   // Once one lane has stopped, the reader is closing and what the other lanes bring is no finding.
   let open = true
-  const store = async (reading: LeafReading) => {
+  const store = async (leaves: readonly LeafReading[]) => {
     open &&= goOn()
     if (!open) return
     try {
-      readings.push(reading)
+      readings.push(...leaves)
       const first = placeMore(readings)
       await transaction(async (trx) => {
         open &&= await isBeingRead(trx, sheaf.id)
         if (!open) return
-        await addLeafReading(trx, sheaf.id, reading)
+        for (const leaf of leaves) await addLeafReading(trx, sheaf.id, leaf)
         if (first.findings.length > 0) await placeFirst(trx, sheaf, first.readings, first.findings)
       })
     } catch (error) {

@@ -27,7 +27,7 @@ export async function readSortingTable(actor: Actor, paperId: string): Promise<S
   const classes = await listSittingClasses(db(), paperId)
   const students = await studentsOf(classes)
   const scripts = await scriptsOf(paperId, paper.pages.map(({ page }) => page), new Map(leaves.map(({ id, turn }) => [id, turn])))
-  const stub = (leaf: Leaf): LeafStub => ({ id: leaf.id, number: leaf.position + 1, sheafName: names.get(leaf.sheafId) ?? '', turn: leaf.turn })
+  const stub = (leaf: Leaf): LeafStub => ({ id: leaf.id, number: leaf.position + 1, half: leaf.half, sheafName: names.get(leaf.sheafId) ?? '', turn: leaf.turn })
   const pile: Pile = { leaves, scripts, students }
   const namePage = paper.boxes.find(({ kind }) => kind === 'name')?.page ?? paper.boxes[0]?.page ?? null
   return {
@@ -77,9 +77,9 @@ function looseOf(leaf: Leaf, evidence: LeafEvidence | null, pile: Pile): Omit<Lo
   const at = own.findIndex(({ id }) => id === leaf.id)
   const paperPage = leaf.paperPage ?? guesses[0]?.paperPage ?? null
   return {
-    width: leaf.width, height: leaf.height, paperPage: leaf.paperPage, guesses, reasons, problem: evidence?.reading.problem ?? null,
+    width: evidence?.reading.part?.w ?? leaf.width, height: evidence?.reading.part?.h ?? leaf.height, paperPage: leaf.paperPage, guesses, reasons, problem: evidence?.reading.problem ?? null,
     before: neighbour(own[at - 1], pile), after: neighbour(own[at + 1], pile),
-    places: reasons.includes('unlike_paper') ? [] : likelyPlaces({ position: leaf.position, paperPage, secondScan: reasons.includes('duplicate_page') }, piled(own, pile.scripts), withoutScript(pile)),
+    places: reasons.includes('unlike_paper') ? [] : likelyPlaces({ position: at, paperPage, secondScan: reasons.includes('duplicate_page') }, piled(own, pile.scripts), withoutScript(pile)),
   }
 }
 
@@ -90,7 +90,7 @@ function neighbour(leaf: Leaf | undefined, { scripts }: Pile): LeafNeighbour | n
 }
 
 function piled(own: readonly Leaf[], scripts: readonly SortScript[]) {
-  const positions = new Map(own.map((leaf) => [leaf.id, leaf.position]))
+  const positions = new Map(own.map((leaf, at) => [leaf.id, at]))
   return scripts.map(({ id, pages }) => ({ id, pages: pages.map(({ paperPage, leafId }) => ({ paperPage, position: positions.get(leafId ?? '') ?? null })) }))
 }
 

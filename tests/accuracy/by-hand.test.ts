@@ -15,9 +15,9 @@ describe('a leaf placed by hand', () => {
     const truth = JSON.parse(await readFile(join(folder, 'truth.json'), 'utf8')) as { pages: { rotation: number; paper_page: number | null }[] }
     const reader = await openLeaves(join(folder, 'scan.pdf'), paper)
     try {
-      expect(await reader.readOnto(14, 3)).toMatchObject({ paperPage: 3, rotation: truth.pages[14]!.rotation })
-      expect(await reader.readOnto(14, 2)).toBeNull()
-      expect(await reader.readOnto(foreignLeaf, 1)).toBeNull()
+      expect(await reader.readOnto(14, { paperPage: 3 })).toMatchObject({ paperPage: 3, rotation: truth.pages[14]!.rotation })
+      expect(await reader.readOnto(14, { paperPage: 2 })).toBeNull()
+      expect(await reader.readOnto(foreignLeaf, { paperPage: 1 })).toBeNull()
     } finally {
       await reader.close()
     }
@@ -27,9 +27,9 @@ describe('a leaf placed by hand', () => {
     const paper = await openBlankPaper(await readFile(join(folder, 'paper.pdf')))
     const sheaf = join(folder, 'scan.pdf')
     const reader = await openLeaves(sheaf, paper)
-    const stored = await Promise.all([0, 1, 2, 3].map((index) => reader.read(index))).finally(() => reader.close())
+    const stored = (await Promise.all([0, 1, 2, 3].map((index) => reader.read(index))).finally(() => reader.close())).flat()
     const seen: number[] = []
-    const { findings } = await ingestSheaf({ sheaf, paper, stored, onLeaf: ({ index }) => void seen.push(index) })
+    const { findings } = await ingestSheaf({ sheaf, paper, stored, onLeaf: (leaves) => void seen.push(leaves[0]!.index) })
     expect(Math.min(...seen)).toBe(4)
     expect(seen).toHaveLength(46)
     expect(findings.slice(0, 4).map(({ script, paperPage }) => [script, paperPage])).toEqual([[1, 1], [1, 2], [1, 3], [1, 4]])

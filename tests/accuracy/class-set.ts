@@ -24,6 +24,6 @@ export async function scoreFolder(folder: string, threads = 1): Promise<ScoredSe
   return { score: scoreResult(truth, found), result, truth, codes }
 }
 
-function resultPage({ index, kind, script, paperPage, rotation, homography, confidence }: SheafResult['findings'][number]): ResultPage {
-  return { index, kind, script, paper_page: paperPage, rotation, homography, confidence }
+function resultPage({ index, half, kind, script, paperPage, rotation, homography, confidence }: SheafResult['findings'][number]): ResultPage {
+  return { index, ...(half === undefined ? {} : { half }), kind, script, paper_page: paperPage, rotation, homography, confidence }
 }

@@ -13,6 +13,7 @@ export type TruthPage = Readonly<{
 export type Truth = Readonly<{ pages: readonly TruthPage[]; questions: readonly Readonly<{ page: number; region: PaperRect }>[] }>
 export type ResultPage = Readonly<{
   index: number
+  half?: number
   kind: string
   script?: number | null
   candidate_number?: string | null

@@ -1,6 +1,6 @@
 import path from 'node:path'
 import sharp from 'sharp'
-import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, beforeAll, expect, it } from 'vitest'
 import { db } from '@/db/knex'
 import type { Actor } from '@/lib/core/actor'
 import { newId } from '@/lib/core/ids'

@@ -4,7 +4,6 @@ import { patchReach, type Template } from './template'
 
 /** A patch of print counts as found from this correlation on. */
 const foundFrom = 0.6
-const side = 2 * patchReach + 1
 
 /**
  * How well each of a template's patches of print is there on the leaf, by correlation (-1..1), under a map from template to
@@ -12,11 +11,7 @@ const side = 2 * patchReach + 1
  */
 export function printFound(leaf: GreyPicture, template: Template, map: Homography): Float32Array {
   const out = new Float32Array(template.patches.length)
-  const patch = new Float32Array(side * side)
-  for (let k = 0; k < out.length; k++) {
-    sample(leaf, map, Math.round(template.corners[k * 2]!), Math.round(template.corners[k * 2 + 1]!), patch)
-    out[k] = correlation(patch, template.patches[k]!)
-  }
+  for (let k = 0; k < out.length; k++) out[k] = likeness(leaf, map, Math.round(template.corners[k * 2]!), Math.round(template.corners[k * 2 + 1]!), template.patches[k]!)
   return out
 }
 
@@ -28,34 +23,32 @@ export function shareFound(found: Float32Array, chosen?: readonly number[]): num
   return hits / Math.max(1, chosen ? chosen.length : found.length)
 }
 
-function sample({ width, height, data }: GreyPicture, [[a, b, c], [d, e, f], [g, h, i]]: Homography, cx: number, cy: number, patch: Float32Array): void {
-  for (let j = -patchReach, k = 0; j <= patchReach; j++)
-    for (let l = -patchReach; l <= patchReach; l++, k++) {
-      const x = cx + l + 0.5
-      const y = cy + j + 0.5
-      const w = g * x + h * y + i
-      const u = (a * x + b * y + c) / w - 0.5
-      const v = (d * x + e * y + f) / w - 0.5
-      const [m, n] = [Math.floor(u), Math.floor(v)]
-      if (!(m >= 0 && n >= 0 && m + 1 < width && n + 1 < height)) {
-        patch[k] = 255
-        continue
-      }
-      const [p, q] = [u - m, v - n]
-      const at = n * width + m
-      patch[k] = (data[at]! * (1 - p) + data[at + 1]! * p) * (1 - q) + (data[at + width]! * (1 - p) + data[at + width + 1]! * p) * q
-    }
-}
-
-/** `normalised` has mean 0 and length 1. */
-function correlation(patch: Float32Array, normalised: Float32Array): number {
+/** Correlation of a patch (mean 0, length 1) with the leaf where the map puts it; over so small a piece the map is taken to be even. */
+function likeness({ width, height, data }: GreyPicture, [[a, b, c], [d, e, f], [g, h, i]]: Homography, cx: number, cy: number, patch: Float32Array): number {
+  const [x, y] = [cx + 0.5, cy + 0.5]
+  const w = g * x + h * y + i
+  const [u0, v0] = [(a * x + b * y + c) / w, (d * x + e * y + f) / w]
+  const [ux, uy, vx, vy] = [(a - u0 * g) / w, (b - u0 * h) / w, (d - v0 * g) / w, (e - v0 * h) / w]
   let [sum, square, dot] = [0, 0, 0]
-  for (let k = 0; k < patch.length; k++) {
-    const v = patch[k]!
-    sum += v
-    square += v * v
-    dot += v * normalised[k]!
+  for (let j = -patchReach, k = 0; j <= patchReach; j++) {
+    let u = u0 - 0.5 - patchReach * ux + j * uy
+    let v = v0 - 0.5 - patchReach * vx + j * vy
+    for (let l = -patchReach; l <= patchReach; l++, k++, u += ux, v += vx) {
+      const light = u >= 0 && v >= 0 && u + 1 < width && v + 1 < height ? lightAt(data, width, u, v) : 255
+      sum += light
+      square += light * light
+      dot += light * patch[k]!
+    }
   }
   const spread = square - (sum * sum) / patch.length
   return spread < 36 * patch.length ? 0 : dot / Math.sqrt(spread)
+}
+
+function lightAt(data: Uint8Array, width: number, u: number, v: number): number {
+  const [m, n] = [u | 0, v | 0]
+  const p = u - m
+  const at = n * width + m
+  const upper = data[at]! + (data[at + 1]! - data[at]!) * p
+  const lower = data[at + width]! + (data[at + width + 1]! - data[at + width]!) * p
+  return upper + (lower - upper) * (v - n)
 }

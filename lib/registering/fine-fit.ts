@@ -2,7 +2,6 @@ import type { GreyPicture } from '@/lib/core/grey-picture'
 import { compose, toPixels, type Homography } from '@/lib/core/paper-space'
 import { fitAffine, type Pair } from './fit-affine'
 import { withMats, type Cv } from './opencv'
-import { boxShrink } from './shrink'
 import type { Template } from './template'
 import { follow } from './track'
 
@@ -13,11 +12,10 @@ const fewest = 12
 const furthest = 5
 
 /**
- * Follows a template's print on a levelled leaf from a near map (template -> leaf, 100 dpi, corner-based pixels), first at 50 dpi, then at
- * 100, and fits the exact map. Null when too few patches agree on any.
+ * Follows a template's print on a levelled leaf from a near map (template -> leaf, 100 dpi, corner-based pixels), first at 50 dpi (`half`), then
+ * at 100, and fits the exact map. Null when too few patches agree on any.
  */
-export function fineFit(cv: Cv, leaf: GreyPicture, template: Template, near: Homography): Homography | null {
-  const half = boxShrink(leaf, 2)
+export function fineFit(cv: Cv, leaf: GreyPicture, half: GreyPicture, template: Template, near: Homography): Homography | null {
   const rough = follow(half, template.tracks50, halved(near), furthest)
   const [a, b, c, d, e, f] = fitAffine(rough, 0.7)
   const nearer = compose(near, [[a, c, e * 2], [b, d, f * 2], [0, 0, 1]])

@@ -1,5 +1,6 @@
 import { toPixels, turnOf, type Homography, type PaperPoint } from '@/lib/core/paper-space'
-import type { Candidate, Ready } from './register-leaf'
+import type { Candidate } from './coarse'
+import type { Ready } from './register-leaf'
 import type { Template } from './template'
 
 /** Points to pixels of 25 dpi. */

@@ -1,13 +1,14 @@
 import type { GreyPicture } from '@/lib/core/grey-picture'
 import type { LeafReading, PageGuess, PageImage } from '@/lib/core/leaf'
-import { turnOf, type Homography, type PaperPoint, type Turn } from '@/lib/core/paper-space'
+import { turnOf, type Homography, type PaperPoint } from '@/lib/core/paper-space'
 import { blockFit } from './block-fit'
-import { bestShift, marginsFor, uprightInk, type CoarsePlace } from './coarse'
+import { coarsePlaces, type Candidate } from './coarse'
 import { printFound, shareFound } from './confirm'
 import { isEmpty } from './is-empty'
 import { fineFit } from './fine-fit'
 import { inkMap } from './ink-map'
 import { level, type Levelled } from './level'
+import { reused } from './memory'
 import type { Cv } from './opencv'
 import { penOf } from './pen-of'
 import { placeByCode, turnedAbout } from './place-by-code'
@@ -17,9 +18,8 @@ import { skews } from './skews'
 import type { Template } from './template'
 import { confidences, type Rival } from './weigh'
 
-export type Candidate = CoarsePlace & Readonly<{ template: Template }>
 /** A leaf made ready for being compared: levelled at 100 dpi. */
-export type Ready = Readonly<{ shrunk: Shrunk; levelled: Levelled; ink12: GreyPicture }>
+export type Ready = Readonly<{ shrunk: Shrunk; levelled: Levelled; half: GreyPicture; ink12: GreyPicture }>
 
 /** A share of print found from which no further look is needed, when no other page comes near. */
 const plainlyFound = 0.5
@@ -29,6 +29,9 @@ const mostTried = 4
 const clearFrom = 0.5
 /** So much of a page's print has to lie where its code says before the two are believed. */
 const provenShare = 0.25
+
+/** A thread registers one leaf at a time, and none of its pictures outlives that. */
+const memory = reused()
 
 /**
  * What one leaf shows by itself: which page of the paper it is, how it lies, whether it is empty.
@@ -80,9 +83,9 @@ export function registerByCode(cv: Cv, image: PageImage, picture: GreyPicture, t
 
 function prepare(cv: Cv, image: PageImage, picture: GreyPicture, paper: readonly Template[]): Ready {
   const { dpiX, dpiY } = scanDensity(image, paper.map((t) => t.page))
-  const shrunk = shrinkTo(cv, picture, dpiX, dpiY, 100)
-  const levelled = level(cv, shrunk.picture)
-  return { shrunk, levelled, ink12: boxShrink(levelled.ink, 2) }
+  const shrunk = shrinkTo(cv, picture, dpiX, dpiY, 100, memory)
+  const levelled = level(shrunk.picture, memory)
+  return { shrunk, levelled, half: boxShrink(levelled.white, 2, memory, 'half'), ink12: boxShrink(levelled.ink, 2, memory, 'ink12') }
 }
 
 function skewsOf({ levelled }: Ready): (sideways: boolean) => number[] {
@@ -93,7 +96,7 @@ function skewsOf({ levelled }: Ready): (sideways: boolean) => number[] {
 function tryCandidates(cv: Cv, ready: Ready, paper: readonly Template[], degrees: (sideways: boolean) => readonly number[]): Rival[] {
   const candidates = [false, true].flatMap((sideways) => {
     const fitting = paper.filter((template) => fits(ready.ink12, template, sideways))
-    return fitting.length ? coarsePlaces(ready, fitting, sideways, degrees(sideways)) : []
+    return fitting.length ? coarsePlaces(ready.ink12, fitting, sideways, degrees(sideways)) : []
   })
   candidates.sort((a, b) => b.likeness - a.likeness)
   const rivals: Rival[] = []
@@ -115,24 +118,9 @@ function fits(ink: GreyPicture, { ink12 }: Template, sideways: boolean): boolean
   return sideways ? turned < upright + 0.12 : upright < turned + 0.12
 }
 
-function coarsePlaces({ ink12 }: Ready, paper: readonly Template[], sideways: boolean, skewed: readonly number[]): Candidate[] {
-  const turns: Turn[] = sideways ? [90, 270] : [0, 180]
-  return paper.flatMap((template) =>
-    turns.map((turn) => {
-      const margin = marginsFor(ink12, template.ink12, sideways)
-      const places = skewed.map((skew) => {
-        const degrees = skew - turn
-        const canvas = uprightInk(ink12, degrees, template.ink12.width + 2 * margin.x, template.ink12.height + 2 * margin.y)
-        return { template, turn, degrees, ...bestShift(canvas, template.ink12, margin) }
-      })
-      return places.reduce((a, b) => (b.likeness > a.likeness ? b : a))
-    }),
-  )
-}
-
-function fitExactly(cv: Cv, { levelled }: Ready, { template, ...place }: Candidate): Rival | null {
-  const near = blockFit(levelled.ink, template.ink25, place)
-  const map = fineFit(cv, levelled.white, template, near.map)
+function fitExactly(cv: Cv, { levelled, half }: Ready, { template, ...place }: Candidate): Rival | null {
+  const near = blockFit(levelled.ink, template.ink25, template.blocks25, place)
+  const map = fineFit(cv, levelled.white, half, template, near)
   if (!map) return null
   const found = printFound(levelled.white, template, map)
   return { template, map, found, share: shareFound(found) }

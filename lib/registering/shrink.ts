@@ -1,15 +1,74 @@
 import type { GreyPicture } from '@/lib/core/grey-picture'
+import { areaShrink } from './area-shrink'
+import { fresh, type Memory } from './memory'
 import { withMats, type Cv } from './opencv'
 
 /** A picture made smaller: a pixel (x, y) of it is (x * byX, y * byY) of the one it came from, in corner-based pixels. */
 export type Shrunk = Readonly<{ picture: GreyPicture; byX: number; byY: number }>
 
-/** Means of n x n boxes; what is left over at the right and lower edge is dropped. */
-export function boxShrink({ width, height, data }: GreyPicture, n: number): GreyPicture {
+/** Means of n x n boxes; what is left over at the right and lower edge is dropped. `use` names the memory that it lands in. */
+export function boxShrink(picture: GreyPicture, n: number, memory: Memory = fresh, use = `box ${n}`): GreyPicture {
+  if (n === 1) return picture
+  const out = memory(use, Math.max(1, Math.floor(picture.width / n)) * Math.max(1, Math.floor(picture.height / n)))
+  if (Math.min(picture.width, picture.height) < n) return manyBox(picture, n, out)
+  if (n === 2) return twoBox(picture, out)
+  if (n === 3) return threeBox(picture, out)
+  if (n === 4) return fourBox(picture, out)
+  return manyBox(picture, n, out)
+}
+
+// The usual sizes are written out: a leaf has millions of pixels, and an inner loop of two or three steps costs more than its work.
+
+function twoBox({ width, height, data }: GreyPicture, out: Uint8Array): GreyPicture {
+  const w = width >> 1
+  const h = height >> 1
+  for (let y = 0, to = 0; y < h; y++) {
+    let a = 2 * y * width
+    for (let x = 0; x < w; x++, a += 2) {
+      const b = a + width
+      out[to++] = (data[a]! + data[a + 1]! + data[b]! + data[b + 1]! + 2) >> 2
+    }
+  }
+  return { width: w, height: h, data: out }
+}
+
+function threeBox({ width, height, data }: GreyPicture, out: Uint8Array): GreyPicture {
+  const w = Math.floor(width / 3)
+  const h = Math.floor(height / 3)
+  for (let y = 0, to = 0; y < h; y++) {
+    let a = 3 * y * width
+    for (let x = 0; x < w; x++, a += 3) {
+      const b = a + width
+      const c = b + width
+      const sum = data[a]! + data[a + 1]! + data[a + 2]! + data[b]! + data[b + 1]! + data[b + 2]! + data[c]! + data[c + 1]! + data[c + 2]!
+      // a ninth, exactly, for sums up to 9 * 255
+      out[to++] = ((sum + 4) * 7282) >> 16
+    }
+  }
+  return { width: w, height: h, data: out }
+}
+
+function fourBox({ width, height, data }: GreyPicture, out: Uint8Array): GreyPicture {
+  const w = width >> 2
+  const h = height >> 2
+  for (let y = 0, to = 0; y < h; y++) {
+    let a = 4 * y * width
+    for (let x = 0; x < w; x++, a += 4) {
+      const b = a + width
+      const c = b + width
+      const d = c + width
+      const upper = data[a]! + data[a + 1]! + data[a + 2]! + data[a + 3]! + data[b]! + data[b + 1]! + data[b + 2]! + data[b + 3]!
+      const lower = data[c]! + data[c + 1]! + data[c + 2]! + data[c + 3]! + data[d]! + data[d + 1]! + data[d + 2]! + data[d + 3]!
+      out[to++] = (upper + lower + 8) >> 4
+    }
+  }
+  return { width: w, height: h, data: out }
+}
+
+function manyBox({ width, height, data }: GreyPicture, n: number, out: Uint8Array): GreyPicture {
   const w = Math.max(1, Math.floor(width / n))
   const h = Math.max(1, Math.floor(height / n))
   const sums = new Uint32Array(w)
-  const out = new Uint8Array(w * h)
   const area = n * n
   for (let y = 0; y < h; y++) {
     sums.fill(0)
@@ -23,17 +82,23 @@ export function boxShrink({ width, height, data }: GreyPicture, n: number): Grey
 }
 
 /** Brings a picture of so many dots per inch to `dpi`: by boxes where the ratio is whole, else by area. */
-export function shrinkTo(cv: Cv, picture: GreyPicture, dpiX: number, dpiY: number, dpi: number): Shrunk {
+export function shrinkTo(cv: Cv, picture: GreyPicture, dpiX: number, dpiY: number, dpi: number, memory: Memory = fresh): Shrunk {
   const n = Math.round(dpiX / dpi)
   if (n >= 1 && Math.abs(dpiX / dpi - n) < 0.02 * n && Math.abs(dpiY / dpi - n) < 0.02 * n)
-    return { picture: n === 1 ? picture : boxShrink(picture, n), byX: n, byY: n }
+    return { picture: boxShrink(picture, n, memory, 'leaf'), byX: n, byY: n }
   const width = Math.max(1, Math.round((picture.width * dpi) / dpiX))
   const height = Math.max(1, Math.round((picture.height * dpi) / dpiY))
+  const by = { byX: picture.width / width, byY: picture.height / height }
+  if (width < picture.width && height < picture.height) return { picture: areaShrink(picture, width, height, memory('leaf', width * height)), ...by }
+  return { picture: stretched(cv, picture, width, height), ...by }
+}
+
+function stretched(cv: Cv, picture: GreyPicture, width: number, height: number): GreyPicture {
   return withMats(cv, (keep) => {
     const from = keep(matOf(cv, picture))
     const to = keep(new cv.Mat())
-    cv.resize(from, to, new cv.Size(width, height), 0, 0, dpiX >= dpi ? cv.INTER_AREA : cv.INTER_LINEAR)
-    return { picture: pictureOf(to), byX: picture.width / width, byY: picture.height / height }
+    cv.resize(from, to, new cv.Size(width, height), 0, 0, cv.INTER_LINEAR)
+    return pictureOf(to)
   })
 }
 

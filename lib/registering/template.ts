@@ -1,9 +1,11 @@
 import type { BlankPage, GreyPicture } from '@/lib/core/grey-picture'
+import { inkedPart, type Inked } from './best-shift'
+import { blocksOf, type Block } from './block-fit'
 import { clearOfPrint } from './ink-map'
 import { level } from './level'
 import { withMats, type Cv } from './opencv'
 import { boxShrink, matOf } from './shrink'
-import { makeTracks, type Track } from './track'
+import { makeTracks, type Tracks } from './track'
 
 /** Half the side of a patch of print that is looked for on a leaf, in pixels at 100 dpi. */
 export const patchReach = 5
@@ -16,18 +18,20 @@ export type Template = Readonly<{
   white: GreyPicture
   ink25: GreyPicture
   ink12: GreyPicture
+  inked12: Inked
+  blocks25: readonly Block[]
   /** 1 where nothing is printed within a millimetre. */
   clear: Uint8Array
   corners: Float32Array
   patches: readonly Float32Array[]
   /** Print that is followed for the exact fit, at 100 and at 50 dpi. */
-  tracks: readonly Track[]
-  tracks50: readonly Track[]
+  tracks: Tracks
+  tracks50: Tracks
 }>
 
 /** Makes a blank page (at 100 dpi) ready for registering leaves to it. Patches have mean 0 and length 1. */
 export function makeTemplate(cv: Cv, page: BlankPage): Template {
-  const { white, ink } = level(cv, page.picture)
+  const { white, ink } = level(page.picture)
   const found = printedCorners(cv, white)
   const corners: number[] = []
   const patches: Float32Array[] = []
@@ -37,8 +41,9 @@ export function makeTemplate(cv: Cv, page: BlankPage): Template {
     corners.push(found[k]!, found[k + 1]!)
     patches.push(patch)
   }
+  const ink12 = boxShrink(ink, 2)
   return {
-    page, white, ink25: ink, ink12: boxShrink(ink, 2), clear: clearOfPrint(white), corners: Float32Array.from(corners), patches,
+    page, white, ink25: ink, ink12, inked12: inkedPart(ink12), blocks25: blocksOf(ink), clear: clearOfPrint(white), corners: Float32Array.from(corners), patches,
     tracks: makeTracks(white, corners),
     tracks50: makeTracks(boxShrink(white, 2), everyOther(corners)),
   }

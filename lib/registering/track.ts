@@ -5,91 +5,92 @@ import type { Pair } from './fit-affine'
 /** Half the side of a tracked patch, in pixels. */
 const reach = 7
 const side = 2 * reach + 1
+const area = side * side
 const steps = 10
-const still = 0.02
+/** Steps shrink to a fraction of the one before, so after one this short the rest does not matter (0.01 mm at 100 dpi). */
+const still = 0.05
 /** A patch that ends up less alike than this was not found. */
 const alike = 0.5
 
-/** A patch of print made ready for being followed: mean 0, length 1, with its slopes and their inverse normal matrix. Middle in pixel indices. */
-export type Track = Readonly<{ x: number; y: number; patch: Float32Array; slopeX: Float32Array; slopeY: Float32Array; inverse: readonly [number, number, number] }>
+/** What a patch needs besides its pixels: its middle in pixel indices, its slopes' sums, their products with it, and their inverse normal matrix. */
+type Facts = Readonly<{ x: number; y: number; sumX: number; sumY: number; dotX: number; dotY: number; inverse: readonly [number, number, number] }>
+
+/** Patches of print made ready for being followed. `values` holds patch (mean 0, length 1), slope across and slope down for each pixel of each in turn. */
+export type Tracks = Readonly<{ facts: readonly Facts[]; values: Float32Array }>
 
 /** Makes tracks of the patches round points (pixel indices x, y, x, y ...); those too plain or too near the edge to be followed fall out. */
-export function makeTracks({ width, height, data }: GreyPicture, points: ArrayLike<number>): Track[] {
-  const tracks: Track[] = []
+export function makeTracks(picture: GreyPicture, points: ArrayLike<number>): Tracks {
+  const { width, height } = picture
+  const facts: Facts[] = []
+  const values = new Float32Array((points.length / 2) * area * 3)
   for (let k = 0; k < points.length; k += 2) {
     const [x, y] = [Math.round(points[k]!), Math.round(points[k + 1]!)]
     if (x <= reach || y <= reach || x >= width - reach - 1 || y >= height - reach - 1) continue
-    const values = { patch: new Float32Array(side * side), slopeX: new Float32Array(side * side), slopeY: new Float32Array(side * side) }
-    for (let j = -reach, n = 0; j <= reach; j++)
-      for (let i = -reach; i <= reach; i++, n++) {
-        const at = (y + j) * width + x + i
-        values.patch[n] = data[at]!
-        values.slopeX[n] = (data[at + 1]! - data[at - 1]!) / 2
-        values.slopeY[n] = (data[at + width]! - data[at - width]!) / 2
-      }
-    const length = centre(values.patch)
-    if (length < 6 * side) continue
-    let [xx, xy, yy] = [0, 0, 0]
-    for (let n = 0; n < side * side; n++) {
-      const gx = (values.slopeX[n]! /= length)
-      const gy = (values.slopeY[n]! /= length)
-      xx += gx * gx
-      xy += gx * gy
-      yy += gy * gy
-    }
-    const det = xx * yy - xy * xy
-    if (det < 1e-3 * (xx + yy) ** 2) continue
-    tracks.push({ x, y, ...values, inverse: [yy / det, -xy / det, xx / det] })
+    const at = facts.length * area * 3
+    const made = makeTrack(picture, x, y, values.subarray(at, at + area * 3))
+    if (made) facts.push(made)
   }
-  return tracks
+  return { facts, values: values.slice(0, facts.length * area * 3) }
 }
 
-/** Brings values to mean 0 and length 1; gives the length they had. */
-function centre(values: Float32Array): number {
-  let sum = 0
-  for (const v of values) sum += v
-  const mean = sum / values.length
-  let square = 0
-  for (let n = 0; n < values.length; n++) square += (values[n]! -= mean) ** 2
+function makeTrack({ width, data }: GreyPicture, x: number, y: number, into: Float32Array): Facts | null {
+  let [mean, square] = [0, 0]
+  each((i, j) => { mean += data[(y + j) * width + x + i]! / area })
+  each((i, j) => { square += (data[(y + j) * width + x + i]! - mean) ** 2 })
   const length = Math.sqrt(square)
-  if (length > 0) for (let n = 0; n < values.length; n++) values[n]! /= length
-  return length
+  if (length < 6 * side) return null
+  let [xx, xy, yy, sumX, sumY, dotX, dotY] = [0, 0, 0, 0, 0, 0, 0]
+  each((i, j, n) => {
+    const at = (y + j) * width + x + i
+    const v = (into[n] = (data[at]! - mean) / length)
+    const gx = (into[n + 1] = (data[at + 1]! - data[at - 1]!) / 2 / length)
+    const gy = (into[n + 2] = (data[at + width]! - data[at - width]!) / 2 / length)
+    xx += gx * gx
+    xy += gx * gy
+    yy += gy * gy
+    sumX += gx
+    sumY += gy
+    dotX += gx * v
+    dotY += gy * v
+  })
+  const det = xx * yy - xy * xy
+  if (det < 1e-3 * (xx + yy) ** 2) return null
+  return { x, y, sumX, sumY, dotX, dotY, inverse: [yy / det, -xy / det, xx / det] }
 }
+
+function each(work: (i: number, j: number, n: number) => void): void {
+  for (let j = -reach, n = 0; j <= reach; j++) for (let i = -reach; i <= reach; i++, n += 3) work(i, j, n)
+}
+
+/** What the last look at a leaf gave: light, its square, and products with the patch and its slopes. */
+const seen = { sum: 0, square: 0, dot: 0, dotX: 0, dotY: 0 }
 
 /**
  * Follows patches on a leaf from a near affine map (template -> leaf pixels, corner-based), each by itself, to a few hundredths of a pixel
  * (inverse-compositional, shift only; light and contrast do not matter). Pairs are in template pixels: where a patch is, and where it was found.
  */
-export function follow(leaf: GreyPicture, tracks: readonly Track[], near: Homography, furthest: number): Pair[] {
+export function follow(leaf: GreyPicture, { facts, values }: Tracks, near: Homography, furthest: number): Pair[] {
   const pairs: Pair[] = []
-  const seen = new Float32Array(side * side)
-  for (const track of tracks) {
+  facts.forEach((track, k) => {
     let [dx, dy, likeness] = [0, 0, 0]
     for (let step = 0; step < steps; step++) {
-      if (!sample(leaf, near, track.x + 0.5 + dx, track.y + 0.5 + dy, seen) || centre(seen) < 3 * side) {
-        likeness = 0
-        break
-      }
-      let [x, y] = [0, 0]
       likeness = 0
-      for (let n = 0; n < seen.length; n++) {
-        const error = seen[n]! - track.patch[n]!
-        x += track.slopeX[n]! * error
-        y += track.slopeY[n]! * error
-        likeness += seen[n]! * track.patch[n]!
-      }
+      if (!look(leaf, near, track.x + 0.5 + dx, track.y + 0.5 + dy, values, k * area * 3)) break
+      const mean = seen.sum / area
+      const length = Math.sqrt(Math.max(0, seen.square - seen.sum * mean))
+      if (length < 3 * side) break
+      const x = (seen.dotX - mean * track.sumX) / length - track.dotX
+      const y = (seen.dotY - mean * track.sumY) / length - track.dotY
       const [a, b, c] = track.inverse
       const [mx, my] = [limited(a * x + b * y), limited(b * x + c * y)]
       dx -= mx
       dy -= my
-      if (Math.hypot(dx, dy) > furthest) {
-        likeness = 0
-        break
-      }
-      if (Math.hypot(mx, my) < still) break
+      if (dx * dx + dy * dy > furthest * furthest) break
+      likeness = seen.dot / length
+      if (mx * mx + my * my < still * still) break
     }
     if (likeness >= alike) pairs.push({ x: track.x + 0.5, y: track.y + 0.5, u: track.x + 0.5 + dx, v: track.y + 0.5 + dy, weight: likeness })
-  }
+  })
   return pairs
 }
 
@@ -98,22 +99,36 @@ function limited(by: number): number {
   return Math.max(-1.5, Math.min(1.5, by))
 }
 
-/** Takes the patch round a template point off the leaf; false when it lies beyond the edge. */
-function sample({ width, height, data }: GreyPicture, [[a, b, c], [d, e, f]]: Homography, x: number, y: number, into: Float32Array): boolean {
+/** Compares the patch round a template point with the leaf there, into `seen`; false when it lies beyond the edge. */
+function look({ width, height, data }: GreyPicture, [[a, b, c], [d, e, f]]: Homography, x: number, y: number, values: Float32Array, from: number): boolean {
   const u0 = a * x + b * y + c - 0.5
   const v0 = d * x + e * y + f - 0.5
   const spanU = (Math.abs(a) + Math.abs(b)) * reach + 1
   const spanV = (Math.abs(d) + Math.abs(e)) * reach + 1
   if (u0 < spanU || v0 < spanV || u0 >= width - spanU - 1 || v0 >= height - spanV - 1) return false
-  for (let j = -reach, n = 0; j <= reach; j++) {
+  let [sum, square, dot, dotX, dotY] = [0, 0, 0, 0, 0]
+  for (let j = -reach, n = from; j <= reach; j++) {
     let u = u0 - a * reach + b * j
     let v = v0 - d * reach + e * j
-    for (let i = -reach; i <= reach; i++, n++, u += a, v += d) {
-      const [m, k] = [u | 0, v | 0]
-      const [p, q] = [u - m, v - k]
+    for (let i = -reach; i <= reach; i++, n += 3, u += a, v += d) {
+      const m = u | 0
+      const k = v | 0
+      const p = u - m
       const at = k * width + m
-      into[n] = (data[at]! * (1 - p) + data[at + 1]! * p) * (1 - q) + (data[at + width]! * (1 - p) + data[at + width + 1]! * p) * q
+      const upper = data[at]! + (data[at + 1]! - data[at]!) * p
+      const lower = data[at + width]! + (data[at + width + 1]! - data[at + width]!) * p
+      const light = upper + (lower - upper) * (v - k)
+      sum += light
+      square += light * light
+      dot += light * values[n]!
+      dotX += light * values[n + 1]!
+      dotY += light * values[n + 2]!
     }
   }
+  seen.sum = sum
+  seen.square = square
+  seen.dot = dot
+  seen.dotX = dotX
+  seen.dotY = dotY
   return true
 }

@@ -77,6 +77,31 @@ export async function listStanding(db: Db, classSetId: string): Promise<Standing
   })) as Standing[]
 }
 
+/** A returned script of a class set as a file: `sha256` is null while it is being built, and for good where it stayed behind (`problem`). */
+export type FileOfSet = Readonly<{ id: string; scriptId: string; studentId: string; revision: number; askedAt: number; sha256: string | null; contentKey: string | null; problem: string | null }>
+const fileColumns = {
+  id: 'returned_scripts.id', scriptId: 'returned_scripts.script_id', studentId: 'returned_scripts.student_id', revision: 'returned_scripts.revision', askedAt: 'releases.created_at',
+  sha256: 'stored_files.sha256', contentKey: 'returned_scripts.content_key', problem: 'returned_scripts.problem',
+}
+
+/** The files that stand handed back of a class set. */
+export async function listStandingFiles(db: Db, classSetId: string): Promise<FileOfSet[]> {
+  return (await newest(db).join('stored_files', 'stored_files.id', 'returned_scripts.file_id').where('releases.class_set_id', classSetId).select(fileColumns)) as FileOfSet[]
+}
+
+/** The files of the release that is being built, those already there and those to come. */
+export async function listFilesInWork(db: Db, classSetId: string): Promise<FileOfSet[]> {
+  return (await db('returned_scripts').join('releases', 'releases.id', 'returned_scripts.release_id').leftJoin('stored_files', 'stored_files.id', 'returned_scripts.file_id')
+    .where({ 'releases.class_set_id': classSetId, 'releases.state': 'building' }).select(fileColumns)) as FileOfSet[]
+}
+
+/** A file that was still to come: what became of it. `open` while its release is being built and it is not. */
+export async function awaitedFile(db: Db, id: string): Promise<{ sha256: string | null; open: boolean }> {
+  const row = await db('returned_scripts').join('releases', 'releases.id', 'returned_scripts.release_id').leftJoin('stored_files', 'stored_files.id', 'returned_scripts.file_id').where('returned_scripts.id', id)
+    .first<{ sha256: string | null; problem: string | null; state: string } | undefined>({ sha256: 'stored_files.sha256', problem: 'returned_scripts.problem', state: 'releases.state' })
+  return { sha256: row?.sha256 ?? null, open: row?.state === 'building' && row.sha256 === null && row.problem === null }
+}
+
 /** Scripts that stayed behind in the newest release of a class set, with the code of why. */
 export async function listStayedBehind(db: Db, classSetId: string): Promise<{ scriptId: string; problem: string }[]> {
   const last = await db('releases').where({ class_set_id: classSetId }).orderBy('created_at', 'desc').first<{ id: string } | undefined>('id')

@@ -3,7 +3,7 @@ export function downloadResponse(body: Uint8Array | ReadableStream<Uint8Array>, 
   const plain = name.normalize('NFKD').replace(/[^\w.,() -]/g, '')
   const headers: Record<string, string> = {
     'content-type': type, 'cache-control': 'private, no-store',
-    'content-disposition': `attachment; filename="${plain}"; filename*=UTF-8''${encodeURIComponent(name)}`,
+    'content-disposition': `attachment; filename="${plain}"; filename*=UTF-8''${encodeURIComponent(name).replaceAll("'", '%27')}`,
   }
   if (body instanceof Uint8Array) headers['content-length'] = String(body.length)
   return new Response(body instanceof Uint8Array ? new Uint8Array(body) : body, { headers })

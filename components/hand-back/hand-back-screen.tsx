@@ -44,7 +44,7 @@ export function HandBackScreen({ first, acts }: { first: HandBackView; acts: Han
         {view.classSets.length > 1 && <ClassSetChoice classSets={view.classSets} value={view.classSetId} onChange={setClassSetId} />}
       </div>
       {error && <Alarm code={error instanceof RefusedError ? error.code : 'failed'} />}
-      {view.building ? <Building release={view.building} /> : scripts === 0 ? <NothingHere paperId={view.paperId} hasClass={set !== undefined} /> : (
+      {view.building ? <Building release={view.building} classSetId={view.classSetId} /> : scripts === 0 ? <NothingHere paperId={view.paperId} hasClass={set !== undefined} /> : (
         <>
           <HandBackAct view={view} className={set?.className ?? ''} acts={acts} again={again} />
           <CheckList view={view} acts={acts} again={again} />

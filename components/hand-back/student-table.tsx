@@ -1,4 +1,4 @@
-import { Download, MessageSquareText } from 'lucide-react'
+import { Download, FolderDown, MessageSquareText, Printer } from 'lucide-react'
 import { MarkFigure } from '@/components/ui/mark-figure'
 import { sayTime } from '@/components/ui/say-time'
 import { sayMark } from '@/lib/core/marks'
@@ -7,11 +7,19 @@ import { stateWords } from './hand-back-words'
 import styles from './hand-back.module.css'
 
 /** Every student of the class set: what was handed back, whether they have read it, and their file. */
-export function StudentTable({ view: { students, maximum } }: { view: HandBackView }) {
+export function StudentTable({ view: { students, maximum, classSetId } }: { view: HandBackView }) {
   const out = students.some(({ returned }) => returned !== null)
   return (
     <section aria-label="Students" className="mb-10">
-      <h2 className="mb-2">Students</h2>
+      <div className="mb-2 flex flex-wrap items-baseline justify-between gap-x-6">
+        <h2>Students</h2>
+        {out && (
+          <p className="flex flex-wrap gap-x-5">
+            <a className="inline-flex min-h-6 items-center gap-1" href={`/api/class-sets/${classSetId}/returned-zip`} download><FolderDown className="ic" aria-hidden />all files, one ZIP</a>
+            <a className="inline-flex min-h-6 items-center gap-1" href={`/api/class-sets/${classSetId}/returned-pdf`} download title="Each script begins on a right-hand page"><Printer className="ic" aria-hidden />one PDF, to print on both sides</a>
+          </p>
+        )}
+      </div>
       <div className={styles.scroll} tabIndex={0} role="region" aria-label="Students and their scripts">
         <table className={`tbl ${styles.students}`}>
           <thead><tr><th scope="col">student</th><th scope="col">total of {sayMark(maximum)}</th><th scope="col">grade</th><th scope="col">state</th>{out && <th scope="col">read by the student</th>}<th scope="col">files</th></tr></thead>

@@ -1,8 +1,9 @@
 import { PDFDocument } from 'pdf-lib'
 import { AppError } from '@/lib/core/errors'
 import type { Signing } from './add-annotations'
+import { addOutline } from './add-outline'
 import { ObjectCopier } from './object-copier'
-import { addReturnedPage, type ScriptPage } from './returned-page'
+import { addReturnedPage, type FileInWork, type ScriptPage } from './returned-page'
 import { Structure } from './structure'
 import type { Summary } from './summary'
 import { addSummary } from './add-summary'
@@ -36,18 +37,28 @@ export async function buildReturnedScript(sheaves: LoadedSheaves, { summary, tit
   describe(pdf, title ?? (summary ? `${summary.title}, ${summary.student}` : ''), builtAt)
   const type = await Typesetter.for(pdf.context)
   const structure = new Structure()
-  if (summary) addSummary(pdf, summary, pages.length, type, structure)
-  const copiers = new Map<PDFDocument, ObjectCopier>()
-  for (const page of pages) {
-    const source = sheafOf(sheaves, page)
-    const copier = copiers.get(source) ?? new ObjectCopier(source.context, pdf.context)
-    copiers.set(source, copier)
-    addReturnedPage({ pdf, type, structure, signing }, source, page, copier)
-  }
+  addScript({ pdf, type, structure, signing }, sheaves, { summary, pages })
+  addOutline(pdf, pdf.getPages().map(({ ref }, k) => ({ says: bookmarkOf(k - (pdf.getPageCount() - pages.length)), page: ref })))
   structure.store(pdf)
   await type.embed()
   // The writer would pause after each 50 objects, for the sake of screens: that is most of the time of so small a file.
   return pdf.save({ addDefaultPage: false, updateFieldAppearances: false, objectsPerTick: Infinity })
+}
+
+/** Adds one script to a file: its summary, where there is one, and its pages. Throws as above. */
+export function addScript(file: FileInWork, sheaves: LoadedSheaves, { summary, pages }: Pick<ScriptToReturn, 'summary' | 'pages'>): void {
+  if (summary) addSummary(file.pdf, summary, pages.length, file.type, file.structure)
+  const copiers = new Map<PDFDocument, ObjectCopier>()
+  for (const page of pages) {
+    const source = sheafOf(sheaves, page)
+    const copier = copiers.get(source) ?? new ObjectCopier(source.context, file.pdf.context)
+    copiers.set(source, copier)
+    addReturnedPage(file, source, page, copier)
+  }
+}
+
+function bookmarkOf(page: number): string {
+  return page < 0 ? 'Summary' : `Page ${page + 1}`
 }
 
 function sheafOf(sheaves: LoadedSheaves, { sheaf, index }: ScriptPage): PDFDocument {
@@ -57,7 +68,8 @@ function sheafOf(sheaves: LoadedSheaves, { sheaf, index }: ScriptPage): PDFDocum
   return source
 }
 
-function describe(pdf: PDFDocument, title: string, builtAt: Date): void {
+/** Names a file, its language and its maker. */
+export function describe(pdf: PDFDocument, title: string, builtAt: Date): void {
   pdf.setTitle(title, { showInWindowTitleBar: true })
   pdf.setLanguage('en-GB')
   pdf.setCreator('Sheafmark')

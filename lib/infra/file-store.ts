@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto'
-import { createReadStream } from 'node:fs'
+import { closeSync, createReadStream, fstatSync, openSync, readSync } from 'node:fs'
 import { mkdir, readFile, rename, rm, stat, writeFile } from 'node:fs/promises'
 import path from 'node:path'
 import { newId } from '@/lib/core/ids'
@@ -47,4 +47,17 @@ export async function dropKept(sha256: string): Promise<void> {
 
 export async function isKept(sha256: string): Promise<boolean> {
   return stat(placeOf(sha256)).then(() => true, () => false)
+}
+
+/** A kept file opened for reading in pieces. Close it after use. Throws when it is not there. */
+export function openKept(sha256: string): { size: number; read: (offset: number, length: number) => Buffer; close: () => void } {
+  const file = openSync(placeOf(sha256), 'r')
+  return {
+    size: fstatSync(file).size,
+    read: (offset, length) => {
+      const bytes = Buffer.allocUnsafe(length)
+      return bytes.subarray(0, readSync(file, bytes, 0, length, offset))
+    },
+    close: () => closeSync(file),
+  }
 }

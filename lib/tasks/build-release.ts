@@ -7,14 +7,12 @@ import { countBuilt, isBuilt, listScriptsToBuild, markBuilt, markNotBuilt, type 
 import { addStoredFile } from '@/db/stored-files'
 import { now } from '@/lib/infra/clock'
 import { keepBytes } from '@/lib/infra/file-store'
-import { buildReturnedScript, type loadSheaf } from '@/lib/handing-back/returned-script'
+import { buildReturnedScript } from '@/lib/handing-back/returned-script'
 import { scriptResult, summaryOf, type ScriptResult } from '@/lib/handing-back/script-result'
 import { gatherClassSet, gatheredScript, type GatheredSet } from './gather-class-set'
-import { loadSheavesOf } from './load-sheaves-of'
 import { mailReleased } from './mail-released'
 import { keptBackReason } from './scripts-to-go'
-
-type Sheaves = Map<string, Awaited<ReturnType<typeof loadSheaf>>>
+import { SheavesAtHand } from './sheaves-at-hand'
 
 /**
  * Builds the scripts of a release one by one and hands them all back at the end in one transaction, with the mails. Each script is
@@ -26,10 +24,14 @@ export async function buildRelease(releaseId: string, goOn: () => boolean): Prom
   const release = await getRelease(db(), releaseId)
   if (release?.state !== 'building') return true
   const gathered = await gatherClassSet(db(), release.classSetId)
-  const sheaves: Sheaves = new Map()
-  for (const script of await listScriptsToBuild(db(), releaseId)) {
-    if (!goOn()) return false
-    await buildOne(release, gathered, script, sheaves)
+  const sheaves = new SheavesAtHand()
+  try {
+    for (const script of await listScriptsToBuild(db(), releaseId)) {
+      if (!goOn()) return false
+      await buildOne(release, gathered, script, sheaves)
+    }
+  } finally {
+    sheaves.close()
   }
   return transaction(async (trx) => {
     if (!goOn()) return false
@@ -53,7 +55,7 @@ export async function releaseFailed(releaseId: string, code: string): Promise<vo
 
 const stayBehind: readonly ErrorCode[] = ['page_shared', 'page_unreadable', 'sheaf_missing', 'not_found']
 
-async function buildOne(release: Release, gathered: GatheredSet, script: ScriptToBuild, sheaves: Sheaves): Promise<void> {
+async function buildOne(release: Release, gathered: GatheredSet, script: ScriptToBuild, sheaves: SheavesAtHand): Promise<void> {
   // A mark may have been taken back, or a name, since the release was asked for.
   const problem = keptBackReason(gathered, script.scriptId, new Set())
   const source = gatheredScript(gathered, script.scriptId)
@@ -62,10 +64,8 @@ async function buildOne(release: Release, gathered: GatheredSet, script: ScriptT
   }
   try {
     const result = scriptResult(source)
-    // A sheaf is read and loaded once for all its students.
-    await loadSheavesOf(result.pages, sheaves)
     const summary = summaryOf(source, result, { day: new Date(release.createdAt).toISOString().slice(0, 10), revision: script.revision })
-    const kept = await keepBytes(await buildReturnedScript(sheaves, { summary, pages: result.pages, builtAt: new Date(release.createdAt) }))
+    const kept = await keepBytes(await buildReturnedScript(await sheaves.fetch(result.pages), { summary, pages: result.pages, builtAt: new Date(release.createdAt) }))
     await store(script, result, kept, release)
   } catch (error) {
     if (!(error instanceof AppError) || !stayBehind.includes(error.code)) throw error

@@ -15,8 +15,8 @@ import type { GatheredScript } from '@/lib/handing-back/script-to-return'
 import { coverNames } from './cover-names'
 import { gateScript } from './gate-script'
 import { gatherClassSet, gatheredScript, type GatheredSet } from './gather-class-set'
-import { loadSheavesOf } from './load-sheaves-of'
 import { hidesNames } from './pictures-of-script'
+import { SheavesAtHand } from './sheaves-at-hand'
 
 /**
  * A script with its settled marking as annotations that other programs list, for staff: an owner gets the summary and all marks, a
@@ -69,7 +69,12 @@ async function open(script: GatheredScript, whole: boolean, signed: readonly Sig
   const pages = result?.pages ?? script.pages.map((page, k) => pageToReturn(script, page, k + 1, false))
   const at = new Date(now())
   const summary = result && { ...summaryOf(script, result, { day: at.toISOString().slice(0, 10), revision: 1 }), about: result.markers.length > 0 ? `copy for staff, marked by ${result.markers.join(' and ')}` : 'copy for staff' }
-  return buildReturnedScript(await loadSheavesOf(pages), { summary, title: script.paper.title, pages, builtAt: at, signing: signingOf(script, signed) })
+  const sheaves = new SheavesAtHand()
+  try {
+    return await buildReturnedScript(await sheaves.fetch(pages), { summary, title: script.paper.title, pages, builtAt: at, signing: signingOf(script, signed) })
+  } finally {
+    sheaves.close()
+  }
 }
 
 async function covered(scriptId: string, script: GatheredScript, signed: readonly SignedStamp[]): Promise<Uint8Array> {

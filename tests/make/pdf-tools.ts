@@ -45,6 +45,12 @@ export function fontLines(file: string): string[] {
   return run('pdffonts', file).split('\n').slice(2).filter((line) => line !== '')
 }
 
+/** The bookmarks of a file, outermost ones only. */
+export function bookmarksOf(file: string): string[] {
+  const { outlines } = JSON.parse(run('qpdf', '--json', '--json-key=outlines', file)) as { outlines: { title: string }[] }
+  return outlines.map(({ title }) => title)
+}
+
 export function pageCountOf(file: string): number {
   return Number(run('qpdf', '--show-npages', file))
 }

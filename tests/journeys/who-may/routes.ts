@@ -64,6 +64,15 @@ export const routeRows: readonly RouteRow[] = [
   route('GET /api/returned/[returnedScriptId]/pdf', 'the file of the classmate', (o) => `/api/returned/${o.back.mate}/pdf`, '  401   200   404   404    404    404   404   200'),
   route('GET /api/returned/[returnedScriptId]/pdf', 'no file', () => `/api/returned/${nothing}/pdf`, '                         401   404   404   404    404    404   404   404'),
 
+  ...['returned-zip', 'returned-pdf'].flatMap((what) => {
+    const door = `GET /api/class-sets/[classSetId]/${what}`
+    return [
+      route(door, 'the class that is handed back', (o) => `/api/class-sets/${o.back.classSet}/${what}`, '                      401    200   404   404    404    404   404   404'),
+      route(door, 'a class that is not', (o) => `/api/class-sets/${o.half.classSet}/${what}`, '                                401    404   404   403    404    404   404   404'),
+      route(door, 'the class of the other', (o) => `/api/class-sets/${o.others.classSet}/${what}`, '                           401    404   404   404    404    404   404   404'),
+      route(door, 'no class', () => `/api/class-sets/${nothing}/${what}`, '                                                    401    404   404   404    404    404   404   404'),
+    ]
+  }),
   // With the marks on it: markers get those of their questions, a moderator those they need not read blind.
   route('GET /api/scripts/[scriptId]/annotated-pdf', 'a script the marker marks', (o) => `/api/scripts/${o.half.theirs.script}/annotated-pdf`, ' 401 200 404 200 404 404 404 404'),
   route('GET /api/scripts/[scriptId]/annotated-pdf', 'a script of the sample', (o) => `/api/scripts/${o.sampled.unread.script}/annotated-pdf`, ' 401 200 404 404 200 404 404 404'),

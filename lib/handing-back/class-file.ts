@@ -4,7 +4,7 @@ import { addScript, describe, type LoadedSheaves, type ScriptToReturn } from './
 import type { ScriptPage } from './returned-page'
 import { StreamedFile } from './streamed-file'
 import { Structure } from './structure'
-import { Typesetter } from './typesetter'
+import { Typesetter } from '@/lib/typesetting/typesetter'
 
 /** One script of a class file. `name` is its bookmark. */
 export type BundledScript = Readonly<{ name: string; sheaves: LoadedSheaves }> & Pick<ScriptToReturn, 'summary' | 'pages'>

@@ -108,6 +108,6 @@ export async function moveLeaf(db: Db, id: string, to: Partial<LeafPlace & { con
 
 /** The newest other leaf of a script page: the scan that held before a later one took its place. */
 export async function findOlderLeaf(db: Db, scriptPageId: string, besides: string): Promise<Leaf | null> {
-  const row = await db<LeafRow>('leaves').where({ script_page_id: scriptPageId, state: 'placed' }).whereNot({ id: besides }).orderBy('decided_at', 'desc').first()
+  const row = await db<LeafRow>('leaves').where({ script_page_id: scriptPageId, state: 'placed' }).whereNot({ id: besides }).orderByRaw('max(read_at, coalesce(decided_at, 0)) desc').first()
   return row ? toLeaf(row) : null
 }

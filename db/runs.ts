@@ -18,23 +18,23 @@ export async function listRunResponses(db: Db, questionId: string): Promise<RunR
   return rows.map((row) => ({ id: row.id, scriptId: row.script, classSetId: row.set, className: row.class, studentName: row.family === null ? null : `${row.given} ${row.family}` }))
 }
 
-/** A page of a script with the leaf that shows it now. Sizes of the leaf in pixels of its stored image. */
+/** A page of a script with the leaf that shows it now, and since when (ms). Sizes of the leaf in pixels of its stored image. */
 export type ScriptPage = Readonly<{
   id: string; scriptId: string; paperPage: number | null; position: number
-  leaf: Readonly<{ id: string; width: number; height: number; homography: Homography }> | null
+  leaf: Readonly<{ id: string; width: number; height: number; homography: Homography; since: number }> | null
 }>
 type PageRow = {
-  id: string; script_id: string; paper_page: number | null; position: number; leaf_id: string | null; width: number | null; height: number | null; homography: string | null
+  id: string; script_id: string; paper_page: number | null; position: number; leaf_id: string | null; width: number | null; height: number | null; homography: string | null; since: number
 }
 
 const pagesWithLeaves = (db: Db) => db('script_pages').leftJoin('leaves', 'leaves.id', 'script_pages.leaf_id').orderBy('script_pages.position')
-  .select('script_pages.id', 'script_pages.script_id', 'script_pages.paper_page', 'script_pages.position', { leaf_id: 'leaves.id' }, 'leaves.width', 'leaves.height', 'leaves.homography')
+  .select('script_pages.id', 'script_pages.script_id', 'script_pages.paper_page', 'script_pages.position', { leaf_id: 'leaves.id' }, 'leaves.width', 'leaves.height', 'leaves.homography', db.raw('max(leaves.read_at, coalesce(leaves.decided_at, 0)) as since'))
 
 function toScriptPage(row: PageRow): ScriptPage {
   const whole = row.leaf_id !== null && row.homography !== null && row.width !== null && row.height !== null
   return {
     id: row.id, scriptId: row.script_id, paperPage: row.paper_page, position: row.position,
-    leaf: whole ? { id: row.leaf_id!, width: row.width!, height: row.height!, homography: JSON.parse(row.homography!) as Homography } : null,
+    leaf: whole ? { id: row.leaf_id!, width: row.width!, height: row.height!, homography: JSON.parse(row.homography!) as Homography, since: row.since } : null,
   }
 }
 
@@ -73,6 +73,13 @@ export async function sampledScriptIds(db: Db, moderatorId: string, paperId: str
   const ids = (await db('sample_scripts').join('samples', 'samples.id', 'sample_scripts.sample_id').join('class_sets', 'class_sets.id', 'samples.class_set_id')
     .where({ 'samples.moderator_id': moderatorId, 'class_sets.paper_id': paperId }).pluck('sample_scripts.script_id')) as string[]
   return new Set(ids)
+}
+
+/** When each marking of a question in one round was last worked on (ms): its newest stamp, or its settling. */
+export async function lastWorkedOn(db: Db, questionId: string, round: Round): Promise<Map<string, number>> {
+  const rows = (await db('markings').join('responses', 'responses.id', 'markings.response_id').where({ 'responses.question_id': questionId, 'markings.round': round })
+    .select({ id: 'markings.id', at: db.raw('max(coalesce(markings.settled_at, 0), coalesce((select max(saved_at) from stamps where marking_id = markings.id), 0))') })) as { id: string; at: number }[]
+  return new Map(rows.map(({ id, at }) => [id, at]))
 }
 
 /** The seed a person's order of a question is drawn by: made at the first asking, the same ever after. */

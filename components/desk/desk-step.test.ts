@@ -11,7 +11,7 @@ import { stepDesk, type DeskEvent } from './desk-step'
 
 const point = (id: string, worth: number, more: Partial<MarkPoint> = {}): MarkPoint => ({ id, label: id, worth: halves(worth), kind: null, dependsOn: null, note: '', withdrawn: false, ...more })
 const strip = (n: number, more: Partial<Strip> = {}): Strip => ({
-  responseId: `r${n}`, number: n, name: null, pictures: [{ spaceId: 's', scriptPageId: `page-${n}`, rect: { x: 48, y: 250, w: 499, h: 120 }, src: '/x' }], pages: [], marking: null, bar: null, flag: null, ...more,
+  responseId: `r${n}`, number: n, name: null, pictures: [{ spaceId: 's', scriptPageId: `page-${n}`, rect: { x: 48, y: 250, w: 499, h: 120 }, src: '/x' }], pages: [], marking: null, bar: null, rescanned: false, flag: null, ...more,
 })
 const aRun = (strips: Strip[], { points = [point('a', 2), point('b', 2)], step = 1 as MarkingStep } = {}): Run => ({
   paperId: 'p', paperTitle: 'Light', className: '8K', round: 'first', step, namesHidden: true, next: null, strips,

@@ -3,7 +3,7 @@ import type { DeskState } from './desk-state'
 import { saySays } from './say-desk'
 import styles from './desk.module.css'
 
-/** What the desk says at the foot of the strip in hand: a refusal, a flag and its answer, or that the run is finished and where to go on. */
+/** What the desk says at the foot of the strip in hand: a refusal, a flag and its answer, that the page was scanned again, or that the run is finished and where to go on. */
 export function FootLine({ state }: { state: DeskState }) {
   const { says, run, strips, hand } = state
   const strip = strips[hand]
@@ -12,6 +12,7 @@ export function FootLine({ state }: { state: DeskState }) {
   return (
     <>
       {strip?.flag && <p className={styles.foot}><b>Flag</b> {strip.flag.note}{strip.flag.answer && <> <b>Answer</b> {strip.flag.answer}</>}</p>}
+      {strip?.rescanned && <p className={styles.foot}>This page was scanned again after it was marked. What was marked stays where it was: look whether it still fits.</p>}
       {bar && <p className={styles.foot}>{bar}</p>}
       {says && !finished && <p className={`${styles.foot} ${'code' in says ? 'alarm' : ''}`}>{saySays(says)}</p>}
       {finished && (

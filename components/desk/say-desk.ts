@@ -33,7 +33,7 @@ export function sayHand({ strips, hand, run }: DeskState): string {
   const stamps = strip.marking?.stamps ?? []
   const mark = responseState(strip.marking) === 'unmarked' ? '' : `, ${sayMark(markOf(stamps))} of ${sayMark(run.question.maximum)}`
   const standing = sayStanding(strip)
-  return `Script ${strip.number} of ${strips.length}${mark}${standing ? `, ${standing}` : ', settled'}`
+  return `Script ${strip.number} of ${strips.length}${mark}${standing ? `, ${standing}` : ', settled'}${strip.rescanned ? ', scanned again since' : ''}`
 }
 
 /** A stamp in words with the point it is for. */

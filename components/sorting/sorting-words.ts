@@ -13,6 +13,10 @@ const reasonWords: Record<LeafReason, string> = {
   pages_swapped: 'the pages lie in another order than the paper',
   code_disagrees: 'its code is that of another page than its print shows',
   code_unknown: 'its code was not printed for this paper here',
+  re_scan: 'it is a new scan of a page that lay here before',
+  re_scan_unsure: 'it looks like a new scan of a page that is here, and not plainly of which',
+  late_page: 'it came later, and its script lacked this page',
+  late_unsure: 'it came later than the scripts, and it is not certain whose page it is',
 }
 
 /** Why a sheet was left loose, as one sentence without a full stop. */
@@ -43,6 +47,8 @@ function leavesAway(apart: number): string {
 /** Why a place is offered. `page` is the page that would be put there. */
 export function whyThere(place: LikelyPlace, page: number | null, script: SortScript | undefined, student: SortStudent | undefined): string {
   if (place.reason === 'no_script') return student && student.attendance !== 'expected' ? `has no script; marked ${student.attendance}` : 'has no script yet'
+  if (place.reason === 'lacks_page') return `page ${page ?? ''} missing`
+  if (place.reason === 'looks_same') return `its page ${page ?? ''} looks the same: this scan would take its place, marks stay`
   if (place.reason === 'second_scan') return `has a page ${page} already, ${leavesAway(place.apart)} ${place.apart === 1 ? 'beside it' : 'away'}`
   const lies = `lies ${leavesAway(place.apart)} ${place.reason === 'follows' ? 'before it' : 'after it'}`
   return page !== null && script?.missing.includes(page) ? `${lies}; page ${page} missing` : lies

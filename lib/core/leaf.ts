@@ -80,6 +80,10 @@ export type LeafReason =
   | 'pages_swapped'
   | 'code_disagrees'
   | 'code_unknown'
+  | 're_scan'
+  | 're_scan_unsure'
+  | 'late_page'
+  | 'late_unsure'
 
 /** Where a leaf goes. `script` is a running number from 1. `missing` names the pages that its script lacks. */
 export type LeafFinding = Readonly<{
@@ -97,5 +101,7 @@ export type LeafFinding = Readonly<{
   guesses: readonly PageGuess[]
   reasons: readonly LeafReason[]
   missing: readonly number[]
+  /** Scripts of earlier sheaves that a leaf which came later may belong to, likeliest first. */
+  candidates?: readonly string[]
   problem?: LeafProblem
 }>

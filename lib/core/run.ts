@@ -23,6 +23,8 @@ export type Strip = Readonly<{
   pages: readonly PagePicture[]
   marking: Readonly<{ id: string; state: MarkingState; stamps: readonly Stamp[] }> | null
   bar: StripBar | null
+  /** The scan shown here came after what was marked: a page put in later, or scanned again. */
+  rescanned: boolean
   flag: Readonly<{ id: string; note: string; answer: string | null }> | null
 }>
 

@@ -4,8 +4,8 @@ import type { Turn } from './paper-space'
 /** Where a leaf may be put: in a script, or in a new one of a student who has none. */
 export type PlaceTarget = Readonly<{ scriptId: string } | { classSetId: string; studentId: string }>
 
-/** Why a place is likely. `apart` counts leaves between the loose sheet and the nearest leaf of that script. */
-export type PlaceReason = 'follows' | 'precedes' | 'second_scan' | 'no_script'
+/** Why a place is likely. `apart` counts leaves between the loose sheet and the nearest leaf of that script; 0 for one of another sheaf. */
+export type PlaceReason = 'follows' | 'precedes' | 'second_scan' | 'no_script' | 'lacks_page' | 'looks_same'
 export type LikelyPlace = Readonly<{ target: PlaceTarget; reason: PlaceReason; apart: number }>
 
 /** From this certainty on a suggested name may be confirmed with others at a glance; only a number that is plainly read gets there. */

@@ -21,7 +21,7 @@ export function inkOf(map: InkMap | null): Float32Array | null {
 }
 
 /** Correlation of two inks, -1 to 1. */
-function likeness(a: Float32Array, b: Float32Array): number {
+export function likeness(a: Float32Array, b: Float32Array): number {
   let dot = 0
   for (let k = 0; k < Math.min(a.length, b.length); k++) dot += a[k]! * b[k]!
   return dot

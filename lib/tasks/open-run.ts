@@ -10,7 +10,7 @@ import { listFlagsOfQuestion, type Flag } from '@/db/flags'
 import { db, type Db } from '@/db/knex'
 import { listMarkingsOfQuestion } from '@/db/markings'
 import { getPaper } from '@/db/papers'
-import { listRunPages, listRunResponses, runSeed, sampledScriptIds, type RunResponse, type ScriptPage } from '@/db/runs'
+import { lastWorkedOn, listRunPages, listRunResponses, runSeed, sampledScriptIds, type RunResponse, type ScriptPage } from '@/db/runs'
 import { blindResponseIds, sampleResponseIds } from '@/db/samples'
 import { gatePaper } from './gate-paper'
 import { actOfRound } from './gate-response'
@@ -18,7 +18,7 @@ import { begun } from './marking-in-hand'
 import { cutOf, hidesNames, masksOf, pagePictures } from './pictures-of-script'
 
 type Asked = Readonly<{ paperId: string; questionId: string; round: Round }>
-type Held = Readonly<{ actor: Actor; round: Round; paper: Paper; question: Question; owner: boolean; hidden: boolean; blind: ReadonlySet<string>; markings: readonly Marking[]; flags: readonly Flag[]; pages: ReadonlyMap<string, ScriptPage[]> }>
+type Held = Readonly<{ actor: Actor; round: Round; paper: Paper; question: Question; owner: boolean; hidden: boolean; blind: ReadonlySet<string>; markings: readonly Marking[]; worked: ReadonlyMap<string, number>; flags: readonly Flag[]; pages: ReadonlyMap<string, ScriptPage[]> }>
 
 /**
  * The strips of a question in the order this person marks them, with this person's marking of that round and of no other. The order is drawn once and kept. A moderator gets
@@ -34,7 +34,7 @@ export async function openRun(actor: Actor, { paperId, questionId, round }: Aske
   const hidden = round === 'second' || hidesNames(paper, standing)
   const markings = await listMarkingsOfQuestion(db(), questionId, round)
   const held: Held = {
-    actor, round, paper, question, owner: standing.owner, hidden, markings, blind: await blindResponseIds(db(), actor.userId, paperId),
+    actor, round, paper, question, owner: standing.owner, hidden, markings, worked: await lastWorkedOn(db(), questionId, round), blind: await blindResponseIds(db(), actor.userId, paperId),
     flags: await listFlagsOfQuestion(db(), questionId), pages: byScript(await listRunPages(db(), questionId)),
   }
   const responses = await inOrder(db(), held, questionId)
@@ -79,6 +79,7 @@ function toStrip(held: Held, response: RunResponse, number: number): Strip {
   const flag = flags.findLast((candidate) => candidate.responseId === response.id && (round !== 'second' || candidate.raisedBy === actor.userId))
   return {
     responseId: response.id, number, name: hidden ? null : response.studentName, bar: other ? 'begun-by-other' : null,
+    rescanned: shown !== undefined && begun(shown) && question.spaces.some((space) => (pages.find((page) => page.paperPage === space.page)?.leaf?.since ?? 0) > (held.worked.get(shown.id) ?? Infinity)),
     pictures: question.spaces.map((space) => stripPicture(held, response.id, space, pages.find((page) => page.paperPage === space.page))),
     pages: pagePictures(pages, paper, hidden),
     marking: shown ? { id: shown.id, state: shown.state, stamps: shown.stamps } : null,

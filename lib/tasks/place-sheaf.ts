@@ -3,23 +3,28 @@ import type { LeafFinding, LeafReading } from '@/lib/core/leaf'
 import { addAuditLine } from '@/db/audit'
 import type { Db } from '@/db/knex'
 import { listLeavesOfSheaf, listLeavesWithEvidence, moveLeaf, type Leaf } from '@/db/leaves'
-import { addScript, addScriptPage, nextScriptPosition } from '@/db/scripts'
+import { addScript, addScriptPage, findScriptPage, nextScriptPosition, setCurrentLeaf } from '@/db/scripts'
 import { ensureResponses } from '@/db/responses'
 import { endSheaf, listSheafClassSets, type Sheaf } from '@/db/sheaves'
 import { placeLeaves } from '@/lib/placing/place-leaves'
+import type { LateVerdict } from '@/lib/placing/join-late'
+import { findLate } from './find-late'
 import { renewSuggestions } from './renew-suggestions'
 
-type Found = Readonly<{ leaf: Leaf; reading: LeafReading; finding: LeafFinding }>
+type Found = Readonly<{ leaf: Leaf; reading: LeafReading; finding: LeafFinding; /** Where it goes when scripts were there before its sheaf. */ late?: LateVerdict | undefined }>
 
 /**
  * Puts the leaves of a sheaf that is read into scripts, all in the caller's transaction. What is not certain becomes a loose
- * sheet, an empty page stays as a blank one; names are suggested, never given. What was placed while the sheaf was still being
- * read, and what a person decided since, stays as it is.
+ * sheet, an empty page stays as a blank one; names are suggested, never given. A page that comes later than its script joins it, in place
+ * of an older scan too, and stamps stay where they are on the page. What was placed while the sheaf was still being read, and what a
+ * person decided since, stays as it is.
  */
 export async function placeSheaf(trx: Db, sheaf: Sheaf, pages: number): Promise<void> {
   const leaves = await listLeavesWithEvidence(trx, sheaf.id)
   const findings = placeLeaves(leaves.map(({ evidence }) => evidence.reading), pages)
-  await putFound(trx, sheaf, leaves.map(({ leaf, evidence }, k) => ({ leaf, reading: evidence.reading, finding: findings[k]! })))
+  const found = leaves.map(({ leaf, evidence }, k) => ({ leaf, reading: evidence.reading, finding: findings[k]! }))
+  const late = await findLate(trx, sheaf, found)
+  await putFound(trx, sheaf, found.map((one, k) => ({ ...one, late: late.get(k) })))
   await endSheaf(trx, sheaf.id, { state: 'placed' })
   const count = (kind: LeafFinding['kind']) => findings.filter((finding) => finding.kind === kind).length
   const scripts = new Set(findings.flatMap(({ script }) => script ?? [])).size
@@ -36,7 +41,9 @@ export async function placeFirst(trx: Db, sheaf: Sheaf, readings: readonly LeafR
     const reading = readings.find((one) => one.index === finding.index && one.half === finding.half)
     return leaf && reading ? [{ leaf, reading, finding }] : []
   })
-  await putFound(trx, sheaf, found)
+  // What may belong to an earlier script waits for the end, when the whole sheaf is known.
+  const late = await findLate(trx, sheaf, found)
+  await putFound(trx, sheaf, found.filter((_, k) => !late.has(k)))
 }
 
 async function putFound(trx: Db, sheaf: Sheaf, found: readonly Found[]): Promise<void> {
@@ -45,9 +52,11 @@ async function putFound(trx: Db, sheaf: Sheaf, found: readonly Found[]): Promise
   // A script of which a leaf lies in place already is there, whole: nothing is added to it by itself.
   const there = new Set(found.flatMap(({ leaf, finding }) => (leaf.state === 'read' ? [] : (finding.script ?? []))))
   const scriptIds = new Map<number, string>()
-  for (const { leaf, reading, finding } of found) {
+  for (const { leaf, reading, finding, late } of found) {
     if (leaf.state !== 'read') continue
-    if (finding.kind !== 'script') await lay(trx, leaf, reading, finding)
+    if (late?.kind === 'join') await join(trx, late, leaf, reading, finding)
+    else if (late) await lay(trx, leaf, reading, { ...finding, kind: 'loose', script: null, homography: null, reasons: [...(finding.kind === 'loose' ? finding.reasons : []), late.reason], candidates: late.candidates.slice(0, 40) })
+    else if (finding.kind !== 'script') await lay(trx, leaf, reading, finding)
     else if (there.has(finding.script!)) await lay(trx, leaf, reading, { ...finding, kind: 'loose', script: null, homography: null, reasons: ['order_unclear'] })
     else {
       if (!scriptIds.has(finding.script!)) scriptIds.set(finding.script!, await startScript(trx, classSetId, first + scriptIds.size))
@@ -71,6 +80,18 @@ async function putIn(trx: Db, scriptId: string, leaf: Leaf, reading: LeafReading
   await moveLeaf(trx, leaf.id, {
     state: 'placed', turn: finding.rotation, homography: finding.homography, paperPage, scriptPageId: id, confidence: finding.confidence, evidence: { reading, placed: finding },
   })
+}
+
+/** Puts a leaf into a script that was there before its sheaf. A scan that lies there is kept as the older one. */
+async function join(trx: Db, { scriptId, reason }: Extract<LateVerdict, { kind: 'join' }>, leaf: Leaf, reading: LeafReading, finding: LeafFinding): Promise<void> {
+  const { paperPage, rotation, homography, confidence } = reading.guesses[0]!
+  const there = await findScriptPage(trx, scriptId, paperPage)
+  const id = there?.id ?? newId()
+  if (there) await setCurrentLeaf(trx, id, leaf.id)
+  else await addScriptPage(trx, { id, scriptId, paperPage, extra: false, position: paperPage, leafId: leaf.id })
+  const placed: LeafFinding = { ...finding, kind: 'script', script: null, paperPage, rotation, homography, confidence, reasons: [reason], missing: [] }
+  await moveLeaf(trx, leaf.id, { state: 'placed', turn: rotation, homography, paperPage, scriptPageId: id, confidence, evidence: { reading, placed } })
+  await addAuditLine(trx, null, { act: reason === 're_scan' ? 'leaf.scanned-again' : 'leaf.joined', objectKind: 'leaf', objectId: leaf.id, to: `script ${scriptId} page ${paperPage}` })
 }
 
 /** Lays a leaf on the sorting table, or among the empty backs. */

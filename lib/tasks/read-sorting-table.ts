@@ -10,7 +10,7 @@ import { getPaper } from '@/db/papers'
 import { listScriptPages, listScripts } from '@/db/scripts'
 import { listSheaves } from '@/db/sheaves'
 import { lastSortingDecision } from '@/db/sorting-decisions'
-import { likelyPlaces } from '@/lib/placing/likely-places'
+import { latePlaces, likelyPlaces, mostPlaces } from '@/lib/placing/likely-places'
 import { gatePaper } from './gate-paper'
 import { readNumbers } from './read-numbers'
 
@@ -76,10 +76,12 @@ function looseOf(leaf: Leaf, evidence: LeafEvidence | null, pile: Pile): Omit<Lo
   const own = pile.leaves.filter(({ sheafId }) => sheafId === leaf.sheafId)
   const at = own.findIndex(({ id }) => id === leaf.id)
   const paperPage = leaf.paperPage ?? guesses[0]?.paperPage ?? null
+  const late = latePlaces(evidence?.placed?.candidates ?? [], paperPage, reasons.includes('re_scan_unsure'), pile.scripts)
+  const near = likelyPlaces({ position: at, paperPage, secondScan: reasons.includes('duplicate_page') }, piled(own, pile.scripts), withoutScript(pile))
   return {
     width: evidence?.reading.part?.w ?? leaf.width, height: evidence?.reading.part?.h ?? leaf.height, paperPage: leaf.paperPage, guesses, reasons, problem: evidence?.reading.problem ?? null,
     before: neighbour(own[at - 1], pile), after: neighbour(own[at + 1], pile),
-    places: reasons.includes('unlike_paper') ? [] : likelyPlaces({ position: at, paperPage, secondScan: reasons.includes('duplicate_page') }, piled(own, pile.scripts), withoutScript(pile)),
+    places: reasons.includes('unlike_paper') ? [] : (reasons.length > 1 ? [...near, ...late] : [...late, ...near]).slice(0, mostPlaces),
   }
 }
 

@@ -1,4 +1,5 @@
-import { open, readFile, writeFile } from 'node:fs/promises'
+import { mkdtemp, open, readFile, rm, writeFile } from 'node:fs/promises'
+import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { parseArgs } from 'node:util'
 import { z } from 'zod'
@@ -13,8 +14,11 @@ const usage = 'usage: ingest --paper PAPER_DIR --sheaf scan.pdf --out result.jso
 const sentences: Partial<Record<ErrorCode, string>> = {
   file_empty: 'is empty; send the file again',
   file_not_pdf: 'is not a PDF',
+  file_kind_unknown: 'is neither a PDF nor a picture (JPEG, PNG, TIFF); scan it to PDF',
+  file_heic: 'is a phone picture (HEIC) that cannot be read; save it as JPEG or PDF',
+  file_too_large: 'is too large; scan it in parts',
   file_encrypted: 'asks for a password; save it without one and try again',
-  file_damaged: 'is damaged and cannot be opened; scan or send it again',
+  file_damaged: 'is damaged and no page of it can be found; scan or send it again',
   file_no_pages: 'has no pages',
   too_many_pages: 'has too many pages; scan it in parts',
   page_unreadable: 'has a page that cannot be drawn',
@@ -48,6 +52,12 @@ async function pagesSaid(path: string): Promise<number | undefined> {
   return parsed.data.pages
 }
 
+/** The file itself when it is a PDF, else one that holds its pictures. */
+async function sheafOf(path: string, folder: string): Promise<string> {
+  const { asSheaf, kindOf } = await import('@/lib/tasks/as-sheaf')
+  return (await kindOf(path)) === 'pdf' ? path : (await asSheaf([path], join(folder, 'sheaf.pdf'))).path
+}
+
 async function main(): Promise<void> {
   const { values } = parseArgs({ options: { paper: { type: 'string' }, sheaf: { type: 'string' }, out: { type: 'string' }, threads: { type: 'string', default: '1' }, codes: { type: 'string' } } })
   const threads = Number(values.threads)
@@ -65,7 +75,9 @@ async function main(): Promise<void> {
   if (values.codes !== undefined && !printed) throw new BadInput(`${values.codes} is not a list of printed codes`)
   const called = performance.now()
   await assertReadable(values.sheaf)
-  const result = await named(values.sheaf, ingestSheaf({ sheaf: values.sheaf, paper, threads, ...(printed ? { codes: printed.codes } : {}) }))
+  const folder = await mkdtemp(join(tmpdir(), 'sheafmark-'))
+  const reading = sheafOf(values.sheaf, folder).then((sheaf) => ingestSheaf({ sheaf, paper, threads, ...(printed ? { codes: printed.codes } : {}) }))
+  const result = await named(values.sheaf, reading).finally(() => rm(folder, { recursive: true }))
   const pages = result.findings.map(({ index, half, kind, script, printed: code, paperPage, rotation, homography, confidence, reasons, problem }) => ({
     index, ...(half === undefined ? {} : { half }), kind, script, ...(printed ? { candidate_number: printed.candidates.get(code ?? '') ?? null } : {}), paper_page: paperPage, rotation, homography, confidence: Number(confidence.toFixed(3)), reasons, ...(problem ? { problem } : {}),
   }))

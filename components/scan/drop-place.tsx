@@ -16,9 +16,9 @@ export function DropPlace({ upload, lead, label, brokenOff, onFile, onGoOn, onSt
       {upload.step === 'none' && brokenOff.length > 0 && <p className="mb-3">{brokenOff[0]} did not arrive whole. Choose the same file again: it goes on where it stopped.</p>}
       <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
         <button type="button" className={`btn ${lead ? 'lead' : ''}`} onClick={() => input.current?.click()}>{label}</button>
-        <span className="soft">or drop the PDF anywhere on this page</span>
+        <span className="soft">or drop the PDF (or a JPEG, PNG or TIFF) anywhere on this page</span>
       </div>
-      <input ref={input} type="file" accept="application/pdf,.pdf" className="vh" tabIndex={-1} aria-label="The sheaf, as a PDF"
+      <input ref={input} type="file" accept="application/pdf,image/jpeg,image/png,image/tiff,.pdf,.jpg,.jpeg,.png,.tif,.tiff" className="vh" tabIndex={-1} aria-label="The sheaf, as a PDF or picture"
         onChange={(event) => { const file = event.target.files?.[0]; event.target.value = ''; if (file) onFile(file) }} />
     </div>
   )

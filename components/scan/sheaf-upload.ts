@@ -1,6 +1,7 @@
 import { Upload, defaultOptions, type DetailedError } from 'tus-js-client'
 import { ask, RefusedError } from '@/components/ui/ask'
 import type { ErrorCode, ErrorDetail } from '@/lib/core/errors'
+import { fileKind, kindBytes } from '@/lib/core/file-kind'
 
 /** How an upload stands. `sent` runs from 0 to 1. */
 export type UploadState =
@@ -25,8 +26,8 @@ function fingerprint(paperId: string, file: File): string {
 async function faultOf(file: File, limitMb: number): Promise<{ code: ErrorCode; detail: ErrorDetail } | null> {
   if (file.size === 0) return { code: 'file_empty', detail: {} }
   if (file.size > limitMb * 1024 * 1024) return { code: 'file_too_large', detail: { limitMb } }
-  const head = await file.slice(0, 1024).text()
-  return head.includes('%PDF-') ? null : { code: 'file_not_pdf', detail: {} }
+  const kind = fileKind(new Uint8Array(await file.slice(0, kindBytes).arrayBuffer()))
+  return kind === null ? { code: 'file_kind_unknown', detail: {} } : kind === 'heic' ? { code: 'file_heic', detail: {} } : null
 }
 
 /** Sends a sheaf in pieces and has it taken over. A lost line is waited out; what has arrived is never sent twice. */

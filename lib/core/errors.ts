@@ -38,6 +38,8 @@ export const errorStatus = {
   file_empty: 422,
   file_too_large: 413,
   file_not_pdf: 422,
+  file_kind_unknown: 422,
+  file_heic: 422,
   file_encrypted: 422,
   file_damaged: 422,
   file_no_pages: 422,

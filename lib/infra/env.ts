@@ -14,7 +14,7 @@ const Settings = z.object({
   SHEAFMARK_MAIL_FROM: z.string().min(3).default('Sheafmark <sheafmark@localhost>'),
   SHEAFMARK_FAKE_SMTP_PORT: z.coerce.number().int().min(1).max(65_535).default(3025),
   SHEAFMARK_LOG: z.enum(['debug', 'info', 'warn', 'error', 'silent']).default('info'),
-  SHEAFMARK_UPLOAD_LIMIT_MB: z.coerce.number().int().min(1).max(2048).default(500),
+  SHEAFMARK_UPLOAD_LIMIT_MB: z.coerce.number().int().min(1).max(4096).default(2048),
   SHEAFMARK_THREADS: z.coerce.number().int().min(1).max(32).default(2),
   SHEAFMARK_KEEP_MONTHS: z.coerce.number().int().min(1).max(240).default(14),
 })

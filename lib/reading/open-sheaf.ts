@@ -1,4 +1,5 @@
 import { AppError } from '@/lib/core/errors'
+import { fileKind, kindBytes } from '@/lib/core/file-kind'
 import { liftImage } from './lift-image'
 import { pageAlone } from './page-alone'
 import { pageSource, type PageSource } from './page-source'
@@ -6,9 +7,7 @@ import { listPages, type PageEntry } from './page-tree'
 import { FileWindow } from './pdf/file-window'
 import { PdfFile, isFault } from './pdf/pdf-file'
 import { TooLarge } from './pdf/value'
-import type { SheafPage } from './sheaf-page'
-
-const mostPages = 2000
+import { mostPages, type SheafPage } from './sheaf-page'
 
 /** A sheaf whose pages can be taken out one after the other, read from its file as they are asked for. `index` counts from 0. Close it after use. */
 export type OpenSheaf = Readonly<{
@@ -29,8 +28,7 @@ export function openSheaf(path: string): OpenSheaf {
   const file = new FileWindow(path)
   try {
     if (file.size === 0) throw new AppError('file_empty')
-    // within the first kilobyte, as readers agree to accept it
-    if (!file.read(0, 1024).includes('%PDF-')) throw new AppError('file_not_pdf')
+    if (fileKind(file.read(0, kindBytes)) !== 'pdf') throw new AppError('file_not_pdf')
     const pdf = new PdfFile(file)
     const pages = pagesOf(pdf)
     const source = (index: number): PageSource | null => pageSource(pdf, pages[index]!)

@@ -8,3 +8,6 @@ export type SheafPage = Readonly<{ index: number } & (LiftedImage | { image: nul
 
 /** No page image may have more pixels than this: A3 at 600 dpi is 70 million. */
 export const mostPixels = 80_000_000
+
+/** A sheaf of more pages is to be sent in parts. */
+export const mostPages = 2000

@@ -7,19 +7,19 @@ import { db, transaction } from '@/db/knex'
 import { addSheaf, findSheafOfBytes } from '@/db/sheaves'
 import { addStoredFile } from '@/db/stored-files'
 import { isKept, keepFile } from '@/lib/infra/file-store'
+import { asSheaf } from './as-sheaf'
 import { gatePaper } from './gate-paper'
-import { lookAtSheaf } from './look-at-sheaf'
 
 export type KeepSheaf = Readonly<{ paperId: string; /** A file on this disk; it is moved into the store. */ file: string; name: string; classSetIds: readonly string[] }>
 
 /**
- * Keeps a file as a sheaf of the paper: looked at by its content, stored byte for byte, and put in the queue for reading, all in
+ * Keeps a file as a sheaf of the paper: looked at by its content, stored byte for byte (pictures as a PDF that holds them), and put in the queue for reading, all in
  * one transaction. Throws the file errors and file_same (this very file is here). Returns the sheaf's id.
  */
 export async function keepSheaf(actor: Actor, { paperId, file, name, classSetIds }: KeepSheaf): Promise<string> {
   await gatePaper(db(), actor, 'change', paperId)
-  const { pageCount: leafCount } = await lookAtSheaf(file)
-  const { sha256, size } = await keepFile(file)
+  const { path, pageCount: leafCount } = await asSheaf([file], `${file}.pdf`)
+  const { sha256, size } = await keepFile(path)
   return transaction(async (trx) => {
     // A sheaf of the same bytes was stopped at this moment, and took them along.
     if (!(await isKept(sha256))) throw new AppError('out_of_date')

@@ -5,6 +5,8 @@ import type { SheafAnswer, SheafJob } from './sheaf-thread'
 
 /** A file that takes longer to answer is given up, in milliseconds. */
 const longest = 60_000
+/** Hundreds of pictures are decoded and packed. */
+const longestWrap = 20 * 60_000
 const idleMs = 20_000
 let pool: Piscina | null = null
 
@@ -16,6 +18,12 @@ export async function lookAtSheaf(file: string): Promise<{ pageCount: number }> 
   return { pageCount }
 }
 
+/** Makes a sheaf at `to` of pictures, a page each in the order given, and says how many pages it has. Throws the file errors of wrapScan. */
+export async function wrapSheaf(pictures: readonly string[], to: string): Promise<{ pageCount: number }> {
+  const { pageCount } = await answered(ask({ file: to, wrap: pictures }, longestWrap), 'file_damaged')
+  return { pageCount }
+}
+
 /** The stored image of a sheaf's page (from 0) as a JPEG or PNG file. Throws page_unreadable. */
 export async function sheafPicture(file: string, index: number): Promise<Buffer> {
   const { picture } = await answered(ask({ file, picture: index }), 'page_unreadable', { page: index + 1 })
@@ -23,9 +31,9 @@ export async function sheafPicture(file: string, index: number): Promise<Buffer>
 }
 
 /** Asked in a thread, so that no file can hold up the process or bring it down. */
-function ask(job: SheafJob): Promise<SheafAnswer> {
+function ask(job: SheafJob, most = longest): Promise<SheafAnswer> {
   pool ??= threadPool('lib/tasks/sheaf-thread.ts', 1, { idleMs })
-  return pool.run(job, { signal: AbortSignal.timeout(longest) }) as Promise<SheafAnswer>
+  return pool.run(job, { signal: AbortSignal.timeout(most) }) as Promise<SheafAnswer>
 }
 
 /** A thread's answer. `given`: what a file that ends its thread is taken for. Throws what the answer says is wrong. */

@@ -2,9 +2,10 @@ import sharp from 'sharp'
 import { AppError, type ErrorCode, type ErrorDetail } from '@/lib/core/errors'
 import { drawStoredPage, sharpOf } from '@/lib/reading/decode-page'
 import { openSheaf, type OpenSheaf } from '@/lib/reading/open-sheaf'
+import { wrapScan } from '@/lib/reading/pictures/wrap-scan'
 
-/** What the thread is asked: how many pages a file has, or the picture of one page (from 0). */
-export type SheafJob = Readonly<{ file: string; picture?: number }>
+/** What the thread is asked: how many pages a file has, or the picture of one page (from 0). `wrap`: pictures that are to become the file first. */
+export type SheafJob = Readonly<{ file: string; picture?: number; wrap?: readonly string[] }>
 /** Expected trouble comes back as values: an error does not keep its class on the way between threads. */
 export type SheafAnswer = Readonly<{ pageCount: number; picture: Uint8Array | null }> | Readonly<{ fault: ErrorCode; detail: ErrorDetail }>
 
@@ -12,8 +13,9 @@ sharp.concurrency(1)
 sharp.cache(false)
 
 /** Opens a sheaf and answers one question about it. */
-export default async function askSheaf({ file, picture }: SheafJob): Promise<SheafAnswer> {
+export default async function askSheaf({ file, picture, wrap }: SheafJob): Promise<SheafAnswer> {
   try {
+    if (wrap) await wrapScan(wrap, file)
     const sheaf = openSheaf(file)
     try {
       return { pageCount: sheaf.pageCount, picture: picture === undefined ? null : await pictureOf(sheaf, picture) }

@@ -3,6 +3,7 @@ import { readFileSync, readdirSync } from 'node:fs'
 import path from 'node:path'
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import { PDFDocument } from 'pdf-lib'
+import sharp from 'sharp'
 import { db } from '@/db/knex'
 import { newId } from '@/lib/core/ids'
 import type { Actor } from '@/lib/core/actor'
@@ -88,11 +89,23 @@ describe('an upload', () => {
 describe('what arrived', () => {
   it('is judged by its content, whatever it is called', async () => {
     const none = await PDFDocument.create()
-    const faults: [Uint8Array, string][] = [[Buffer.from('PK\u0003\u0004 a word file'), 'file_not_pdf'], [Buffer.from('%PDF-1.7\nnothing of one follows'), 'file_damaged'], [await none.save({ addDefaultPage: false }), 'file_no_pages']]
+    const faults: [Uint8Array, string][] = [[Buffer.from('PK\u0003\u0004 a word file'), 'file_kind_unknown'], [Buffer.from('\0\0\0\u0018ftypheic and so on'), 'file_heic'], [Buffer.from('%PDF-1.7\nnothing of one follows'), 'file_damaged'], [await none.save({ addDefaultPage: false }), 'file_no_pages']]
     for (const [bytes, code] of faults) await expect(receive(await uploaded(bytes, 'pile.pdf'))).rejects.toMatchObject({ code })
     expect(await db()('sheaves')).toEqual([])
     expect(await db()('jobs')).toEqual([])
     expect(readdirSync(path.join(env.dataFolder, 'uploads'))).toEqual([])
+  })
+
+  it('may be pictures: they are kept as a PDF that holds them, under the name they came with', async () => {
+    const picture = await sharp({ create: { width: 827, height: 1169, channels: 3, background: 'white' } }).jpeg().toBuffer()
+    const { sheafId } = await receive(await uploaded(picture, 'page.jpg'))
+    const row = await db()('sheaves').join('stored_files', 'stored_files.id', 'file_id').where('sheaves.id', sheafId).first<{ sha256: string; original_name: string; leaf_count: number }>()
+    expect(row).toMatchObject({ original_name: 'page.jpg', leaf_count: 1 })
+    const kept = readFileSync(keptPath(row.sha256))
+    expect(kept.subarray(0, 5).toString()).toBe('%PDF-')
+    expect(kept.includes(picture.subarray(picture.lastIndexOf(Buffer.from([0xff, 0xda]))))).toBe(true)
+    expect(readdirSync(path.join(env.dataFolder, 'uploads'))).toEqual([])
+    await expect(receive(await uploaded(picture, 'again.jpg'))).rejects.toMatchObject({ code: 'file_same' })
   })
 
   it('is noticed when this paper has the same bytes already, under any name', async () => {

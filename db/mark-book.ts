@@ -11,11 +11,13 @@ export type CellOfSet = Readonly<{
   hasPage: 0 | 1
   /** Sum of the stamps of the settled marking that counts; null while there is none. */
   raw: HalfMarks | null
+  countingMarkingId: string | null
   countingMarkerId: string | null
   countingRound: string | null
   nothingWritten: 0 | 1
   secondMarked: 0 | 1
   flagged: 0 | 1
+  /** The sum of the adjustments that hold for the marking that counts, in halves. */
   adjustment: number
 }>
 
@@ -40,11 +42,11 @@ const cells = `
       select 1 from answer_spaces join script_pages on script_pages.script_id = responses.script_id and script_pages.paper_page = answer_spaces.page
       where answer_spaces.question_id = responses.question_id and script_pages.leaf_id is not null)) as hasPage,
     case when counting.id is not null then coalesce((select sum(worth) from stamps where marking_id = counting.id and removed = 0), 0) end as raw,
-    counting.marker_id as countingMarkerId, counting.round as countingRound,
+    counting.id as countingMarkingId, counting.marker_id as countingMarkerId, counting.round as countingRound,
     exists (select 1 from stamps where marking_id = counting.id and removed = 0 and kind = 'nothing-written') as nothingWritten,
     exists (select 1 from markings where response_id = responses.id and round = 'second' and state = 'settled') as secondMarked,
     exists (select 1 from flags where response_id = responses.id and answered_at is null) as flagged,
-    coalesce((select sum(halves) from adjustments where response_id = responses.id and undone_at is null), 0) as adjustment
+    coalesce((select sum(halves) from adjustments where response_id = responses.id and undone_at is null and (marking_id is null or marking_id = counting.id)), 0) as adjustment
   from scripts join responses on responses.script_id = scripts.id
   left join counting_decisions on counting_decisions.response_id = responses.id and counting_decisions.superseded_at is null
   left join markings counting on counting.id = counting_decisions.marking_id and counting.state = 'settled'

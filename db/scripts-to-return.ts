@@ -43,10 +43,13 @@ export async function listCountingMarkings(db: Db, classSetId: string): Promise<
 
 export type Adjustment = Readonly<{ scriptId: string; questionId: string; halves: number; reason: string }>
 
-/** The adjustments of a class set that hold, oldest first. */
+/** The adjustments of a class set that hold for the markings that count, oldest first. */
 export async function listAdjustments(db: Db, classSetId: string): Promise<Adjustment[]> {
   return (await db('adjustments').join('responses', 'responses.id', 'adjustments.response_id').join('scripts', 'scripts.id', 'responses.script_id')
-    .where({ 'scripts.class_set_id': classSetId }).whereNull('adjustments.undone_at').orderBy('adjustments.decided_at')
+    .leftJoin('counting_decisions', (join) => join.on('counting_decisions.response_id', 'responses.id').andOnNull('counting_decisions.superseded_at'))
+    .where({ 'scripts.class_set_id': classSetId }).whereNull('adjustments.undone_at')
+    .where((held) => held.whereNull('adjustments.marking_id').orWhere('adjustments.marking_id', db.ref('counting_decisions.marking_id')))
+   .orderBy('adjustments.decided_at')
     .select({ scriptId: 'scripts.id', questionId: 'responses.question_id', halves: 'adjustments.halves', reason: 'adjustments.reason' })) as Adjustment[]
 }
 

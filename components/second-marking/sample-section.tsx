@@ -4,17 +4,17 @@ import { useOutcome } from '@/components/ui/use-outcome'
 import type { Outcome } from '@/lib/core/outcome'
 import type { SampleView } from '@/lib/core/second-marking'
 import { counted } from '@/components/paper/stage-words'
+import { AdjustmentsSection } from './adjustments-section'
 import { FiguresPanel } from './figures-panel'
 import { OutsideList } from './outside-list'
 import { QuestionTable } from './question-table'
 import { SampledScripts } from './sampled-scripts'
+import { sayInstant } from './say-instant'
 import { sayCaution, sayMean } from './say-difference'
 import styles from './second-marking.module.css'
 
 type Act = (raw: unknown) => Promise<Outcome<unknown>>
-type SampleSectionProps = Readonly<{ paperId: string; sample: SampleView; owner: boolean; acts: Readonly<{ addScript: Act; close: Act }> }>
-
-const dayOf = (at: number) => new Date(at).toLocaleDateString('en-GB', { day: 'numeric', month: 'long', year: 'numeric', timeZone: 'UTC' })
+type SampleSectionProps = Readonly<{ paperId: string; sample: SampleView; owner: boolean; acts: Readonly<{ addScript: Act; close: Act; undo: Act }> }>
 
 /** What the marks of a sample say so far, n always beside them. */
 function FiguresLine({ sample: { figures } }: { sample: SampleView }) {
@@ -42,8 +42,9 @@ export function SampleSection({ paperId, sample, owner, acts }: SampleSectionPro
         <SampledScripts sample={sample} addScript={acts.addScript} />
       </div>
       <FiguresPanel sample={sample} />
-      <p className="small soft mt-3">Drawn on {dayOf(sample.drawnAt)}: {sample.size} asked, usual {sample.defaultSize}; the seed {sample.seed.slice(0, 8)} draws it again.</p>
-      {closedAt !== null && <p className="dense mt-2">Closed on {dayOf(closedAt)}. Where nothing else was decided the first marks stand.</p>}
+      <AdjustmentsSection paperId={paperId} sample={sample} owner={owner} undo={acts.undo} />
+      <p className="small soft mt-3">Drawn on {sayInstant(sample.drawnAt)}: {sample.size} asked, usual {sample.defaultSize}; the seed {sample.seed.slice(0, 8)} draws it again.</p>
+      {closedAt !== null && <p className="dense mt-2">Closed on {sayInstant(closedAt)}. Where nothing else was decided the first marks stand.</p>}
       {owner && closedAt === null && (
         <div className={styles.row}>
           <button className="btn" disabled={busy || undecided > 0 || sample.figures.n === 0} onClick={() => void run(acts.close(sample.id), () => undefined)}>Close the second marking</button>

@@ -4,7 +4,7 @@ import { DrawForm } from './draw-form'
 import { SampleSection } from './sample-section'
 
 type Act = (raw: unknown) => Promise<Outcome<unknown>>
-type SecondMarkScreenProps = Readonly<{ marking: SecondMarking; acts: Readonly<{ draw: Act; addScript: Act; close: Act }> }>
+type SecondMarkScreenProps = Readonly<{ marking: SecondMarking; acts: Readonly<{ draw: Act; addScript: Act; close: Act; undo: Act }> }>
 
 /** Second marking of a paper: an owner draws, follows and decides; a moderator finds the questions to second-mark. */
 export function SecondMarkScreen({ marking, acts }: SecondMarkScreenProps) {

@@ -33,6 +33,7 @@ const sentences: Record<ErrorCode | 'failed', string | ((detail: ErrorDetail) =>
   sample_closed: 'This second marking is closed. Its decisions stand as they are.',
   moderation_open: 'Some marks lie outside the tolerance and nobody has decided on them yet.',
   tolerance_fixed: 'A sample has been drawn, so the tolerance stays as it was set before the second marking.',
+  no_pattern: 'The marks show no one-sided and steady pattern any more, so no adjustment is offered. A re-mark of the question mends what is scattered.',
   paper_invalid: 'The paper cannot be used as it is. See the lines below.',
   has_stamps: 'Marks have been given here, so it is kept. Withdraw it instead.',
   pages_differ: 'This PDF has another number of pages, or another size, than the answer spaces were drawn for.',

@@ -24,6 +24,7 @@ export const errorStatus = {
   sample_closed: 409,
   moderation_open: 409,
   tolerance_fixed: 409,
+  no_pattern: 409,
   nothing_stamped: 409,
   nought_with_marks: 422,
   base_missing: 422,

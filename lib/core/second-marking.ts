@@ -1,3 +1,4 @@
+import type { MarkerAdjustment, MarkerPattern } from './adjusting'
 import type { HalfMarks } from './marks'
 import type { ModerationFigures } from './moderation-figures'
 import type { StripPicture } from './run'
@@ -67,6 +68,8 @@ export type SampleView = Readonly<{
   questions: readonly SampleQuestion[]
   figures: AgreementFigures
   moderation: ModerationFigures
+  patterns: readonly MarkerPattern[]
+  adjustments: readonly MarkerAdjustment[]
   undecided: number
 }>
 

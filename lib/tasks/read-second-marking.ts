@@ -2,10 +2,12 @@ import { mayOnPaper, type Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
 import type { Paper } from '@/lib/core/paper'
 import type { SampleOffer, SampleView, SecondMarking } from '@/lib/core/second-marking'
+import { markerPatterns } from '@/lib/second-marking/marker-patterns'
 import { sampleView } from '@/lib/second-marking/sample-view'
 import { defaultSampleSize } from '@/lib/second-marking/default-sample-size'
 import { listClassSets, type ClassSet } from '@/db/class-sets'
 import { db, type Db } from '@/db/knex'
+import { listMarkerAdjustments, type KeptAdjustment } from '@/db/marker-adjustments'
 import { listOwners, listPeopleWith, type PaperPerson } from '@/db/paper-people'
 import { getPaper } from '@/db/papers'
 import { listSampledAnswers, type SampledAnswer } from '@/db/sampled-answers'
@@ -15,12 +17,13 @@ import { sampleCandidates } from './sample-candidates'
 
 const nameOf = ({ givenName, familyName }: PaperPerson) => `${givenName.charAt(0)}. ${familyName}`
 
-type Held = Readonly<{ actor: Actor; owner: boolean; paper: Paper; answers: readonly SampledAnswer[]; scripts: readonly SampleScript[]; people: readonly PaperPerson[] }>
+type Held = Readonly<{ actor: Actor; owner: boolean; paper: Paper; answers: readonly SampledAnswer[]; scripts: readonly SampleScript[]; people: readonly PaperPerson[]; adjustments: readonly KeptAdjustment[] }>
 
 async function viewOf(trx: Db, held: Held, sample: Sample, set: ClassSet): Promise<SampleView> {
   const { actor, owner, paper } = held
   const scripts = held.scripts.filter(({ sampleId }) => sampleId === sample.id)
   const columns = paper.questions.map(({ id, label, maximum, tolerance }) => ({ id, label, maximum, tolerance: tolerance ?? sample.tolerance }))
+  const answers = held.answers.filter(({ sampleId }) => sampleId === sample.id)
   const there = new Set(scripts.map(({ scriptId }) => scriptId))
   const addable = sample.closedAt === null ? (await sampleCandidates(trx, paper.id, set.id)).candidates.filter(({ scriptId }) => !there.has(scriptId)) : []
   const person = held.people.find(({ userId }) => userId === sample.moderatorId)
@@ -28,7 +31,9 @@ async function viewOf(trx: Db, held: Held, sample: Sample, set: ClassSet): Promi
     id: sample.id, classSetId: set.id, className: set.className, moderator: person ? nameOf(person) : 'a moderator', mine: sample.moderatorId === actor.userId,
     seed: sample.seed, size: sample.size, defaultSize: sample.defaultSize, drawnAt: sample.drawnAt, closedAt: sample.closedAt,
     addable: addable.map(({ scriptId, number }) => ({ scriptId, number })),
-    ...sampleView({ answers: held.answers.filter(({ sampleId }) => sampleId === sample.id), scripts, columns, owner }),
+    patterns: markerPatterns(answers, columns, paper.step),
+    adjustments: held.adjustments.filter(({ sampleId }) => sampleId === sample.id).map(({ sampleId: _sample, paperId: _paper, ...adjustment }) => adjustment),
+    ...sampleView({ answers, scripts, columns, owner }),
   }
 }
 
@@ -57,7 +62,7 @@ export async function readSecondMarking(actor: Actor, paperId: string, trx: Db =
   const sets = await listClassSets(trx, paperId)
   const samples = await listSamples(trx, paperId)
   const people = await listPeopleWith(trx, 'moderator')
-  const held: Held = { actor, owner, paper, people, answers: await listSampledAnswers(trx, paperId), scripts: await listSampleScripts(trx, paperId) }
+  const held: Held = { actor, owner, paper, people, answers: await listSampledAnswers(trx, paperId), scripts: await listSampleScripts(trx, paperId), adjustments: await listMarkerAdjustments(trx, paperId) }
   const views: SampleView[] = []
   for (const sample of samples) if (owner || sample.moderatorId === actor.userId) views.push(await viewOf(trx, held, sample, sets.find(({ id }) => id === sample.classSetId)!))
   const offers: SampleOffer[] = []

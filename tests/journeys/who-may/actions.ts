@@ -71,6 +71,8 @@ export const actionRows: readonly ActionRow[] = [
   ...ofSample('decide', (o) => [{ responseId: o.sampled.read.response, stands: 'agreed', reason: 'judgement' }], ' 401   409   404   404    409    404   404   404'),
   ...ofSample('decide', (o) => [{ responseId: o.sampled.unread.response, stands: 'first', reason: 'judgement' }], ' 401  409   404   404    403    404   404   404'),
   ...ofSample('decide', (o) => [{ responseId: o.sampled.outside.response, stands: 'first', reason: 'judgement' }], ' 401 409   404   404    403    404   404   404'),
+  ...ofSample('adjust', (o) => [{ sampleId: o.sampled.sample, questionId: o.sampled.read.question, markerId: o.users.owner, key: 'none' }], ' 401 no_pattern 404 404 403 404 404 404'),
+  ...ofSample('undo', () => [nothing], '                                                                         401    404   404   404    404    404   404   404'),
   ...ofSample('beginAgreed', (o) => [{ responseId: o.sampled.unread.response, copyOf: nothing }], '              401    404   404   404    403    404   404   404'),
   ...ofSample('beginAgreed', (o) => [{ responseId: o.sampled.outside.response, copyOf: nothing }], '             401    404   404   404    403    404   404   404'),
 ]

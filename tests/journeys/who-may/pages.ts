@@ -51,6 +51,9 @@ export const pageRows: readonly PageRow[] = [
   page('/papers/[paperId]/second-mark/[responseId]', 'an answer not read yet', (o) => `/papers/${o.sampled.paper}/second-mark/${o.sampled.unread.response}`, ' in 307 404 404 403 404 my my'),
   page('/papers/[paperId]/second-mark/[responseId]', 'an answer outside the sample', (o) => `/papers/${o.sampled.paper}/second-mark/${o.sampled.outside.response}`, ' in 307 404 404 403 404 my my'),
   page('/papers/[paperId]/second-mark/[responseId]', 'an answer by way of another paper', (o) => `/papers/${o.others.paper}/second-mark/${o.sampled.read.response}`, ' in 404 404 404 404 404 my my'),
+  // Its marks call for no adjustment: the owner is led back to the list.
+  page('/papers/[paperId]/second-mark/adjust/[sampleId]/[questionId]/[markerId]', 'a marker in the sample', (o) => adjusting(o, o.sampled.sample), '                   in 307 404 404 403 404 my my'),
+  page('/papers/[paperId]/second-mark/adjust/[sampleId]/[questionId]/[markerId]', 'no sample', (o) => adjusting(o, nothing), '                                       in 404 404 404 404 404 my my'),
 
   page('/my-scripts', 'oneself', () => '/my-scripts', '                                                                                    in home home home home home 200 200'),
   page('/my-scripts/[returnedScriptId]', 'the script of the student', (o) => `/my-scripts/${o.back.student}`, '                            in 307 home home home home 200 404'),
@@ -66,4 +69,8 @@ export const pageRows: readonly PageRow[] = [
 
 function desk(paper: string, question: string, round?: string): string {
   return `/papers/${paper}/mark/${question}${round ? `?round=${round}` : ''}`
+}
+
+function adjusting(o: Objects, sample: string): string {
+  return `/papers/${o.sampled.paper}/second-mark/adjust/${sample}/${o.sampled.read.question}/${o.users.owner}`
 }

@@ -6,13 +6,16 @@ import type { Outcome } from '@/lib/core/outcome'
 import { decisionReasons } from '@/lib/core/second-marking'
 import { outcome } from '@/lib/infra/outcome'
 import { addToSample } from '@/lib/tasks/add-to-sample'
+import { adjustMarker } from '@/lib/tasks/adjust-marker'
 import { beginAgreedMarking } from '@/lib/tasks/begin-agreed-marking'
 import { closeSample } from '@/lib/tasks/close-sample'
 import { decideMarking } from '@/lib/tasks/decide-marking'
 import { drawSample } from '@/lib/tasks/draw-sample'
+import { undoAdjustment } from '@/lib/tasks/undo-adjustment'
 
 const Id = z.string().min(1).max(64)
 const Draw = z.object({ classSetId: Id, moderatorId: Id, size: z.int().min(1).max(1000) })
+const Adjust = z.object({ sampleId: Id, questionId: Id, markerId: Id, key: Id })
 const Decide = z.object({ responseId: Id, stands: z.enum(['first', 'second', 'agreed']), reason: z.enum(decisionReasons) })
 
 /** After a change the page is read again. */
@@ -38,6 +41,14 @@ export async function close(raw: unknown): Promise<Outcome<void>> {
 
 export async function decide(raw: unknown): Promise<Outcome<void>> {
   return changed(async () => decideMarking(await requireActor(), Decide.parse(raw)))
+}
+
+export async function adjust(raw: unknown): Promise<Outcome<{ adjustmentId: string }>> {
+  return changed(async () => adjustMarker(await requireActor(), Adjust.parse(raw)))
+}
+
+export async function undo(raw: unknown): Promise<Outcome<void>> {
+  return changed(async () => undoAdjustment(await requireActor(), Id.parse(raw)))
 }
 
 export async function beginAgreed(raw: unknown): Promise<Outcome<{ markingId: string }>> {

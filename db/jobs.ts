@@ -2,7 +2,7 @@ import { newId } from '@/lib/core/ids'
 import type { Db } from './knex'
 
 /** What the worker can be asked to do. The subject's own row says how far it has come. */
-export type JobKind = 'read-sheaf' | 'build-release'
+export type JobKind = 'read-sheaf' | 'build-release' | 'prune-cuts'
 export type Job = Readonly<{ id: string; kind: JobKind; subjectId: string; attempts: number }>
 
 type JobRow = {
@@ -10,12 +10,12 @@ type JobRow = {
   lease_until: number | null; worker: string | null; error_code: string | null; created_at: number; finished_at: number | null
 }
 
-/** Asks for work, in the transaction of the rows it is about. Asked twice while open, it is one job. */
-export async function addJob(db: Db, kind: JobKind, subjectId: string): Promise<void> {
+/** Asks for work, in the transaction of the rows it is about; not before `delayMs` are over. Asked twice while open, it is one job. */
+export async function addJob(db: Db, kind: JobKind, subjectId: string, delayMs = 0): Promise<void> {
   const at = Date.now()
   const open = await db<JobRow>('jobs').where({ kind, subject_id: subjectId }).whereIn('state', ['waiting', 'running']).first()
   if (open) return
-  await db<JobRow>('jobs').insert({ id: newId(), kind, subject_id: subjectId, state: 'waiting', attempts: 0, run_after: at, created_at: at })
+  await db<JobRow>('jobs').insert({ id: newId(), kind, subject_id: subjectId, state: 'waiting', attempts: 0, run_after: at + delayMs, created_at: at })
 }
 
 /** Takes the next job for `leaseMs`; one statement, so two workers never take the same. A job whose lease ran out is taken again. */

@@ -131,3 +131,11 @@ export async function scriptsOfSheafAlone(db: Db, sheafId: string): Promise<{ id
   const marked = new Set<string>([...((await touched('markings')) as string[]), ...((await touched('flags')) as string[])])
   return { ids, marked: [...marked] }
 }
+
+/** How many scripts of a paper have a scan of each of its pages. */
+export async function countScannedPages(db: Db, paperId: string): Promise<Record<number, number>> {
+  const rows = (await db('script_pages').join('scripts', 'scripts.id', 'script_pages.script_id').join('class_sets', 'class_sets.id', 'scripts.class_set_id')
+    .where('class_sets.paper_id', paperId).whereNotNull('script_pages.paper_page').whereNotNull('script_pages.leaf_id').groupBy('script_pages.paper_page')
+    .select({ page: 'script_pages.paper_page' }).count({ n: '*' })) as { page: number; n: number }[]
+  return Object.fromEntries(rows.map(({ page, n }) => [page, n]))
+}

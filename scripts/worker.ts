@@ -1,8 +1,9 @@
 import { hostname } from 'node:os'
 import { setTimeout as wait } from 'node:timers/promises'
-import { putDb } from '@/db/knex'
+import { putDb, transaction } from '@/db/knex'
 import { env } from '@/lib/infra/env'
 import { log } from '@/lib/infra/log'
+import { askToPrune, everyPaper } from '@/lib/tasks/prune-cuts'
 import { runNextJob } from '@/lib/tasks/run-next-job'
 import { sendMails } from '@/lib/tasks/send-mails'
 import { startFakeMailServer } from './start-fake-mail-server'
@@ -27,6 +28,7 @@ async function loop(what: string, once: () => Promise<boolean>): Promise<void> {
 // Without a mail server of its own the school keeps its mails on this machine.
 const kept = env.SHEAFMARK_SMTP_URL ? null : await startFakeMailServer()
 log.info({ worker }, 'worker started')
+await transaction((trx) => askToPrune(trx, everyPaper))
 await Promise.all([
   loop('job', () => runNextJob(worker, () => stop.signal.aborted)),
   loop('mail', async () => (await sendMails()).sent > 0),

@@ -8,7 +8,7 @@ import { numberBox } from './setting-edits'
 
 const pages = [{ page: 1, width: 595.28, height: 841.89 }, { page: 2, width: 595.28, height: 841.89 }]
 const empty: Setting = { step: 1, tolerance: halves(1), boxes: [], questions: [] }
-const view = (setting: Setting = empty): SettingView => ({ paperId: 'p', title: 'Light', version: 1, blank: 'b', pages, setting, stamped: [], withdrawnQuestions: {}, withdrawnPoints: [], sampled: false })
+const view = (setting: Setting = empty): SettingView => ({ paperId: 'p', title: 'Light', version: 1, blank: 'b', pages, setting, stamped: [], withdrawnQuestions: {}, withdrawnPoints: [], scanned: {}, sampled: false })
 const ids = (name: string) => ({ question: `${name}-q`, space: `${name}-s`, point: `${name}-p` })
 const band = (y: number, h = 90) => ({ page: 1, rect: { x: 48, y, w: 499, h } })
 const drew = (name: string, y: number): SetEvent => ({ type: 'drew', placed: band(y), ids: ids(name) })

@@ -1,7 +1,7 @@
 import type { ErrorCode, ErrorDetail } from '@/lib/core/errors'
 import { halves } from '@/lib/core/marks'
 import type { PaperRect } from '@/lib/core/paper-space'
-import type { Setting, SettingPoint, SettingQuestion } from '@/lib/core/setting'
+import { answersCutAgain, type Setting, type SettingPoint, type SettingQuestion } from '@/lib/core/setting'
 import type { SettingView } from '@/lib/core/setting-view'
 import {
   addQuestion, dropSpace, nameBox, numberBox, placeBelow, withNameBox, withNumberBox, withPoints, withQuestion, withSpace, type Fresh, type Placed,
@@ -26,6 +26,8 @@ export type SetState = Readonly<{
   hand: Hand | null
   page: number
   tool: Tool | null
+  /** How many answers the last save cut out of the scans anew. */
+  cutAgain: number
   trouble: Trouble | null
 }>
 
@@ -53,7 +55,7 @@ export type SetEvent =
 const mostUndo = 200
 
 export function openSet(view: SettingView): SetState {
-  return { view, setting: view.setting, past: [], future: [], lastKey: null, hand: null, page: view.pages[0]?.page ?? 1, tool: null, trouble: null }
+  return { view, setting: view.setting, past: [], future: [], lastKey: null, hand: null, page: view.pages[0]?.page ?? 1, tool: null, cutAgain: 0, trouble: null }
 }
 
 /** The box a hand holds, or null when it is no longer there. */
@@ -177,7 +179,7 @@ export function setPaper(state: SetState, event: SetEvent): SetState {
     case 'redid':
       return state.future.length === 0 ? state : stepped(state, state.future[0]!, [...state.past, state.setting], state.future.slice(1))
     case 'saved':
-      return { ...state, view: { ...state.view, version: event.version, setting: event.setting }, trouble: null }
+      return { ...state, view: { ...state.view, version: event.version, setting: event.setting }, cutAgain: answersCutAgain(state.view.setting, event.setting, state.view.scanned), trouble: null }
     case 'refused':
       return { ...state, trouble: event.trouble }
   }

@@ -14,6 +14,8 @@ export type SettingView = Readonly<{
   stamped: readonly string[]
   withdrawnQuestions: Readonly<Record<string, Withdrawal>>
   withdrawnPoints: readonly string[]
+  /** How many scripts have a scan of each page of the paper. */
+  scanned: Readonly<Record<number, number>>
   /** A sample has been drawn: the tolerances stay as they are. */
   sampled: boolean
 }>

@@ -59,3 +59,16 @@ export function settingOf(paper: Pick<Paper, 'step' | 'tolerance' | 'boxes' | 'q
     })),
   }
 }
+
+/**
+ * How many answers are cut out of the scans anew when one setting takes the place of another: those whose space was moved or put elsewhere.
+ * Marks lie on the page and stay. @param scanned how many scripts have a scan of each page
+ */
+export function answersCutAgain(before: Pick<Setting, 'questions'>, after: Pick<Setting, 'questions'>, scanned: Readonly<Record<number, number>>): number {
+  const place = ({ page, rect: { x, y, w, h } }: SettingSpace): string => [page, x, y, w, h].join()
+  return after.questions.reduce((sum, question) => {
+    const old = before.questions.find(({ id }) => id === question.id)?.spaces ?? []
+    const moved = question.spaces.filter((space) => !old.some((was) => place(was) === place(space)))
+    return sum + Math.max(0, ...moved.map(({ page }) => scanned[page] ?? 0))
+  }, 0)
+}

@@ -9,6 +9,7 @@ import { endSheaf, listSheafClassSets, type Sheaf } from '@/db/sheaves'
 import { placeLeaves } from '@/lib/placing/place-leaves'
 import type { LateVerdict } from '@/lib/placing/join-late'
 import { findLate } from './find-late'
+import { askToPrune } from './prune-cuts'
 import { renewSuggestions } from './renew-suggestions'
 
 type Found = Readonly<{ leaf: Leaf; reading: LeafReading; finding: LeafFinding; /** Where it goes when scripts were there before its sheaf. */ late?: LateVerdict | undefined }>
@@ -25,6 +26,7 @@ export async function placeSheaf(trx: Db, sheaf: Sheaf, pages: number): Promise<
   const found = leaves.map(({ leaf, evidence }, k) => ({ leaf, reading: evidence.reading, finding: findings[k]! }))
   const late = await findLate(trx, sheaf, found)
   await putFound(trx, sheaf, found.map((one, k) => ({ ...one, late: late.get(k) })))
+  if ([...late.values()].some(({ kind }) => kind === 'join')) await askToPrune(trx, sheaf.paperId)
   await endSheaf(trx, sheaf.id, { state: 'placed' })
   const count = (kind: LeafFinding['kind']) => findings.filter((finding) => finding.kind === kind).length
   const scripts = new Set(findings.flatMap(({ script }) => script ?? [])).size

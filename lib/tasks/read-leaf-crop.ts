@@ -2,6 +2,7 @@ import type { Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
 import type { Paper } from '@/lib/core/paper'
 import type { PaperRect } from '@/lib/core/paper-space'
+import type { Cut } from '@/lib/cutting/cut-key'
 import { db } from '@/db/knex'
 import { getLeaf, getLeafEvidence, type Leaf } from '@/db/leaves'
 import { getPaper } from '@/db/papers'
@@ -9,7 +10,8 @@ import { drawCut, type Picture } from './draw-cut'
 import { gatePaper } from './gate-paper'
 
 /** The name box, the boxes of the candidate number, or some of the writing, to compare hands by. */
-export type CropBox = 'name' | 'number' | 'hand'
+export const cropBoxes = ['name', 'number', 'hand'] as const
+export type CropBox = (typeof cropBoxes)[number]
 export const cropDpi = 150
 const around = 4
 /** How much of a hand is looked at, in points. */
@@ -20,11 +22,16 @@ export async function readLeafCrop(actor: Actor, { leafId, box }: { leafId: stri
   const leaf = await getLeaf(db(), leafId)
   if (!leaf) throw new AppError('not_found')
   await gatePaper(db(), actor, 'change', leaf.paperId)
-  const paper = await getPaper(db(), leaf.paperId)
+  const cut = await leafCrop(leaf, await getPaper(db(), leaf.paperId), box)
+  if (!cut) throw new AppError('not_found')
+  return drawCut(db(), cut, cropDpi)
+}
+
+/** What is cut out of a leaf for such a box; null when its page has none. */
+export async function leafCrop(leaf: Leaf, paper: Paper | null, box: CropBox): Promise<Cut | null> {
   const lie = await lieOf(leaf)
   const rect = lie && paper && (box === 'hand' ? handRect(paper, lie.paperPage) : boxRect(paper, box, lie.paperPage))
-  if (!lie || !rect) throw new AppError('not_found')
-  return drawCut(db(), { leafId, homography: lie.homography, rect, masks: [] }, cropDpi)
+  return lie && rect ? { leafId: leaf.id, homography: lie.homography, rect, masks: [] } : null
 }
 
 /** How the leaf lies on its page: as placed, else as its print says. */

@@ -5,6 +5,7 @@ import type { SettingView } from '@/lib/core/setting-view'
 import { db } from '@/db/knex'
 import { getPaper } from '@/db/papers'
 import { hasSample } from '@/db/samples'
+import { countScannedPages } from '@/db/scripts'
 import { touchedByMarking } from '@/db/touched-by-marking'
 import { gatePaper } from './gate-paper'
 
@@ -19,6 +20,7 @@ export async function readSetting(actor: Actor, paperId: string): Promise<Settin
     stamped: [...touched.questions, ...touched.points],
     withdrawnQuestions: Object.fromEntries(paper.questions.flatMap(({ id, withdrawn }) => (withdrawn ? [[id, withdrawn]] : []))),
     withdrawnPoints: paper.questions.flatMap(({ points }) => points.filter((point) => point.withdrawn).map(({ id }) => id)),
+    scanned: await countScannedPages(db(), paperId),
     sampled: await hasSample(db(), paperId),
   }
 }

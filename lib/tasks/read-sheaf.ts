@@ -91,15 +91,22 @@ function firstPlacer(pages: number): (readings: readonly LeafReading[]) => First
     const first = fromTheStart(readings)
     if (first.length - looked < Math.max(oftenest, part * looked)) return { readings: [], findings: [] }
     looked = first.length
-    const findings = placeFirstLeaves(first, pages, placed).filter(({ index }) => index >= placed)
-    placed = Math.max(placed, ...findings.map(({ index }) => index + 1))
+    const from = first.findIndex((leaf) => rank(leaf) >= placed)
+    if (from === -1) return { readings: [], findings: [] }
+    const findings = placeFirstLeaves(first, pages, from).filter((finding) => rank(finding) >= placed)
+    placed = Math.max(placed, ...findings.map((finding) => rank(finding) + 1))
     return { readings: first, findings }
   }
 }
 
+/** The place of a leaf in its sheaf, both halves of a sheet counted. */
+function rank({ index, half }: Readonly<{ index: number; half?: 0 | 1 }>): number {
+  return 2 * index + (half ?? 1)
+}
+
 /** The readings up to the first leaf that is not read yet, in order. */
 function fromTheStart(readings: readonly LeafReading[]): LeafReading[] {
-  const inOrder = [...readings].sort((a, b) => a.index - b.index || (a.half ?? 0) - (b.half ?? 0))
+  const inOrder = [...readings].sort((a, b) => rank(a) - rank(b))
   const gap = inOrder.findIndex(({ index }, k) => index > (inOrder[k - 1]?.index ?? -1) + 1)
   return gap === -1 ? inOrder : inOrder.slice(0, gap)
 }

@@ -5,6 +5,7 @@ import { db, transaction } from '@/db/knex'
 import { endSheaf } from '@/db/sheaves'
 import { log } from '@/lib/infra/log'
 import { buildRelease, releaseFailed } from './build-release'
+import { pruneCuts } from './prune-cuts'
 import { readSheaf } from './read-sheaf'
 
 /** How long a job is a worker's own without a sign of life; renewed three times as often. */
@@ -17,7 +18,12 @@ const waitMs = [2_000, 15_000]
 /** What a kind of job does. `goOn` turns false when the worker is to stop or has lost the job; false says that it stopped half way. */
 export type JobWork = Readonly<{ run: (subjectId: string, goOn: () => boolean) => Promise<boolean>; failed: (subjectId: string, code: string, detail: ErrorDetail) => Promise<void> }>
 
-const works: Partial<Record<JobKind, JobWork>> = { 'read-sheaf': { run: readSheaf, failed: sheafFailed }, 'build-release': { run: buildRelease, failed: releaseFailed } }
+const works: Partial<Record<JobKind, JobWork>> = {
+  'read-sheaf': { run: readSheaf, failed: sheafFailed },
+  'build-release': { run: buildRelease, failed: releaseFailed },
+  // What was not swept away lies there until the next sweep.
+  'prune-cuts': { run: pruneCuts, failed: async () => undefined },
+}
 
 /** Takes the next job and does it. False when there was none. A job that fails for a fault of ours is tried three times in all. */
 export async function runNextJob(worker: string, stopping: () => boolean): Promise<boolean> {

@@ -1,7 +1,7 @@
 import type { Actor } from '@/lib/core/actor'
 import { AppError } from '@/lib/core/errors'
 import type { Paper } from '@/lib/core/paper'
-import { settingOf, type Setting } from '@/lib/core/setting'
+import { answersCutAgain, settingOf, type Setting } from '@/lib/core/setting'
 import { assertToleranceKept } from '@/lib/setting/assert-tolerance-kept'
 import { checkSetting } from '@/lib/setting/check-setting'
 import { planChanges, type Touched } from '@/lib/setting/plan-changes'
@@ -13,7 +13,9 @@ import { dropPoints, dropQuestions, dropSpaces, idsOfOtherPapers, parkLabels, pu
 import { ensureResponses } from '@/db/responses'
 import { hasSample } from '@/db/samples'
 import { addSchemeVersion } from '@/db/scheme-versions'
+import { countScannedPages } from '@/db/scripts'
 import { touchedByMarking } from '@/db/touched-by-marking'
+import { askToPrune } from './prune-cuts'
 
 /**
  * Puts a checked setting in place of the stored one, inside the caller's transaction and after its gate: keeps the scheme's next
@@ -34,6 +36,7 @@ export async function storeSetting(trx: Db, actor: Actor, paper: Paper, next: Se
   await parkLabels(trx, paper.id)
   for (const [position, question] of next.questions.entries()) await putQuestion(trx, paper.id, { ...question, position, points: question.points.map((point) => ({ ...point, withdrawn: false })) })
   await ensureResponses(trx, paper.id)
+  if (answersCutAgain(settingOf(paper), next, await countScannedPages(trx, paper.id)) > 0) await askToPrune(trx, paper.id)
   return markSchemeChanged(trx, actor, paper.id, 'scheme.saved')
 }
 

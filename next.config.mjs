@@ -26,7 +26,7 @@ const headers = [
 const config = {
   experimental: { authInterrupts: true },
   // What must stay outside the bundle: native code, WASM loaders and anything that opens files by name.
-  serverExternalPackages: ['knex', 'pdfjs-dist', '@napi-rs/canvas', '@techstark/opencv-js', '@hyzyla/pdfium', 'piscina', 'pino', 'mailparser'],
+  serverExternalPackages: ['knex', 'pdfjs-dist', '@napi-rs/canvas', '@techstark/opencv-js', '@hyzyla/pdfium', 'piscina', 'zxing-wasm', 'pino', 'mailparser'],
   poweredByHeader: false,
   // `npm test` checks types by itself; building on a school's machine need not do it again.
   typescript: { ignoreBuildErrors: true },

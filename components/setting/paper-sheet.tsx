@@ -31,6 +31,7 @@ export function PaperSheet({ state, send }: { state: SetState; send: Dispatch<Se
       </dl>
       <div className={css.acts}>
         <Link className="btn" href={`/papers/${view.paperId}/details`}>Classes, people, blank paper</Link>
+        <Link className="btn" href={`/papers/${view.paperId}/print`}>Print with codes</Link>
         <a className="btn" href={`/api/papers/${view.paperId}/paper-file`} download>Save as paper.json</a>
       </div>
     </>

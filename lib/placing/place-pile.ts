@@ -1,6 +1,6 @@
 import type { LeafFinding, LeafReading, LeafReason } from '@/lib/core/leaf'
 import { joinNeighbours } from './join-neighbours'
-import { placeLeaves } from './place-leaves'
+import { placeFirstLeaves, placeLeaves } from './place-leaves'
 
 /** A leaf whose code and print agree: which printed script it belongs to, and its page. */
 export type Pinned = Readonly<{ reading: LeafReading; position: number; script: string; page: number }>
@@ -34,6 +34,19 @@ export function placePile(readings: readonly LeafReading[], pages: number): Leaf
     number = Math.max(number, ...run.map((position) => found.get(position)!.script ?? 0))
   }
   return readings.map((_, position) => found.get(position)!)
+}
+
+/**
+ * Scripts of a sheaf that is still being read which placePile will find just so, whatever the leaves to come show: where there are codes, those
+ * of which every page was met.
+ * @param from as placeFirstLeaves takes it, for a sheaf without codes
+ */
+export function placeFirstPile(readings: readonly LeafReading[], pages: number, from = 0): LeafFinding[] {
+  if (readings.every(({ code }) => !code)) return placeFirstLeaves(readings, pages, from)
+  const { pinned } = pinnedIn(readings)
+  const keys = [...new Set(pinned.map(({ script }) => script))]
+  const whole = keys.filter((key) => pinned.filter(({ script }) => script === key).length === pages)
+  return pinned.flatMap((leaf) => (whole.includes(leaf.script) ? [inScript(leaf, whole.indexOf(leaf.script) + 1, leaf.script, [])] : []))
 }
 
 /** Leaves with a proven code, each place once in the order of scanning, and the second ones. */

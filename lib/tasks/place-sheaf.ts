@@ -2,12 +2,13 @@ import { newId } from '@/lib/core/ids'
 import type { LeafFinding, LeafReading } from '@/lib/core/leaf'
 import { addAuditLine } from '@/db/audit'
 import type { Db } from '@/db/knex'
-import { listLeavesOfSheaf, listLeavesWithEvidence, moveLeaf, type Leaf } from '@/db/leaves'
+import { getLeaf, getLeafEvidence, listLeavesOfSheaf, listLeavesWithEvidence, moveLeaf, type Leaf } from '@/db/leaves'
 import { addScript, addScriptPage, findScriptPage, nextScriptPosition, setCurrentLeaf } from '@/db/scripts'
 import { ensureResponses } from '@/db/responses'
 import { endSheaf, listSheafClassSets, type Sheaf } from '@/db/sheaves'
-import { placeLeaves } from '@/lib/placing/place-leaves'
 import type { LateVerdict } from '@/lib/placing/join-late'
+import { placePile } from '@/lib/placing/place-pile'
+import { codedScript } from './coded-script'
 import { findLate } from './find-late'
 import { askToPrune } from './prune-cuts'
 import { renewSuggestions } from './renew-suggestions'
@@ -16,13 +17,13 @@ type Found = Readonly<{ leaf: Leaf; reading: LeafReading; finding: LeafFinding; 
 
 /**
  * Puts the leaves of a sheaf that is read into scripts, all in the caller's transaction. What is not certain becomes a loose
- * sheet, an empty page stays as a blank one; names are suggested, never given. A page that comes later than its script joins it, in place
- * of an older scan too, and stamps stay where they are on the page. What was placed while the sheaf was still being read, and what a
- * person decided since, stays as it is.
+ * sheet, an empty page stays as a blank one; names are suggested, given only where they were printed on the pages. A page that comes
+ * later than its script joins it, in place of an older scan too, and stamps stay where they are on the page. What was placed while the
+ * sheaf was still being read, and what a person decided since, stays as it is.
  */
 export async function placeSheaf(trx: Db, sheaf: Sheaf, pages: number): Promise<void> {
   const leaves = await listLeavesWithEvidence(trx, sheaf.id)
-  const findings = placeLeaves(leaves.map(({ evidence }) => evidence.reading), pages)
+  const findings = placePile(leaves.map(({ evidence }) => evidence.reading), pages)
   const found = leaves.map(({ leaf, evidence }, k) => ({ leaf, reading: evidence.reading, finding: findings[k]! }))
   const late = await findLate(trx, sheaf, found)
   await putFound(trx, sheaf, found.map((one, k) => ({ ...one, late: late.get(k) })))
@@ -50,18 +51,18 @@ export async function placeFirst(trx: Db, sheaf: Sheaf, readings: readonly LeafR
 
 async function putFound(trx: Db, sheaf: Sheaf, found: readonly Found[]): Promise<void> {
   const classSetId = (await listSheafClassSets(trx, sheaf.id))[0]!
-  const first = await nextScriptPosition(trx, sheaf.paperId)
   // A script of which a leaf lies in place already is there, whole: nothing is added to it by itself.
   const there = new Set(found.flatMap(({ leaf, finding }) => (leaf.state === 'read' ? [] : (finding.script ?? []))))
   const scriptIds = new Map<number, string>()
   for (const { leaf, reading, finding, late } of found) {
     if (leaf.state !== 'read') continue
-    if (late?.kind === 'join') await join(trx, late, leaf, reading, finding)
+    if (finding.printed !== undefined) await putByCode(trx, sheaf.paperId, { leaf, reading, finding })
+    else if (late?.kind === 'join') await join(trx, late, leaf, reading, finding)
     else if (late) await lay(trx, leaf, reading, { ...finding, kind: 'loose', script: null, homography: null, reasons: [...(finding.kind === 'loose' ? finding.reasons : []), late.reason], candidates: late.candidates.slice(0, 40) })
     else if (finding.kind !== 'script') await lay(trx, leaf, reading, finding)
     else if (there.has(finding.script!)) await lay(trx, leaf, reading, { ...finding, kind: 'loose', script: null, homography: null, reasons: ['order_unclear'] })
     else {
-      if (!scriptIds.has(finding.script!)) scriptIds.set(finding.script!, await startScript(trx, classSetId, first + scriptIds.size))
+      if (!scriptIds.has(finding.script!)) scriptIds.set(finding.script!, await startScript(trx, sheaf.paperId, classSetId))
       await putIn(trx, scriptIds.get(finding.script!)!, leaf, reading, finding)
     }
   }
@@ -69,16 +70,34 @@ async function putFound(trx: Db, sheaf: Sheaf, found: readonly Found[]): Promise
   await renewSuggestions(trx, sheaf.paperId)
 }
 
-async function startScript(trx: Db, classSetId: string, position: number): Promise<string> {
+/**
+ * Puts a leaf where its code says, also into a script that is there since an earlier sheaf. The very sheet that lies there scanned anew takes
+ * the old scan's place; any other sheet for that page is a person's to decide.
+ */
+async function putByCode(trx: Db, paperId: string, { leaf, reading, finding }: Found): Promise<void> {
+  const loose: LeafFinding = { ...finding, kind: 'loose', script: null, homography: null }
+  const scriptId = await codedScript(trx, paperId, finding.printed!)
+  if (scriptId === null) return lay(trx, leaf, reading, { ...loose, reasons: ['code_unknown'] })
+  const there = await findScriptPage(trx, scriptId, finding.paperPage!)
+  if (!there?.leafId) return putIn(trx, scriptId, leaf, reading, finding, there?.id)
+  const before = await getLeaf(trx, there.leafId)
+  const sameSheet = (await getLeafEvidence(trx, [there.leafId])).get(there.leafId)?.reading.code?.token === reading.code?.token
+  if (sameSheet && before?.sheafId !== leaf.sheafId) return join(trx, { kind: 'join', scriptId, reason: 're_scan' }, leaf, reading, finding)
+  await lay(trx, leaf, reading, { ...loose, reasons: ['duplicate_page'], candidates: [scriptId] })
+}
+
+async function startScript(trx: Db, paperId: string, classSetId: string): Promise<string> {
   const id = newId()
+  const position = await nextScriptPosition(trx, paperId)
   await addScript(trx, { id, classSetId, position, studentId: null, suggestedStudentId: null, suggestionReason: null, suggestionCertainty: null, confirmedBy: null, confirmedAt: null })
   return id
 }
 
-async function putIn(trx: Db, scriptId: string, leaf: Leaf, reading: LeafReading, finding: LeafFinding): Promise<void> {
-  const id = newId()
+async function putIn(trx: Db, scriptId: string, leaf: Leaf, reading: LeafReading, finding: LeafFinding, pageId?: string): Promise<void> {
+  const id = pageId ?? newId()
   const paperPage = finding.paperPage!
-  await addScriptPage(trx, { id, scriptId, paperPage, extra: false, position: paperPage, leafId: leaf.id })
+  if (pageId) await setCurrentLeaf(trx, pageId, leaf.id)
+  else await addScriptPage(trx, { id, scriptId, paperPage, extra: false, position: paperPage, leafId: leaf.id })
   await moveLeaf(trx, leaf.id, {
     state: 'placed', turn: finding.rotation, homography: finding.homography, paperPage, scriptPageId: id, confidence: finding.confidence, evidence: { reading, placed: finding },
   })

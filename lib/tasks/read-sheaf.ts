@@ -9,10 +9,11 @@ import { getSheaf, startSheaf, type Sheaf } from '@/db/sheaves'
 import { getStoredFile } from '@/db/stored-files'
 import { env } from '@/lib/infra/env'
 import { keptPath, readKept } from '@/lib/infra/file-store'
-import { placeFirstLeaves } from '@/lib/placing/place-leaves'
+import { placeFirstPile } from '@/lib/placing/place-pile'
 import { openBlankPaper } from '@/lib/reading/open-blank-paper'
 import { openLeaves, readLeaves, type LeafReader } from './read-leaves'
 import { placeFirst, placeSheaf } from './place-sheaf'
+import { printedCodesOf } from './printed-codes-of'
 
 /**
  * Reads a sheaf leaf by leaf and then puts it into scripts; scripts that are certain whatever follows are put in place on the way.
@@ -24,7 +25,7 @@ export async function readSheaf(sheafId: string, goOn: () => boolean): Promise<b
   const sheaf = await getSheaf(db(), sheafId)
   if (!sheaf || sheaf.state === 'placed') return true
   const paper = await getPaper(db(), sheaf.paperId)
-  const reader = await openLeaves(keptPath(sheaf.sha256), await blankPagesOf(paper), env.SHEAFMARK_THREADS)
+  const reader = await openLeaves(keptPath(sheaf.sha256), await blankPagesOf(paper), env.SHEAFMARK_THREADS, await printedCodesOf(db(), sheaf.paperId))
   try {
     await transaction((trx) => startSheaf(trx, sheafId, reader.pageCount))
     if (!(await readMissing(reader, sheaf, paper!.pages.length, goOn))) return false
@@ -87,14 +88,18 @@ type First = Readonly<{ readings: readonly LeafReading[]; findings: readonly Lea
 function firstPlacer(pages: number): (readings: readonly LeafReading[]) => First {
   let looked = 0
   let placed = 0
+  const byCode = new Set<number>()
   return (readings) => {
     const first = fromTheStart(readings)
     if (first.length - looked < Math.max(oftenest, part * looked)) return { readings: [], findings: [] }
     looked = first.length
     const from = first.findIndex((leaf) => rank(leaf) >= placed)
-    if (from === -1) return { readings: [], findings: [] }
-    const findings = placeFirstLeaves(first, pages, from).filter((finding) => rank(finding) >= placed)
-    placed = Math.max(placed, ...findings.map((finding) => rank(finding) + 1))
+    const found = placeFirstPile(first, pages, from === -1 ? first.length : from)
+    const coded = found.filter((finding) => finding.printed !== undefined && !byCode.has(rank(finding)))
+    for (const finding of coded) byCode.add(rank(finding))
+    const inTurn = found.filter((finding) => finding.printed === undefined && rank(finding) >= placed)
+    placed = Math.max(placed, ...inTurn.map((finding) => rank(finding) + 1))
+    const findings = [...coded, ...inTurn]
     return { readings: first, findings }
   }
 }

@@ -55,6 +55,8 @@ export const actionRows: readonly ActionRow[] = [
   ...ofPaper('details share', (o) => [{ paperId: o.half.paper, userId: o.users.owner }], '200'),
   ...ofPaper('details stopSharing', (o) => [{ paperId: o.half.paper, userId: o.users.owner }], 'last_owner'),
   ...ofPaper('details assign', (o) => [{ paperId: o.half.paper, userId: o.users.other, questionIds: [] }], '404'),
+  ...ofPaper('print saveSpots', (o) => [{ paperId: o.half.paper, spots: [] }], '200'),
+  ...ofPaper('print suggestSpots', (o) => [{ paperId: o.half.paper, same: false }], '200'),
   // A class or a class set of somebody else, by way of one's own paper.
   action('/papers/[paperId]/details addSet', 'a class that one does not teach', (o) => [{ paperId: o.others.paper, classId: o.half.class, satOn: '2026-11-12', resitOf: null }], ' 401 404 403 404 404 404 404 404'),
   action('/papers/[paperId]/details removeSet', 'a class set of another paper', (o) => [{ paperId: o.others.paper, classSetId: o.half.classSet }], ' 401 404 404 404 404 404 404 404'),

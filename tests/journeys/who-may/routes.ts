@@ -86,6 +86,8 @@ export const routeRows: readonly RouteRow[] = [
   ...onPapers('POST', 'paper-file?version=1', json(() => ({})), 'paper_invalid'),
   ...onPapers('POST', 'setting', json(() => ({ version: 4711, setting: { step: 1, tolerance: 3, boxes: [], questions: [] } })), 'out_of_date'),
   ...onPapers('POST', 'sheaves', json(() => ({ uploadId: '0'.repeat(32), classSetIds: [nothing] })), 'bad_input'),
+  change('POST /api/papers/[paperId]/print-pack', 'the half marked paper', (o) => `/api/papers/${o.half.paper}/print-pack`, (o) => ({ data: { classSetId: o.half.classSet, spares: 0, twoSided: false } }), ' 401 code_place_missing 404 403 404 404 404 404'),
+  change('POST /api/papers/[paperId]/print-pack', 'a class set of another paper', (o) => `/api/papers/${o.others.paper}/print-pack`, (o) => ({ data: { classSetId: o.half.classSet, spares: 0, twoSided: false } }), ' 401 404 404 404 404 404 404 404'),
   ...onPapers('OPTIONS', 'sheaves/upload', () => ({}), '204'),
   ...onPapers('POST', 'sheaves/upload', () => ({}), '412'),
   ...(['GET', 'HEAD', 'PATCH', 'DELETE'] as const).flatMap((verb) => onPapers(verb, `sheaves/upload/${'0'.repeat(32)}`, () => ({}), '404')),

@@ -20,7 +20,7 @@ export default async function DetailsPage({ params }: { params: Promise<{ paperI
   return (
     <PaperPage paperId={paperId} now="Set">
       <main className="page">
-        <div className="flex items-baseline gap-4"><h1>About this paper</h1><Link className="ml-auto" href={`/papers/${paperId}/set`}>Answer spaces and scheme</Link></div>
+        <div className="flex items-baseline gap-4"><h1>About this paper</h1><Link className="ml-auto" href={`/papers/${paperId}/print`}>Print with codes</Link><Link href={`/papers/${paperId}/set`}>Answer spaces and scheme</Link></div>
         <Part title="The paper"><DetailsForm key={JSON.stringify(view.details)} paperId={paperId} details={view.details} save={saveDetails} /></Part>
         <Part title="Classes"><ClassSets view={view} acts={{ addSet, removeSet, renewSet, setAttendance }} today={new Date(now()).toISOString().slice(0, 10)} /></Part>
         <Part title="People"><PaperPeople view={view} acts={{ share, stopSharing, assign }} /></Part>

@@ -1,4 +1,4 @@
-import type { LeafFinding, LeafReading } from '@/lib/core/leaf'
+import type { LeafFinding, LeafReading, LeafReason } from '@/lib/core/leaf'
 import type { Homography, Turn } from '@/lib/core/paper-space'
 import { newId } from '@/lib/core/ids'
 import type { Db } from './knex'
@@ -87,6 +87,14 @@ export async function getLeafEvidence(db: Db, leafIds: readonly string[]): Promi
     for (const row of rows) found.set(row.id, toEvidence(row))
   }
   return found
+}
+
+/** What the engine said of the placed leaves of a paper, where it said anything. */
+export async function listPlacedReasons(db: Db, paperId: string): Promise<Map<string, LeafReason[]>> {
+  const reasons = "json_extract(leaves.finding, '$.placed.reasons')"
+  const rows = (await db('leaves').join('sheaves', 'sheaves.id', 'leaves.sheaf_id').where({ 'sheaves.paper_id': paperId, 'leaves.state': 'placed' }).whereRaw(`${reasons} <> '[]'`)
+    .select({ id: 'leaves.id', reasons: db.raw(reasons) })) as { id: string; reasons: string }[]
+  return new Map(rows.map(({ id, reasons: said }) => [id, JSON.parse(said) as LeafReason[]]))
 }
 
 export type LeafPlace = Pick<Leaf, 'state' | 'turn' | 'homography' | 'paperPage' | 'scriptPageId' | 'decidedBy' | 'decidedAt'>

@@ -5,7 +5,8 @@ const dense = 120
 
 /** One drawn leaf per sheet: read, turned, an empty back, loose, not readable; the one being read in hand. The words stand below. */
 export function DrawnLeaves({ sheaf }: { sheaf: SheafProgress }) {
-  const lines = new Map(sheaf.leaves.map((leaf) => [leaf.number, leaf]))
+  // Of two pages on one sheet the one to look at is drawn.
+  const lines = new Map(sheaf.leaves.toSorted((a, b) => rank(a) - rank(b)).map((leaf) => [leaf.number, leaf]))
   const now = sheaf.state === 'reading' ? firstMissing(lines, sheaf.leafCount) : null
   return (
     <div className={`${style.leaves} ${sheaf.leafCount > dense ? style.many : ''}`} aria-hidden>
@@ -13,6 +14,9 @@ export function DrawnLeaves({ sheaf }: { sheaf: SheafProgress }) {
     </div>
   )
 }
+
+const quiet: readonly LeafLine['look'][] = ['blank', 'set_aside', 'clear', 'placed']
+const rank = ({ look }: LeafLine): number => (look === 'unreadable' ? 9 : quiet.includes(look) ? quiet.indexOf(look) : 8)
 
 function firstMissing(lines: ReadonlyMap<number, LeafLine>, leafCount: number): number | null {
   for (let number = 1; number <= leafCount; number++) if (!lines.has(number)) return number

@@ -1,6 +1,6 @@
 import Link from 'next/link'
 import { errorSentence } from '@/components/ui/error-sentence'
-import type { SheafProgress } from '@/lib/core/sheaf-progress'
+import { sheetsRead, type SheafProgress } from '@/lib/core/sheaf-progress'
 import { DrawnLeaves } from './drawn-leaves'
 import { counted, saidProgress, tally, timeLeft } from './sheaf-words'
 import { StopReading } from './stop-reading'
@@ -42,11 +42,12 @@ function safe({ leaves }: SheafProgress): string {
 
 function Count({ sheaf }: { sheaf: SheafProgress }) {
   const { state, leaves, leafCount, secondsLeft } = sheaf
-  if (state === 'placed') return <span>{counted(leafCount, 'leaf', 'leaves')} read</span>
-  if (state === 'failed') return <span>{leaves.length} of {leafCount} leaves read</span>
+  const read = sheetsRead(leaves)
+  if (state === 'placed') return <span>{counted(leafCount, 'leaf', 'leaves')} read{leaves.length > leafCount ? `, ${leaves.length} pages on them` : ''}</span>
+  if (state === 'failed') return <span>{read} of {leafCount} leaves read</span>
   if (state === 'waiting') return <><span>{counted(leafCount, 'leaf', 'leaves')}</span><span className="soft">waiting for its turn</span></>
-  if (leaves.length >= leafCount) return <span>All {leafCount} leaves read, putting them into scripts</span>
-  return <><span><span className="swipe">leaf {leaves.length + 1}</span> of {leafCount}</span><span>{secondsLeft === null ? '' : timeLeft(secondsLeft)}</span></>
+  if (read >= leafCount) return <span>All {leafCount} leaves read, putting them into scripts</span>
+  return <><span><span className="swipe">leaf {read + 1}</span> of {leafCount}</span><span>{secondsLeft === null ? '' : timeLeft(secondsLeft)}</span></>
 }
 
 function Next({ sheaf, paperId, first, onAgain, onStopped }: SheafSectionProps) {

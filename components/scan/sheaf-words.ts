@@ -1,4 +1,4 @@
-import type { LeafLine, SheafProgress } from '@/lib/core/sheaf-progress'
+import { sheetsRead, type LeafLine, type SheafProgress } from '@/lib/core/sheaf-progress'
 
 /** 1 leaf, 2 leaves. */
 export function counted(n: number, one: string, many = `${one}s`): string {
@@ -27,7 +27,7 @@ export function timeLeft(seconds: number): string {
 export function saidProgress({ state, leaves, leafCount, secondsLeft }: Pick<SheafProgress, 'state' | 'leaves' | 'leafCount' | 'secondsLeft'>): string {
   if (state === 'waiting') return 'Waiting to be read'
   if (state !== 'reading') return ''
-  const tenths = Math.floor((10 * leaves.length) / Math.max(1, leafCount))
+  const tenths = Math.floor((10 * sheetsRead(leaves)) / Math.max(1, leafCount))
   if (tenths >= 10) return 'All leaves read'
   return tenths === 0 ? 'Reading has begun' : `${tenths * 10} per cent read${secondsLeft === null ? '' : `, ${timeLeft(secondsLeft)}`}`
 }
@@ -37,7 +37,7 @@ export type TallyLine = Readonly<{ what: string; count: number; says: string }>
 /** What was found, in words. While a sheaf is read it is only what each leaf shows by itself. */
 export function tally({ state, leaves, leafCount, scripts }: Pick<SheafProgress, 'state' | 'leaves' | 'leafCount' | 'scripts'>): TallyLine[] {
   const of = (...looks: LeafLine['look'][]) => leaves.filter(({ look }) => looks.includes(look))
-  const numbers = (lines: readonly LeafLine[]) => lines.map(({ number }) => number)
+  const numbers = (lines: readonly LeafLine[]) => [...new Set(lines.map(({ number }) => number))]
   const turned = leaves.filter((leaf) => leaf.turned && leaf.look !== 'unreadable')
   const done = state === 'placed'
   const found = done ? of('placed') : of('clear', 'placed')
@@ -49,6 +49,6 @@ export function tally({ state, leaves, leafCount, scripts }: Pick<SheafProgress,
     { what: done ? 'Loose sheets' : 'Not sure yet', count: loose.length, says: loose.length > 0 ? `${namedLeaves(numbers(loose))}${done ? ', for the sorting table' : ''}` : '' },
     { what: 'Set aside', count: of('set_aside').length, says: 'kept, not part of this test' },
   ]
-  if (state === 'failed') lines.push({ what: 'Not read', count: leafCount - leaves.length, says: 'what is read is kept' })
+  if (state === 'failed') lines.push({ what: 'Not read', count: leafCount - sheetsRead(leaves), says: 'what is read is kept' })
   return lines.filter(({ count, what }) => count > 0 || what === 'Loose sheets' || what === 'Placed in scripts' || what === 'Pages recognised')
 }

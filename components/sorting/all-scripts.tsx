@@ -1,4 +1,5 @@
 import type { SortScript, SortingTable } from '@/lib/core/sorting'
+import { scriptNotes } from './reason-words'
 import { whose } from './sorting-words'
 import style from './sorting.module.css'
 
@@ -15,10 +16,11 @@ export function AllScripts({ table, busy, onLook, onOther, onUnname }: AllScript
         <tbody>
           {table.scripts.map((script) => {
             const known = whose(script, table)
+            const notes = scriptNotes(script)
             return (
               <tr key={script.id}>
                 <td>{script.number}</td>
-                <td>{script.studentId ? <><b>{known.name}</b> {known.number}</> : <span className="soft">{known.number ? `perhaps ${known.name}` : 'no name yet'}</span>}{script.missing.length > 0 && <span className={style.why}>page {script.missing.join(', ')} missing</span>}</td>
+                <td>{script.studentId ? <><b>{known.name}</b> {known.number}</> : <span className="soft">{known.number ? `perhaps ${known.name}` : 'no name yet'}</span>}{notes.length > 0 && <span className={style.why}>{notes.join('; ')}</span>}</td>
                 <td><span className={style.attend}>{script.pages.map((page, k) => page.leafId && <button key={page.id} type="button" className={style.act} onClick={() => onLook(page.leafId!, script)} aria-label={`Look at ${page.paperPage ? `page ${page.paperPage}` : 'the extra page'} of script ${script.number}`}>{page.paperPage ? `page ${page.paperPage}` : `extra ${k + 1 - script.pages.filter(({ paperPage }) => paperPage !== null).length}`}</button>)}</span></td>
                 <td className={style.go}>{script.studentId && <span className={style.attend}><button type="button" className={style.act} disabled={busy} onClick={() => onOther(script)}>other name</button> <button type="button" className={style.act} disabled={busy} onClick={() => onUnname(script)}>no name</button></span>}</td>
               </tr>

@@ -1,4 +1,5 @@
 import type { LeafStub } from '@/lib/core/sorting'
+import { sayLeaf } from './say-leaf'
 import style from './sorting.module.css'
 
 /** Leaves that are kept but not used; each can come back to the table. */
@@ -10,8 +11,8 @@ export function KeptLeaves({ title, says, leaves, busy, onBack }: { title: strin
       <div className={style.stubs}>
         {leaves.map((leaf) => (
           <figure key={leaf.id}>
-            <img src={`/api/leaves/${leaf.id}/picture?width=240&turn=${leaf.turn}`} alt={`leaf ${leaf.number} of ${leaf.sheafName}`} loading="lazy" />
-            <figcaption className="dense">leaf {leaf.number} <button type="button" className={style.act} disabled={busy} onClick={() => onBack(leaf)} aria-label={`Bring leaf ${leaf.number} back`}>bring back</button></figcaption>
+            <img src={`/api/leaves/${leaf.id}/picture?width=240&turn=${leaf.turn}`} alt={`${sayLeaf(leaf)} of ${leaf.sheafName}`} loading="lazy" />
+            <figcaption className="dense">{sayLeaf(leaf)} <button type="button" className={style.act} disabled={busy} onClick={() => onBack(leaf)} aria-label={`Bring ${sayLeaf(leaf)} back`}>bring back</button></figcaption>
           </figure>
         ))}
       </div>

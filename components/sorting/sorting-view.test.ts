@@ -1,10 +1,12 @@
 import { describe, expect, it } from 'vitest'
 import type { LooseLeaf, SortScript, SortingTable } from '@/lib/core/sorting'
 import { looseOrder, nextView, pageInHand, startView } from './sorting-view'
-import { leftToSort, sayNeighbour, whyThere, whyLoose } from './sorting-words'
+import { scriptNotes, whyLoose } from './reason-words'
+import { sayLeaf } from './say-leaf'
+import { leftToSort, sayNeighbour, whyThere } from './sorting-words'
 
 const leaf = (id: string, paperPage: number | null = null, guess?: number): LooseLeaf => ({
-  id, number: 1, half: null, sheafName: 'a.pdf', turn: 0, width: 1654, height: 2339, paperPage, guesses: guess ? [{ paperPage: guess, confidence: 0.3 }] : [], reasons: [], problem: null, before: null, after: null, places: [],
+  id, number: 1, half: null, sheafName: 'a.pdf', turn: 0, width: 1654, height: 2339, paperPage, guesses: guess ? [{ paperPage: guess, confidence: 0.3 }] : [], reasons: [], missing: [], problem: null, before: null, after: null, places: [],
 })
 const script: SortScript = { id: 's', number: 4, classSetId: 'c', studentId: null, suggestedStudentId: 'jun', suggestionReason: 'list_order', suggestionCertainty: null, numberRead: null, pages: [], missing: [2] }
 const student = { classSetId: 'c', className: '8K', studentId: 'jun', candidateNumber: '8142', givenName: 'Jun', familyName: 'Rao', attendance: 'expected' as const, scriptId: null, sameName: false }
@@ -35,9 +37,9 @@ describe('the sheet in hand', () => {
 describe('what the table says', () => {
   const table = { students: [student], scripts: [script] } as unknown as SortingTable
   it('tells a suggested name from a given one', () => {
-    expect(sayNeighbour({ number: 48, state: 'placed', paperPage: 1, scriptId: 's' }, table)).toBe('leaf 48, page 1 of perhaps Jun Rao')
+    expect(sayNeighbour({ number: 48, half: null, state: 'placed', paperPage: 1, scriptId: 's' }, table)).toBe('leaf 48, page 1 of perhaps Jun Rao')
     const named = { ...table, scripts: [{ ...script, studentId: 'jun' }] }
-    expect(sayNeighbour({ number: 48, state: 'placed', paperPage: 1, scriptId: 's' }, named)).toBe('leaf 48, page 1 of Jun Rao')
+    expect(sayNeighbour({ number: 48, half: null, state: 'placed', paperPage: 1, scriptId: 's' }, named)).toBe('leaf 48, page 1 of Jun Rao')
   })
 
   it('says why a place is offered', () => {
@@ -46,7 +48,16 @@ describe('what the table says', () => {
   })
 
   it('puts reasons into words', () => {
-    expect(whyLoose({ reasons: ['unlike_paper'], problem: null })).toBe('its print is not that of this paper')
+    expect(whyLoose({ reasons: ['unlike_paper'], problem: null, missing: [] })).toBe('it does not look like this paper')
+    expect(whyLoose({ reasons: ['order_unclear', 'page_missing'], problem: null, missing: [2, 3, 4] })).toBe('the sheets around it can be put together in more than one way; pages 2, 3 and 4 of its script are missing')
+    expect(sayLeaf({ number: 3, half: 1 })).toBe('right half of sheet 3')
+  })
+
+  it('says beside a script what was found of its pages', () => {
+    const page = { id: 'p', paperPage: 1, leafId: 'l', turn: 0, reasons: [], older: 0 } as const
+    expect(scriptNotes({ pages: [page], missing: [2] })).toEqual(['page 2 missing'])
+    expect(scriptNotes({ pages: [{ ...page, reasons: ['pages_swapped'] }, { ...page, paperPage: 2, reasons: ['pages_swapped', 're_scan'], older: 1 }], missing: [] })).toEqual(['pages lay in another order', 'page 2 scanned again later'])
+    expect(scriptNotes({ pages: [{ ...page, older: 1 }], missing: [] })).toEqual(['page 1 scanned more than once'])
   })
 
   it('counts what is left', () => {

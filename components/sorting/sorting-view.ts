@@ -1,5 +1,5 @@
 import type { Turn } from '@/lib/core/paper-space'
-import type { LooseLeaf, SortScript, SortingTable } from '@/lib/core/sorting'
+import { certainName, type LooseLeaf, type SortScript, type SortingTable } from '@/lib/core/sorting'
 
 /** What a person has in hand, and how they look at it: nothing here is stored. */
 export type SortingView = Readonly<{
@@ -45,9 +45,14 @@ export function pageInHand(leaf: LooseLeaf, view: SortingView, pages: number): n
   return view.pages[leaf.id] ?? leaf.paperPage ?? leaf.guesses[0]?.paperPage ?? (pages === 1 ? 1 : null)
 }
 
-/** Scripts without a name, those with a suggestion and those without in the order of scanning. */
-export function openNames(table: Pick<SortingTable, 'scripts'>): SortScript[] {
-  return table.scripts.filter(({ studentId }) => studentId === null)
+/** Scripts without a name: those to be looked at one by one, then those whose numbers say it with certainty; each in the order of scanning. */
+export function openNames(table: Pick<SortingTable, 'scripts'>): { unsure: SortScript[]; certain: SortScript[] } {
+  const open = table.scripts.filter(({ studentId }) => studentId === null)
+  return { unsure: open.filter((script) => !isCertain(script)), certain: open.filter(isCertain) }
+}
+
+function isCertain({ suggestedStudentId, suggestionCertainty }: SortScript): boolean {
+  return suggestedStudentId !== null && (suggestionCertainty ?? 0) >= certainName
 }
 
 /** The leaf that shows a script's name box, or its first leaf. */

@@ -1,30 +1,5 @@
-import type { LeafReason } from '@/lib/core/leaf'
 import type { LeafNeighbour, LikelyPlace, LooseLeaf, SortScript, SortStudent, SortingTable } from '@/lib/core/sorting'
-
-const reasonWords: Record<LeafReason, string> = {
-  unreadable: 'its picture cannot be read',
-  unlike_paper: 'its print is not that of this paper',
-  not_clear: 'its print does not say for certain which page it is',
-  duplicate_page: 'it shows the same writing as a sheet before it: perhaps scanned twice',
-  two_page_ones: 'two first pages lie together, and their writing does not tell them apart',
-  two_of_a_page: 'two sheets of the same page lie together',
-  page_missing: 'a page of its script is missing',
-  order_unclear: 'the sheets around it can be put together in more than one way',
-  pages_swapped: 'the pages lie in another order than the paper',
-  code_disagrees: 'its code is that of another page than its print shows',
-  code_unknown: 'its code was not printed for this paper here',
-  re_scan: 'it is a new scan of a page that lay here before',
-  re_scan_unsure: 'it looks like a new scan of a page that is here, and not plainly of which',
-  late_page: 'it came later, and its script lacked this page',
-  late_unsure: 'it came later than the scripts, and it is not certain whose page it is',
-}
-
-/** Why a sheet was left loose, as one sentence without a full stop. */
-export function whyLoose({ reasons, problem }: Pick<LooseLeaf, 'reasons' | 'problem'>): string {
-  if (problem === 'page_too_large') return 'its picture is too large to read'
-  if (reasons.length === 0) return 'it was put on the table by hand'
-  return reasons.map((reason) => reasonWords[reason]).join('; ')
-}
+import { sayLeaf } from './say-leaf'
 
 export function fullName({ givenName, familyName }: Pick<SortStudent, 'givenName' | 'familyName'>): string {
   return `${givenName} ${familyName}`
@@ -37,6 +12,18 @@ export function whose(script: SortScript | undefined, table: Pick<SortingTable, 
   const student = table.students.find((one) => one.studentId === id && one.classSetId === script.classSetId)
   if (!student) return { name: `Script ${script.number}`, number: null, sure: false }
   return { name: fullName(student), number: student.candidateNumber, sure: script.studentId !== null }
+}
+
+/** The student suggested for a script. */
+export function suggestedFor(script: SortScript, table: Pick<SortingTable, 'students'>): SortStudent | undefined {
+  return table.students.find(({ studentId, classSetId }) => studentId === script.suggestedStudentId && classSetId === script.classSetId)
+}
+
+/** Why a student is suggested. */
+export function whySuggested({ suggestionReason, numberRead }: Pick<SortScript, 'suggestionReason' | 'numberRead'>, student: Pick<SortStudent, 'sameName'>): string {
+  const read = numberRead ? `number read as ${numberRead}` : 'no number read'
+  if (student.sameName) return `a namesake is on the list; ${read}`
+  return suggestionReason === 'number' ? read : `next on the list; ${read}`
 }
 
 function leavesAway(apart: number): string {
@@ -57,7 +44,7 @@ export function whyThere(place: LikelyPlace, page: number | null, script: SortSc
 /** What a neighbour in the pile is. */
 export function sayNeighbour(leaf: LeafNeighbour | null, table: SortingTable): string {
   if (!leaf) return 'nothing: the sheaf ends here'
-  const at = `leaf ${leaf.number}`
+  const at = sayLeaf(leaf)
   if (leaf.state === 'blank') return `${at}, an empty back`
   if (leaf.state === 'set_aside') return `${at}, set aside`
   if (leaf.state !== 'placed') return `${at}, loose too`

@@ -1,6 +1,8 @@
 import type { LooseLeaf, SortingTable } from '@/lib/core/sorting'
 import { NameBoxes } from './name-boxes'
-import { howSure, sayNeighbour, whyLoose } from './sorting-words'
+import { whyLoose } from './reason-words'
+import { sayLeaf } from './say-leaf'
+import { howSure, sayNeighbour } from './sorting-words'
 import style from './sorting.module.css'
 
 type WhatIsKnownProps = Readonly<{ leaf: LooseLeaf; table: SortingTable; page: number | null; onPage: (page: number) => void }>
@@ -24,7 +26,7 @@ export function WhatIsKnown({ leaf, table, page, onPage }: WhatIsKnownProps) {
         </dd>
         {readable && <><dt>The hand</dt><dd><span className={style.hand}><img src={`/api/leaves/${leaf.id}/crop?box=hand`} alt="writing on this sheet" /></span></dd></>}
         <dt>Name, number</dt>
-        <dd>{named ? <NameBoxes leafId={leaf.id} boxes={table.nameBoxes} of={`leaf ${leaf.number}`} /> : noName(table.namePage, page)}</dd>
+        <dd>{named ? <NameBoxes leafId={leaf.id} boxes={table.nameBoxes} of={sayLeaf(leaf)} /> : noName(table.namePage, page)}</dd>
         <dt>Before it</dt><dd>{sayNeighbour(leaf.before, table)}</dd>
         <dt>After it</dt><dd>{sayNeighbour(leaf.after, table)}</dd>
         <dt>Why it is loose</dt><dd>{whyLoose(leaf)}</dd>

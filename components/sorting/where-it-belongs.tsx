@@ -9,7 +9,8 @@ type WhereItBelongsProps = Readonly<{
   table: SortingTable
   page: number | null
   busy: boolean
-  onPlace: (place: LikelyPlace) => void
+  /** Takes the place of that rank, from 0. */
+  onPlace: (rank: number) => void
   onOther: () => void
   onExtra: () => void
   onAside: () => void
@@ -23,7 +24,7 @@ export function WhereItBelongs({ leaf, table, page, busy, onPlace, onOther, onEx
   return (
     <section aria-label="Where it may belong">
       <h2>Where it may belong {leaf.places.length > 0 && <small>the hand on a page of each</small>}</h2>
-      {leaf.places.map((place, k) => <Place key={k} index={k + 1} {...{ place, table, page, busy }} onPress={() => onPlace(place)} />)}
+      {leaf.places.map((place, k) => <Place key={k} index={k + 1} {...{ place, table, page, busy }} onPress={() => onPlace(k)} />)}
       {leaf.places.length === 0 && <p className="soft dense py-2">No place is likelier than another. Choose the student, or say that it is an extra page or not part of this test.</p>}
       <div className={style.else}>
         <Act press="/" busy={busy} onPress={onOther}>another student</Act>

@@ -4,6 +4,11 @@ import type { ErrorCode, ErrorDetail } from './errors'
 export type LeafLook = 'clear' | 'unclear' | 'placed' | 'loose' | 'blank' | 'set_aside' | 'unreadable'
 export type LeafLine = Readonly<{ number: number; look: LeafLook; turned: boolean }>
 
+/** How many sheets of a sheaf are read: where one picture shows two pages, both lines bear its number. */
+export function sheetsRead(leaves: readonly Pick<LeafLine, 'number'>[]): number {
+  return new Set(leaves.map(({ number }) => number)).size
+}
+
 /** A sheaf on its way: `leaves` are those read so far, by the number a person counts from 1. */
 export type SheafProgress = Readonly<{
   id: string

@@ -25,8 +25,8 @@ export type SortStudent = Readonly<{
   sameName: boolean
 }>
 
-/** A page of a script with the leaf that holds now, and how far that leaf is turned to read upright. */
-export type SortScriptPage = Readonly<{ id: string; paperPage: number | null; leafId: string | null; turn: Turn }>
+/** A page of a script with the leaf that holds now, how far that leaf is turned to read upright, what the engine says of it, and how many older scans of the page are kept. */
+export type SortScriptPage = Readonly<{ id: string; paperPage: number | null; leafId: string | null; turn: Turn; reasons: readonly LeafReason[]; older: number }>
 /** A script on the sorting table. `student` is the confirmed name, `suggested` only a guess with its reason. */
 export type SortScript = Readonly<{
   id: string
@@ -46,7 +46,7 @@ export type SortScript = Readonly<{
 
 /** A leaf by the number a person counts from 1, in its sheaf. `half` tells the left (0) from the right page where one image shows two. */
 export type LeafStub = Readonly<{ id: string; number: number; half: 0 | 1 | null; sheafName: string; turn: Turn }>
-export type LeafNeighbour = Readonly<{ number: number; state: 'placed' | 'loose' | 'blank' | 'set_aside' | 'read'; paperPage: number | null; scriptId: string | null }>
+export type LeafNeighbour = Readonly<{ number: number; half: 0 | 1 | null; state: 'placed' | 'loose' | 'blank' | 'set_aside' | 'read'; paperPage: number | null; scriptId: string | null }>
 
 export type LooseLeaf = LeafStub & Readonly<{
   /** Pixels of the leaf as stored: of its own part where an image shows two pages. */
@@ -56,6 +56,8 @@ export type LooseLeaf = LeafStub & Readonly<{
   paperPage: number | null
   guesses: readonly Readonly<{ paperPage: number; confidence: number }>[]
   reasons: readonly LeafReason[]
+  /** Pages that the script lacks which it would lie in. */
+  missing: readonly number[]
   problem: LeafProblem | null
   before: LeafNeighbour | null
   after: LeafNeighbour | null

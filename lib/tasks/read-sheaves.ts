@@ -32,7 +32,7 @@ function progressOf(sheaf: Sheaf, leaves: readonly Leaf[], scriptOf: ReadonlyMap
   const scripts = new Set(leaves.flatMap((leaf) => (leaf.scriptPageId && scriptOf.get(leaf.scriptPageId)) || []))
   return {
     id: sheaf.id, name: sheaf.name, state: sheaf.state, leafCount: sheaf.leafCount ?? leaves.length, leaves: leaves.map(lineOf), scripts: scripts.size,
-    secondsLeft: sheaf.state === 'reading' ? secondsLeft(leaves.map(({ readAt }) => readAt), sheaf.leafCount ?? 0) : null,
+    secondsLeft: sheaf.state === 'reading' ? secondsLeft([...new Map(leaves.map(({ position, readAt }) => [position, readAt])).values()], sheaf.leafCount ?? 0) : null,
     problem: sheaf.problem as ErrorCode | 'failed' | null, problemDetail: sheaf.problemDetail, receivedAt: sheaf.createdAt,
   }
 }

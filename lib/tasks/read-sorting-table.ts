@@ -5,7 +5,7 @@ import type { Turn } from '@/lib/core/paper-space'
 import type { LeafNeighbour, LeafStub, LooseLeaf, PlaceTarget, SortScript, SortScriptPage, SortStudent, SortingTable } from '@/lib/core/sorting'
 import { listClassSetStudents, listSittingClasses, type SittingClass } from '@/db/class-set-students'
 import { db } from '@/db/knex'
-import { getLeafEvidence, listLeavesOfPaper, type Leaf, type LeafEvidence } from '@/db/leaves'
+import { getLeafEvidence, listLeavesOfPaper, listPlacedReasons, type Leaf, type LeafEvidence } from '@/db/leaves'
 import { getPaper } from '@/db/papers'
 import { listScriptPages, listScripts } from '@/db/scripts'
 import { listSheaves } from '@/db/sheaves'
@@ -26,7 +26,7 @@ export async function readSortingTable(actor: Actor, paperId: string): Promise<S
   const evidence = await getLeafEvidence(db(), loose.map(({ id }) => id))
   const classes = await listSittingClasses(db(), paperId)
   const students = await studentsOf(classes)
-  const scripts = await scriptsOf(paperId, paper.pages.map(({ page }) => page), new Map(leaves.map(({ id, turn }) => [id, turn])))
+  const scripts = await scriptsOf(paperId, paper.pages.map(({ page }) => page), leaves)
   const stub = (leaf: Leaf): LeafStub => ({ id: leaf.id, number: leaf.position + 1, half: leaf.half, sheafName: names.get(leaf.sheafId) ?? '', turn: leaf.turn })
   const pile: Pile = { leaves, scripts, students }
   const namePage = paper.boxes.find(({ kind }) => kind === 'name')?.page ?? paper.boxes[0]?.page ?? null
@@ -52,9 +52,16 @@ async function studentsOf(classes: readonly SittingClass[]): Promise<SortStudent
   }))
 }
 
-async function scriptsOf(paperId: string, paperPages: readonly number[], turns: ReadonlyMap<string, Turn>): Promise<SortScript[]> {
+async function scriptsOf(paperId: string, paperPages: readonly number[], leaves: readonly Leaf[]): Promise<SortScript[]> {
+  const turns = new Map<string, Turn>(leaves.map(({ id, turn }) => [id, turn]))
+  const scans = new Map<string, number>()
+  for (const { scriptPageId } of leaves) if (scriptPageId) scans.set(scriptPageId, (scans.get(scriptPageId) ?? 0) + 1)
+  const reasons = await listPlacedReasons(db(), paperId)
   const pages = new Map<string, SortScriptPage[]>()
-  for (const { id, scriptId, paperPage, leafId } of await listScriptPages(db(), paperId)) pages.set(scriptId, [...(pages.get(scriptId) ?? []), { id, paperPage, leafId, turn: turns.get(leafId ?? '') ?? 0 }])
+  for (const { id, scriptId, paperPage, leafId } of await listScriptPages(db(), paperId)) {
+    const older = (scans.get(id) ?? 0) - (leafId === null ? 0 : 1)
+    pages.set(scriptId, [...(pages.get(scriptId) ?? []), { id, paperPage, leafId, turn: turns.get(leafId ?? '') ?? 0, reasons: reasons.get(leafId ?? '') ?? [], older }])
+  }
   const numbers = await readNumbers(db(), paperId)
   return (await listScripts(db(), paperId)).map((script) => {
     const own = pages.get(script.id) ?? []
@@ -79,7 +86,7 @@ function looseOf(leaf: Leaf, evidence: LeafEvidence | null, pile: Pile): Omit<Lo
   const late = latePlaces(evidence?.placed?.candidates ?? [], paperPage, reasons.includes('re_scan_unsure'), pile.scripts)
   const near = likelyPlaces({ position: at, paperPage, secondScan: reasons.includes('duplicate_page') }, piled(own, pile.scripts), withoutScript(pile))
   return {
-    width: evidence?.reading.part?.w ?? leaf.width, height: evidence?.reading.part?.h ?? leaf.height, paperPage: leaf.paperPage, guesses, reasons, problem: evidence?.reading.problem ?? null,
+    width: evidence?.reading.part?.w ?? leaf.width, height: evidence?.reading.part?.h ?? leaf.height, paperPage: leaf.paperPage, guesses, reasons, missing: evidence?.placed?.missing ?? [], problem: evidence?.reading.problem ?? null,
     before: neighbour(own[at - 1], pile), after: neighbour(own[at + 1], pile),
     places: reasons.includes('unlike_paper') ? [] : (reasons.length > 1 ? [...near, ...late] : [...late, ...near]).slice(0, mostPlaces),
   }
@@ -88,7 +95,7 @@ function looseOf(leaf: Leaf, evidence: LeafEvidence | null, pile: Pile): Omit<Lo
 function neighbour(leaf: Leaf | undefined, { scripts }: Pile): LeafNeighbour | null {
   if (!leaf) return null
   const script = scripts.find(({ pages }) => pages.some(({ id }) => id === leaf.scriptPageId))
-  return { number: leaf.position + 1, state: leaf.state, paperPage: leaf.paperPage, scriptId: script?.id ?? null }
+  return { number: leaf.position + 1, half: leaf.half, state: leaf.state, paperPage: leaf.paperPage, scriptId: script?.id ?? null }
 }
 
 function piled(own: readonly Leaf[], scripts: readonly SortScript[]) {

@@ -37,12 +37,12 @@ export async function blindResponseIds(db: Db, userId: string, paperId: string):
 
 export type Sample = Readonly<{
   id: string; classSetId: string; paperId: string; moderatorId: string; seed: string; size: number; defaultSize: number; tolerance: HalfMarks
-  drawnAt: number; closedAt: number | null
+  drawnBy: string; drawnAt: number; closedBy: string | null; closedAt: number | null
 }>
 
 const sampleColumns = {
   id: 'samples.id', classSetId: 'samples.class_set_id', paperId: 'class_sets.paper_id', moderatorId: 'samples.moderator_id', seed: 'samples.seed', size: 'samples.size',
-  defaultSize: 'samples.default_size', tolerance: 'samples.tolerance', drawnAt: 'samples.drawn_at', closedAt: 'samples.closed_at',
+  defaultSize: 'samples.default_size', tolerance: 'samples.tolerance', drawnBy: 'samples.drawn_by', drawnAt: 'samples.drawn_at', closedBy: 'samples.closed_by', closedAt: 'samples.closed_at',
 }
 const selectSamples = (db: Db) => db('samples').join('class_sets', 'class_sets.id', 'samples.class_set_id').select(sampleColumns).orderBy(['samples.drawn_at', 'samples.id'])
 
@@ -65,7 +65,7 @@ export async function findSample(db: Db, classSetId: string, moderatorId: string
 }
 
 /** Keeps a drawn sample with its scripts in reading order. */
-export async function addSample(db: Db, sample: Omit<Sample, 'paperId' | 'drawnAt' | 'closedAt'>, drawnBy: string, scripts: readonly { scriptId: string; drawnAs: DrawnAs }[]): Promise<void> {
+export async function addSample(db: Db, sample: Omit<Sample, 'paperId' | 'drawnBy' | 'drawnAt' | 'closedBy' | 'closedAt'>, drawnBy: string, scripts: readonly { scriptId: string; drawnAs: DrawnAs }[]): Promise<void> {
   await db('samples').insert({
     id: sample.id, class_set_id: sample.classSetId, moderator_id: sample.moderatorId, seed: sample.seed, size: sample.size, default_size: sample.defaultSize,
     tolerance: sample.tolerance, drawn_by: drawnBy, drawn_at: Date.now(),

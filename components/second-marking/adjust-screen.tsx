@@ -8,7 +8,7 @@ import type { AdjustmentPlan, EffectLine } from '@/lib/core/adjusting'
 import { sayMark } from '@/lib/core/marks'
 import type { Outcome } from '@/lib/core/outcome'
 import { EffectTable } from './effect-table'
-import { sayRests, sayShift } from './say-pattern'
+import { sayRests, sayShift } from '@/lib/core/say-pattern'
 import styles from './second-marking.module.css'
 
 type AdjustScreenProps = Readonly<{ plan: AdjustmentPlan; decider: string; adjust: (raw: unknown) => Promise<Outcome<unknown>> }>

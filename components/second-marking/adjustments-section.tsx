@@ -6,8 +6,8 @@ import { counted } from '@/components/paper/stage-words'
 import type { MarkerAdjustment } from '@/lib/core/adjusting'
 import type { Outcome } from '@/lib/core/outcome'
 import type { SampleView } from '@/lib/core/second-marking'
-import { sayInstant } from './say-instant'
-import { sayNoAdjustment, sayRests, sayShift, sayShifted } from './say-pattern'
+import { sayInstant } from '@/lib/core/say-day'
+import { sayNoAdjustment, sayRests, sayShift, sayShifted } from '@/lib/core/say-pattern'
 
 type AdjustmentsSectionProps = Readonly<{ paperId: string; sample: SampleView; owner: boolean; undo: (raw: unknown) => Promise<Outcome<unknown>> }>
 

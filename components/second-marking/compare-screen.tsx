@@ -13,7 +13,7 @@ import type { Outcome } from '@/lib/core/outcome'
 import { decisionReasons, type Comparison, type Stands } from '@/lib/core/second-marking'
 import { ComparedSide } from './compared-side'
 import { DifferenceDots } from './difference-dots'
-import { reasonWords, sayApart, sayCaution, sayReason, sayStands } from './say-difference'
+import { reasonWords, sayApart, sayCaution, sayReason, sayStands } from '@/lib/core/say-difference'
 import styles from './second-marking.module.css'
 
 type CompareScreenProps = Readonly<{

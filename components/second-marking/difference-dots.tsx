@@ -1,5 +1,5 @@
 import type { AgreementFigures } from '@/lib/core/second-marking'
-import { sayDifference } from './say-difference'
+import { sayDifference } from '@/lib/core/say-difference'
 import styles from './second-marking.module.css'
 
 type DifferenceDotsProps = Readonly<{ figures: AgreementFigures; now: number }>

@@ -1,7 +1,7 @@
 import type { MarkFigures } from '@/lib/core/moderation-figures'
 import { sayMark, type HalfMarks } from '@/lib/core/marks'
 import { placePlot, type Plotted } from './place-plot'
-import { sayDifference, sayMean } from './say-difference'
+import { sayDifference, sayMean } from '@/lib/core/say-difference'
 import styles from './figures.module.css'
 
 type DifferencePlotProps = Readonly<{ name: string; pairs: readonly Plotted[]; figures: MarkFigures; maximum: HalfMarks | null; tolerance: HalfMarks | null }>

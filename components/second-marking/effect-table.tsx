@@ -1,6 +1,6 @@
 import type { EffectKind, EffectLine } from '@/lib/core/adjusting'
 import { sayMark } from '@/lib/core/marks'
-import { sayDifference } from './say-difference'
+import { sayDifference } from '@/lib/core/say-difference'
 import styles from './figures.module.css'
 
 const sayKind: Readonly<Record<EffectKind, string>> = { moves: '', bound: 'as far as it goes', own: 'decided on by name, stays', other: 'another marker’s, stays' }

@@ -1,7 +1,7 @@
 import { sayMark, type HalfMarks } from '@/lib/core/marks'
 import type { Coefficient, FigureRow } from '@/lib/core/moderation-figures'
-import { sayMean } from './say-difference'
-import { sayCoefficient, sayInterval, sayMarksInterval, saySpread, sayWhy } from './say-figure'
+import { sayMean } from '@/lib/core/say-difference'
+import { sayCoefficient, sayInterval, sayMarksInterval, saySpread, sayWhy } from '@/lib/core/say-figure'
 import styles from './figures.module.css'
 
 /** Every figure of one row with its 95 % interval. */

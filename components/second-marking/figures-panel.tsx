@@ -9,7 +9,7 @@ import { FiguresInFull } from './figures-in-full'
 import { FiguresTable } from './figures-table'
 import { HeatTable } from './heat-table'
 import type { Plotted } from './place-plot'
-import { sayCaution, sayDifference } from './say-difference'
+import { sayCaution, sayDifference } from '@/lib/core/say-difference'
 import styles from './figures.module.css'
 
 /** The pairs behind a row of figures, largest difference first. */

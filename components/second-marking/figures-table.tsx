@@ -1,7 +1,7 @@
 import { sayMark } from '@/lib/core/marks'
 import type { FigureRow, MarkFigures, ModerationFigures, WhyNone } from '@/lib/core/moderation-figures'
-import { sayMean } from './say-difference'
-import { sayCoefficient, sayLimits, saySpread, sayWhy, sayWhyLong } from './say-figure'
+import { sayMean } from '@/lib/core/say-difference'
+import { sayCoefficient, sayLimits, saySpread, sayWhy, sayWhyLong } from '@/lib/core/say-figure'
 import styles from './figures.module.css'
 
 /** The reasons for missing figures that occur in some rows, but for those that a dash says. */

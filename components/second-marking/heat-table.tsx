@@ -1,7 +1,7 @@
 import type { CSSProperties } from 'react'
 import { sayMark, type HalfMarks } from '@/lib/core/marks'
 import type { HeatCell, ModerationFigures } from '@/lib/core/moderation-figures'
-import { sayMean } from './say-difference'
+import { sayMean } from '@/lib/core/say-difference'
 import styles from './figures.module.css'
 
 /** How strongly a mean is tinted: fully from twice the tolerance on, in percent. A tolerance of nought counts as half a mark. */

@@ -1,7 +1,7 @@
 import Link from 'next/link'
 import { sayMark } from '@/lib/core/marks'
 import type { SampleView } from '@/lib/core/second-marking'
-import { sayDifference, sayStands } from './say-difference'
+import { sayDifference, sayStands } from '@/lib/core/say-difference'
 
 /** The answers outside the tolerance, with what was decided. */
 export function OutsideList({ paperId, sample }: Readonly<{ paperId: string; sample: SampleView }>) {

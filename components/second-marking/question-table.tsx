@@ -1,7 +1,7 @@
 import Link from 'next/link'
 import { sayMark } from '@/lib/core/marks'
 import type { SampleQuestion, SampleView } from '@/lib/core/second-marking'
-import { sayMean } from './say-difference'
+import { sayMean } from '@/lib/core/say-difference'
 import styles from './second-marking.module.css'
 
 /** Where comparing a question begins: what is outside and undecided first. */

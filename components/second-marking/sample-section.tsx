@@ -1,4 +1,5 @@
 'use client'
+import Link from 'next/link'
 import { Alarm } from '@/components/ui/alarm'
 import { useOutcome } from '@/components/ui/use-outcome'
 import type { Outcome } from '@/lib/core/outcome'
@@ -9,8 +10,8 @@ import { FiguresPanel } from './figures-panel'
 import { OutsideList } from './outside-list'
 import { QuestionTable } from './question-table'
 import { SampledScripts } from './sampled-scripts'
-import { sayInstant } from './say-instant'
-import { sayCaution, sayMean } from './say-difference'
+import { sayInstant } from '@/lib/core/say-day'
+import { sayCaution, sayMean } from '@/lib/core/say-difference'
 import styles from './second-marking.module.css'
 
 type Act = (raw: unknown) => Promise<Outcome<unknown>>
@@ -43,6 +44,7 @@ export function SampleSection({ paperId, sample, owner, acts }: SampleSectionPro
       </div>
       <FiguresPanel sample={sample} />
       <AdjustmentsSection paperId={paperId} sample={sample} owner={owner} undo={acts.undo} />
+      {owner && <p className="mt-3"><Link className="btn plain" href={`/papers/${paperId}/second-mark/record/${sample.id}`}>Moderation record of {className}</Link></p>}
       <p className="small soft mt-3">Drawn on {sayInstant(sample.drawnAt)}: {sample.size} asked, usual {sample.defaultSize}; the seed {sample.seed.slice(0, 8)} draws it again.</p>
       {closedAt !== null && <p className="dense mt-2">Closed on {sayInstant(closedAt)}. Where nothing else was decided the first marks stand.</p>}
       {owner && closedAt === null && (

@@ -5,7 +5,7 @@ import { useOutcome } from '@/components/ui/use-outcome'
 import type { Outcome } from '@/lib/core/outcome'
 import type { SampleView } from '@/lib/core/second-marking'
 import { SelectField } from '@/components/ui/field'
-import { sayDrawnAs } from './say-difference'
+import { sayDrawnAs } from '@/lib/core/say-difference'
 import styles from './second-marking.module.css'
 
 type SampledScriptsProps = Readonly<{ sample: SampleView; addScript: (raw: unknown) => Promise<Outcome<unknown>> }>

@@ -4,3 +4,8 @@ const day = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'long', ye
 export function sayDay(date: string): string {
   return day.format(new Date(`${date}T00:00:00Z`))
 }
+
+/** A moment in milliseconds as its day: "12 November 2026". */
+export function sayInstant(at: number): string {
+  return day.format(at)
+}

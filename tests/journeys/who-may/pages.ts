@@ -54,6 +54,8 @@ export const pageRows: readonly PageRow[] = [
   // Its marks call for no adjustment: the owner is led back to the list.
   page('/papers/[paperId]/second-mark/adjust/[sampleId]/[questionId]/[markerId]', 'a marker in the sample', (o) => adjusting(o, o.sampled.sample), '                   in 307 404 404 403 404 my my'),
   page('/papers/[paperId]/second-mark/adjust/[sampleId]/[questionId]/[markerId]', 'no sample', (o) => adjusting(o, nothing), '                                       in 404 404 404 404 404 my my'),
+  page('/papers/[paperId]/second-mark/record/[sampleId]', 'the sample', (o) => `/papers/${o.sampled.paper}/second-mark/record/${o.sampled.sample}`, '                in 200 404 404 403 404 my my'),
+  page('/papers/[paperId]/second-mark/record/[sampleId]', 'the sample by way of another paper', (o) => `/papers/${o.others.paper}/second-mark/record/${o.sampled.sample}`, ' in 404 404 404 403 404 my my'),
 
   page('/my-scripts', 'oneself', () => '/my-scripts', '                                                                                    in home home home home home 200 200'),
   page('/my-scripts/[returnedScriptId]', 'the script of the student', (o) => `/my-scripts/${o.back.student}`, '                            in 307 home home home home 200 404'),

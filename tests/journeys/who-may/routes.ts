@@ -25,6 +25,9 @@ export const routeRows: readonly RouteRow[] = [
   route('GET /api/papers/[paperId]/mark-book-csv', 'a class set of another paper', (o) => `/api/papers/${o.others.paper}/mark-book-csv?classSet=${o.half.classSet}`, ' 401 404 404 404 404 404 404 404'),
   route('GET /api/papers/[paperId]/hand-back', 'a class set of another paper', (o) => `/api/papers/${o.others.paper}/hand-back?classSet=${o.half.classSet}`, ' 401 404 404 404 404 404 404 404'),
 
+  route('GET /api/samples/[sampleId]/record', 'the sample', (o) => `/api/samples/${o.sampled.sample}/record`, '                401    200   404   404    403    404   404   404'),
+  route('GET /api/samples/[sampleId]/record', 'no sample', () => `/api/samples/${nothing}/record`, '                           401    404   404   404    404    404   404   404'),
+
   // The blank paper: for all who mark it.
   ...['pages/1', 'blank'].flatMap((what) => {
     const door = `GET /api/papers/[paperId]/${what === 'blank' ? what : 'pages/[page]'}`

@@ -1,5 +1,5 @@
-import { sayMark, type HalfMarks } from '@/lib/core/marks'
-import type { AgreementFigures, DecisionReason, DrawnAs, Stands } from '@/lib/core/second-marking'
+import { sayMark, type HalfMarks } from './marks'
+import type { AgreementFigures, DecisionReason, DrawnAs, Stands } from './second-marking'
 
 /** A difference in halves as it is read: "0", "+½", "−1". */
 export function sayDifference(difference: number): string {

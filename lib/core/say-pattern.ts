@@ -1,5 +1,5 @@
-import type { MarkerPattern, WhyNoAdjustment } from '@/lib/core/adjusting'
-import { sayMark, type HalfMarks } from '@/lib/core/marks'
+import type { MarkerPattern, WhyNoAdjustment } from './adjusting'
+import { sayMark, type HalfMarks } from './marks'
 import { sayMean } from './say-difference'
 
 /** A shift in halves as an act: "raise by ½ mark", "lower by 1 mark". */

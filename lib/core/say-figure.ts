@@ -1,4 +1,4 @@
-import type { Coefficient, Figure, Interval, Limits, WhyNone } from '@/lib/core/moderation-figures'
+import type { Coefficient, Figure, Interval, Limits, WhyNone } from './moderation-figures'
 import { sayMean } from './say-difference'
 
 /** Why there is no figure, short enough for a cell. */

@@ -97,6 +97,24 @@ export async function listPlacedReasons(db: Db, paperId: string): Promise<Map<st
   return new Map(rows.map(({ id, reasons: said }) => [id, JSON.parse(said) as LeafReason[]]))
 }
 
+/** What was seen written on a leaf's likeliest page: the number in its boxes, where strokes are, and how the page was found to lie. */
+export type SeenWriting<T> = Readonly<{ paperPage: number; homography: Homography; seen: T }>
+
+/** One part of what was seen written on leaves, by leaf: only that part is taken out of the findings. Leaves without it are left out. */
+export async function getSeenWriting<K extends 'number' | 'strokes'>(db: Db, leafIds: readonly string[], part: K): Promise<Map<string, SeenWriting<NonNullable<LeafReading[K]>>>> {
+  const found = new Map<string, SeenWriting<NonNullable<LeafReading[K]>>>()
+  for (let from = 0; from < leafIds.length; from += 400) {
+    const rows = (await db<LeafRow>('leaves').whereIn('id', leafIds.slice(from, from + 400))
+      .select('id', db.raw(`json_extract(finding, '$.reading.${part}') as seen`), db.raw(`json_extract(finding, '$.reading.guesses[0]') as best`))) as unknown as { id: string; seen: string | null; best: string | null }[]
+    for (const { id, seen, best } of rows) {
+      if (!seen || !best) continue
+      const { paperPage, homography } = JSON.parse(best) as LeafReading['guesses'][number]
+      found.set(id, { paperPage, homography, seen: JSON.parse(seen) as NonNullable<LeafReading[K]> })
+    }
+  }
+  return found
+}
+
 export type LeafPlace = Pick<Leaf, 'state' | 'turn' | 'homography' | 'paperPage' | 'scriptPageId' | 'decidedBy' | 'decidedAt'>
 
 /** Puts a leaf somewhere else. What is not named stays. */

@@ -39,7 +39,7 @@ async function bench(name: string, folder: string): Promise<void> {
     startup.push(last.result.startupSeconds)
     peer.push(await drawing(join(folder, 'scan.pdf'), dpi))
   }
-  const { score, result, codes } = last!
+  const { score, result, codes, numbers, ink } = last!
   const count = result.readings.length
   const off = (p: number) => (score.errors.length ? percentile(score.errors, p).toFixed(3) : '-')
   const each = (of: readonly Took[], key: keyof Took) => (1000 * median(of.map((took) => took[key]))) / count
@@ -48,6 +48,9 @@ async function bench(name: string, folder: string): Promise<void> {
     `${name.padEnd(10)} ${codes ? `codes read ${codes.read}/${codes.printed}  ` : ''}placed ${score.scripts - score.loose}/${score.scripts}  wrong ${score.wrong}  right kind ${score.rightKind}/${score.pages}  turn ${score.rightTurn}  split ${score.split}  mm p95 ${off(95)} max ${off(100)}  mark ${score.mark.toFixed(1)}` +
       `  |  ms a leaf against pdftoppm -r ${dpi}: cpu ${compared('cpu')}, wall ${compared('wall')}, start ${(1000 * median(startup)).toFixed(0)} ms`,
   )
+  const strangers = numbers.strangersNamed ? `, STRANGERS NAMED ${numbers.strangersNamed}` : ''
+  const gap = Number.isFinite(ink.leastWritten) ? `, empty at most ${ink.mostBlank.toFixed(2)} mm², written at least ${ink.leastWritten.toFixed(2)}` : ''
+  console.log(`${''.padEnd(10)} digits right ${numbers.digitsRight}/${numbers.digits}  numbers right ${numbers.right} wrong ${numbers.wrong} left open ${numbers.open}${strangers}  |  nothing written found ${ink.hits}/${ink.blank}, written taken for empty ${ink.misses}/${ink.written}${gap}`)
   const steps = [0, 0.2, 0.4, 0.6, 0.8, 0.95, 1.01]
   const placed = result.findings.filter((finding) => finding.kind === 'script')
   const bins = steps.slice(1).map((to, k) => `${steps[k]}-${Math.min(1, to)}: ${placed.filter((f) => f.confidence >= steps[k]! && f.confidence < to).length}`)

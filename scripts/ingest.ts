@@ -5,6 +5,9 @@ import { parseArgs } from 'node:util'
 import { z } from 'zod'
 import { AppError, type ErrorCode } from '@/lib/core/errors'
 import { readTokensFile } from './read-tokens-file'
+import { certainNumbers } from '@/lib/placing/certain-numbers'
+import { numberBoxesOf } from '@/lib/setting/number-boxes'
+import { readRoster } from '@/lib/setting/read-roster'
 import { ingestSheaf } from '@/lib/tasks/ingest-sheaf'
 
 // npm run -s ingest -- --paper PAPER_DIR --sheaf scan.pdf --out result.json [--threads 1] [--codes tokens.csv]
@@ -43,13 +46,19 @@ async function assertReadable(path: string): Promise<void> {
 }
 
 /** What of a paper.json the engine needs. */
-const PaperFile = z.object({ pages: z.int().min(1).optional() })
+const PaperFile = z.looseObject({ pages: z.int().min(1).optional() })
 
-async function pagesSaid(path: string): Promise<number | undefined> {
+async function paperFileOf(path: string): Promise<z.infer<typeof PaperFile>> {
   const text = (await input(path)).toString('utf8')
   const parsed = PaperFile.safeParse(await Promise.resolve(text).then(JSON.parse).catch(() => null))
   if (!parsed.success) throw new BadInput(`${path} is not a paper description`)
-  return parsed.data.pages
+  return parsed.data
+}
+
+/** The candidate numbers of a roster, in its order; none when there is no such file or it is no roster. */
+async function rosterNumbers(path: string): Promise<string[]> {
+  const bytes = await readFile(path).catch(() => null)
+  return bytes ? readRoster(bytes).lines.map(({ candidateNumber }) => candidateNumber) : []
 }
 
 /** The file itself when it is a PDF, else one that holds its pictures. */
@@ -63,14 +72,17 @@ async function main(): Promise<void> {
   const threads = Number(values.threads)
   if (!values.paper || !values.sheaf || !values.out || !Number.isInteger(threads) || threads < 1) throw new BadInput(usage)
   const paperFile = join(values.paper, 'paper.pdf')
-  const said = await pagesSaid(join(values.paper, 'paper.json'))
+  const file = await paperFileOf(join(values.paper, 'paper.json'))
   const named = <T>(path: string, work: Promise<T>): Promise<T> =>
     work.catch((error) => {
       throw error instanceof AppError ? new BadInput(`${path} ${sentences[error.code] ?? `cannot be used (${error.code})`}`) : error
     })
   const { openBlankPaper } = await import('@/lib/reading/open-blank-paper')
-  const paper = await named(paperFile, input(paperFile).then((bytes) => openBlankPaper(bytes)))
-  if (said !== undefined && said !== paper.length) throw new BadInput(`${paperFile} has ${paper.length} pages, paper.json says ${said}`)
+  const blank = await named(paperFile, input(paperFile).then((bytes) => openBlankPaper(bytes)))
+  if (file.pages !== undefined && file.pages !== blank.length) throw new BadInput(`${paperFile} has ${blank.length} pages, paper.json says ${file.pages}`)
+  const boxes = numberBoxesOf(file)
+  const paper = blank.map((page) => ({ ...page, numberBoxes: boxes.get(page.page) ?? [] }))
+  const roster = boxes.size ? await rosterNumbers(join(values.paper, 'roster.csv')) : []
   const printed = values.codes === undefined ? null : readTokensFile((await input(values.codes)).toString('utf8'))
   if (values.codes !== undefined && !printed) throw new BadInput(`${values.codes} is not a list of printed codes`)
   const called = performance.now()
@@ -78,8 +90,9 @@ async function main(): Promise<void> {
   const folder = await mkdtemp(join(tmpdir(), 'sheafmark-'))
   const reading = sheafOf(values.sheaf, folder).then((sheaf) => ingestSheaf({ sheaf, paper, threads, ...(printed ? { codes: printed.codes } : {}) }))
   const result = await named(values.sheaf, reading).finally(() => rm(folder, { recursive: true }))
+  const names = certainNumbers(result.readings, result.findings, roster)
   const pages = result.findings.map(({ index, half, kind, script, printed: code, paperPage, rotation, homography, confidence, reasons, problem }) => ({
-    index, ...(half === undefined ? {} : { half }), kind, script, ...(printed ? { candidate_number: printed.candidates.get(code ?? '') ?? null } : {}), paper_page: paperPage, rotation, homography, confidence: Number(confidence.toFixed(3)), reasons, ...(problem ? { problem } : {}),
+    index, ...(half === undefined ? {} : { half }), kind, script, candidate_number: printed?.candidates.get(code ?? '') ?? names.get(script ?? 0) ?? null, paper_page: paperPage, rotation, homography, confidence: Number(confidence.toFixed(3)), reasons, ...(problem ? { problem } : {}),
   }))
   const timings = { startup_s: (called + result.startupSeconds * 1000) / 1000, leaves_s: result.leavesSeconds }
   await writeFile(values.out, `${JSON.stringify({ pages, timings }, null, 1)}\n`).catch(() => {

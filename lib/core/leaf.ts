@@ -36,7 +36,8 @@ export type LeafCode = Readonly<{ token: string; script: string | null; paperPag
  * What one leaf shows by itself, whatever its neighbours are: stored leaf by leaf, so that reading can be taken up again.
  * `guesses` are best first. `clear` says that the first is certain: its print is there and no other page explains it as well.
  * `ink` is the writing on the first guess's page (see InkMap), for telling a second scan of a page from another student's;
- * `pen` is what it was written with; `number` what stands in the candidate number's boxes on that page, when it has any.
+ * `pen` is what it was written with; `number` what stands in the candidate number's boxes on that page, when it has any; `strokes`
+ * where that page was written on.
  * An image that shows two pages side by side gives two readings with one index: `half` 0 is the left one as
  * they read, `part` is where it lies on the image. Homographies speak of the whole image all the same.
  */
@@ -51,6 +52,7 @@ export type LeafReading = Readonly<{
   ink: InkMap | null
   pen?: PenTrace | null
   number?: NumberReading | null
+  strokes?: StrokeMap | null
   code?: LeafCode
   problem?: LeafProblem
 }>
@@ -62,6 +64,10 @@ export function unread(index: number, problem: LeafProblem): LeafReading {
 
 /** What a page was written with, as it looks: brightness of the strokes' middle (0 to 255, of levelled paper) and their width in pixels of 100 dpi. */
 export type PenTrace = Readonly<{ core: number; width: number }>
+
+/** Where a pen went on a page, for telling answers from empty spaces: inked pixels of 100 dpi in each 1 mm square, row after row, deflated, as base64. */
+export type StrokeMap = Readonly<{ columns: number; cells: string }>
+export const strokeCellPoints = 72 / 25.4
 
 /** How much was written in each 2 mm square of a page, 0 to 255, row after row, deflated, as base64. */
 export type InkMap = string

@@ -51,6 +51,11 @@ export function compose(first: Homography, second: Homography): Homography {
   return [row(first[0]), row(first[1]), row(first[2])]
 }
 
+/** Whether two maps are the very same. */
+export function sameHomography(a: Homography, b: Homography): boolean {
+  return a.every((row, k) => row.every((v, l) => v === b[k]![l]))
+}
+
 function scaled(h: Homography, by: number): Homography {
   const row = (r: Row): Row => [r[0] * by, r[1] * by, r[2] * by]
   return [row(h[0]), row(h[1]), row(h[2])]

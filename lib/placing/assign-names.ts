@@ -1,6 +1,6 @@
 import type { DigitShares } from '@/lib/core/digit-reading'
 import { certainName } from '@/lib/core/sorting'
-import { leastCostMatching } from './least-cost-matching'
+import { matchApart } from './match-apart'
 import { isTelling, likeliestOther, numberLikelihood, numberShare } from './number-likelihood'
 import { orderShares, orderTrust, type Anchor } from './order-shares'
 import { suggestNames } from './suggest-names'
@@ -49,20 +49,18 @@ function byNumber(scripts: readonly ReadScript[], list: readonly ListedNumber[],
   const open = list.filter((_, k) => free[k])
   const even = 1 / Math.max(1, open.length)
   const shares = orderShares(anchors, free, trust)
-  const costs = telling.map(({ boxes, at, other }, row) => [
-    ...open.map(({ number }, k) => {
-      const byOrder = shares[at]?.filter((_, place) => free[place])[k] ?? even
-      return -numberLikelihood(boxes, number) - Math.log((1 - strangers) * Math.max(1e-6, byOrder))
-    }),
-    ...telling.map((_, column) => (column === row ? -other.likelihood - Math.log(strangers / (3 * list.length)) : 1e4)),
-  ])
-  const { columns, margins } = leastCostMatching(costs)
+  const granted = matchApart(telling.map(({ boxes, at, other }) => {
+    const byOrder = shares[at]?.filter((_, k) => free[k])
+    const cost = (number: string, k: number) => -numberLikelihood(boxes, number) - Math.log((1 - strangers) * Math.max(1e-6, byOrder?.[k] ?? even))
+    return { options: new Map(open.map(({ number }, k) => [k, cost(number, k)])), none: -other.likelihood - Math.log(strangers / (3 * list.length)) }
+  }))
   const said = new Map<string, NameSuggestion>()
   telling.forEach(({ id, boxes, other }, row) => {
-    const one = open[columns[row]!]
+    const { option, margin } = granted[row]!
+    const one = option === null ? undefined : open[option]
     // A number that is plainly somebody's who is not on the list is nobody's of the list.
     if (!one || numberShare(boxes, other.number) >= plainlyRead) return
-    const certainty = 1 / (1 + Math.exp(-margins[row]!))
+    const certainty = 1 / (1 + Math.exp(-margin))
     const plain = numberShare(boxes, one.number) >= plainlyRead
     if (certainty >= worthSaying) said.set(id, { student: one.student, certainty: plain ? certainty : Math.min(certainty, atMost), by: 'number' })
   })

@@ -7,6 +7,7 @@ const silent = Math.log(0.1)
 
 /** How well boxes agree with a number: natural logarithm of its likelihood (0: certainly this; `silent` for each box that says nothing). */
 export function numberLikelihood(boxes: readonly DigitShares[], number: string): number {
+  if (number.length === boxes.length) return boxes.reduce((sum, shares, k) => sum + boxLikelihood(shares, number[k]!), 0)
   return Math.max(...layings(number, boxes.length).map((laid) => boxes.reduce((sum, shares, k) => sum + boxLikelihood(shares, laid[k]!), 0)))
 }
 
@@ -41,8 +42,9 @@ function layings(number: string, boxes: number): (string | null)[][] {
 function boxLikelihood(shares: DigitShares, digit: string | null): number {
   if (digit === null) return shares ? Math.log(slip) : 0
   if (!shares || !/^\d$/.test(digit)) return silent
-  const rest = Math.max(0, 1 - shares.reduce((sum, share) => sum + share, 0))
-  return Math.log((1 - slip) * (shares[Number(digit)]! + rest / 10) + slip / 10)
+  let rest = 1
+  for (const share of shares) rest -= share
+  return Math.log((1 - slip) * (shares[Number(digit)]! + Math.max(0, rest) / 10) + slip / 10)
 }
 
 function shareOf(shares: DigitShares, digit: string | null): number {

@@ -15,6 +15,7 @@ import { placeByCode, turnedAbout } from './place-by-code'
 import { scanDensity } from './scan-density'
 import { boxShrink, shrinkTo, type Shrunk } from './shrink'
 import { skews } from './skews'
+import { strokeMap } from './stroke-map'
 import type { Template } from './template'
 import { confidences, type Rival } from './weigh'
 
@@ -48,6 +49,7 @@ export function registerLeaf(cv: Cv, image: PageImage, picture: GreyPicture, pap
   return {
     image, empty: empty && !best, guesses, clear: best !== undefined && best.confidence >= clearFrom,
     pen: best && best.share >= 0.3 ? penOf(ready.levelled.white, best.template, best.map) : null,
+    strokes: best && best.share >= 0.3 ? strokeMap(ready.levelled.white, best.template, best.map) : null,
     ink: best && best.share >= 0.3 ? inkMap(ready.levelled.white, best.template, best.map) : null,
   }
 }
@@ -76,7 +78,7 @@ export function registerByCode(cv: Cv, image: PageImage, picture: GreyPicture, t
     if (!best || best.share < provenShare) continue
     const { white } = ready.levelled
     const guess = guessOf({ ...best, confidence: Math.min(1, best.share * 1.6) }, ready)
-    return { image, empty: false, guesses: [guess], clear: true, pen: penOf(white, template, best.map), ink: inkMap(white, template, best.map) }
+    return { image, empty: false, guesses: [guess], clear: true, pen: penOf(white, template, best.map), ink: inkMap(white, template, best.map), strokes: strokeMap(white, template, best.map) }
   }
   return null
 }

@@ -1,8 +1,9 @@
 import sharp from 'sharp'
 import { AppError } from '@/lib/core/errors'
-import type { BlankPage } from '@/lib/core/grey-picture'
+import type { BlankPage, GreyPicture } from '@/lib/core/grey-picture'
 import { unread, type ImagePart, type LeafReading, type PageGuess } from '@/lib/core/leaf'
 import type { PrintedCodes, PrintedPage } from '@/lib/core/printed-code'
+import { readNumber } from '@/lib/placing/read-number'
 import { loadCodeEngine } from '@/lib/reading/code-engine'
 import { decodePage } from '@/lib/reading/decode-page'
 import type { CodeWindow } from '@/lib/reading/find-code'
@@ -45,7 +46,7 @@ async function readLeaf(job: LeafJob): Promise<LeafAnswer> {
       // Codes are looked for where they stand on one page: an image that shows two is told by its print.
       const coded = windows.length > 0 && !mayBeTwoUp(image, templates) ? await readByCode(cv, image, picture, templates, codes, windows) : null
       const seen = coded?.reading ? [coded.reading] : registerSheet(cv, image, picture, templates)
-      return { readings: seen.map((one) => ({ index, ...one, ...(coded ? { code: coded.code } : {}) })), onto: null }
+      return { readings: seen.map((one) => withNumber({ index, ...one, ...(coded ? { code: coded.code } : {}) }, picture, job.paper)), onto: null }
     }
     const template = templates.find(({ page }) => page.page === onto.paperPage)
     return { readings: [], onto: template ? registerPartToPage(cv, image, picture, template, onto.part) : null }
@@ -53,6 +54,13 @@ async function readLeaf(job: LeafJob): Promise<LeafAnswer> {
     if (!(error instanceof AppError)) throw error
     return { readings: [unread(index, error.detail['too_large'] ? 'page_too_large' : 'page_unreadable')], onto: null }
   }
+}
+
+/** Reads the candidate number where the leaf's likeliest page has boxes for it. */
+function withNumber(reading: LeafReading, picture: GreyPicture, paper: readonly BlankPage[]): LeafReading {
+  const best = reading.guesses[0]
+  const blank = paper.find(({ page }) => page === best?.paperPage)
+  return best && blank?.numberBoxes?.length ? { ...reading, number: readNumber(picture, best.homography, blank, blank.numberBoxes) } : reading
 }
 
 async function makeReady(cv: Cv, { paperKey, paper, codes: coded }: LeafJob): Promise<NonNullable<typeof kept>> {

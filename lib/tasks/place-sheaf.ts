@@ -11,6 +11,7 @@ import { placePile } from '@/lib/placing/place-pile'
 import { codedScript } from './coded-script'
 import { findLate } from './find-late'
 import { askToPrune } from './prune-cuts'
+import { renewInk } from './renew-ink'
 import { renewSuggestions } from './renew-suggestions'
 
 type Found = Readonly<{ leaf: Leaf; reading: LeafReading; finding: LeafFinding; /** Where it goes when scripts were there before its sheaf. */ late?: LateVerdict | undefined }>
@@ -67,6 +68,8 @@ async function putFound(trx: Db, sheaf: Sheaf, found: readonly Found[]): Promise
     }
   }
   await ensureResponses(trx, sheaf.paperId)
+  const placed = new Set(found.map(({ leaf }) => leaf.id))
+  await renewInk(trx, sheaf.paperId, ({ leafId }) => leafId !== null && placed.has(leafId))
   await renewSuggestions(trx, sheaf.paperId)
 }
 

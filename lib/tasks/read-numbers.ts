@@ -2,7 +2,7 @@ import type { NumberReading } from '@/lib/core/digit-reading'
 import type { PaperBox } from '@/lib/core/paper'
 import { getPaper } from '@/db/papers'
 import type { Db } from '@/db/knex'
-import { getLeafEvidence } from '@/db/leaves'
+import { getSeenWriting } from '@/db/leaves'
 import { listScriptPages } from '@/db/scripts'
 
 /**
@@ -15,10 +15,10 @@ export async function readNumbers(db: Db, paperId: string): Promise<Map<string, 
   const found = new Map<string, NumberReading>()
   if (page === undefined) return found
   const pages = (await listScriptPages(db, paperId)).filter((one) => one.paperPage === page && one.leafId !== null)
-  const evidence = await getLeafEvidence(db, pages.map(({ leafId }) => leafId!))
+  const seen = await getSeenWriting(db, pages.map(({ leafId }) => leafId!), 'number')
   for (const { scriptId, leafId } of pages) {
-    const reading = evidence.get(leafId!)?.reading
-    if (reading?.number && reading.guesses[0]?.paperPage === page && sameBoxes(reading.number, boxes.filter((box) => box.page === page))) found.set(scriptId, reading.number)
+    const read = seen.get(leafId!)
+    if (read?.paperPage === page && sameBoxes(read.seen, boxes.filter((box) => box.page === page))) found.set(scriptId, read.seen)
   }
   return found
 }

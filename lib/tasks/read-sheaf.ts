@@ -39,11 +39,13 @@ export async function readSheaf(sheafId: string, goOn: () => boolean): Promise<b
   })
 }
 
-/** The pages of a paper's blank PDF as pictures. Throws paper_invalid when the paper has none. */
+/** The pages of a paper's blank PDF as pictures, with the boxes for the candidate number on them. Throws paper_invalid when the paper has none. */
 export async function blankPagesOf(paper: Paper | null): Promise<BlankPage[]> {
   const file = paper?.blankFileId ? await getStoredFile(db(), paper.blankFileId) : null
   if (!file) throw new AppError('paper_invalid')
-  return openBlankPaper(await readKept(file.sha256))
+  const boxes = paper!.boxes.filter(({ kind }) => kind === 'number')
+  const pages = await openBlankPaper(await readKept(file.sha256))
+  return pages.map((one) => ({ ...one, numberBoxes: boxes.filter(({ page }) => page === one.page).map(({ rect }) => rect) }))
 }
 
 /** Whether a sheaf is still there to be read: somebody may have stopped it. */

@@ -8,6 +8,7 @@ import { ensureResponses } from '@/db/responses'
 import { dropScript, dropScriptPage, getScript, getScriptPage, hasStamps, putScript, putScriptPage, setCurrentLeaf, setScriptName, type Script, type ScriptPage } from '@/db/scripts'
 import { addSortingDecision } from '@/db/sorting-decisions'
 import { gatePaper } from './gate-paper'
+import { renewInk } from './renew-ink'
 import { renewSuggestions } from './renew-suggestions'
 
 /** The rows one decision at the sorting table touched. Null: the row was not there. Attendance by class set and student. */
@@ -34,6 +35,8 @@ export async function decideSorting(actor: Actor, paperId: string, act: string, 
     await addSortingDecision(trx, { paperId, act, before, after, decidedBy: actor.userId })
     await addAuditLine(trx, actor, { act, objectKind: object.kind, objectId: object.id, paperId, to: object.to })
     await ensureResponses(trx, paperId)
+    const touched = await scriptsIn(trx, before)
+    await renewInk(trx, paperId, ({ scriptId }) => touched.has(scriptId))
     await renewSuggestions(trx, paperId)
   })
 }
@@ -50,6 +53,16 @@ function recorder(trx: Db, before: SortingRows): Touch {
 
 export function idsOf(rows: SortingRows): Ids {
   return { leaves: Object.keys(rows.leaves), pages: Object.keys(rows.pages), scripts: Object.keys(rows.scripts), students: Object.keys(rows.attendance) }
+}
+
+/** The scripts that a decision touched, in whole or a page of them. */
+export async function scriptsIn(db: Db, rows: SortingRows): Promise<Set<string>> {
+  const scripts = new Set(Object.keys(rows.scripts))
+  for (const [id, was] of Object.entries(rows.pages)) {
+    const now = await getScriptPage(db, id)
+    for (const page of [was, now]) if (page) scripts.add(page.scriptId)
+  }
+  return scripts
 }
 
 /** The rows of these ids as they stand. */

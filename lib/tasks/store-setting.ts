@@ -16,6 +16,7 @@ import { addSchemeVersion } from '@/db/scheme-versions'
 import { countScannedPages } from '@/db/scripts'
 import { touchedByMarking } from '@/db/touched-by-marking'
 import { askToPrune } from './prune-cuts'
+import { renewInk } from './renew-ink'
 
 /**
  * Puts a checked setting in place of the stored one, inside the caller's transaction and after its gate: keeps the scheme's next
@@ -37,7 +38,13 @@ export async function storeSetting(trx: Db, actor: Actor, paper: Paper, next: Se
   for (const [position, question] of next.questions.entries()) await putQuestion(trx, paper.id, { ...question, position, points: question.points.map((point) => ({ ...point, withdrawn: false })) })
   await ensureResponses(trx, paper.id)
   if (answersCutAgain(settingOf(paper), next, await countScannedPages(trx, paper.id)) > 0) await askToPrune(trx, paper.id)
+  if (spacesOf(paper) !== spacesOf(next)) await renewInk(trx, paper.id)
   return markSchemeChanged(trx, actor, paper.id, 'scheme.saved')
+}
+
+/** Where answers are written, as one value to compare. */
+function spacesOf({ questions }: Pick<Setting, 'questions'>): string {
+  return JSON.stringify(questions.map(({ id, spaces }) => [id, spaces.map(({ page, rect: { x, y, w, h } }) => [page, x, y, w, h])]))
 }
 
 /** Keeps the scheme as it stands now as the next version and says so in the audit. */

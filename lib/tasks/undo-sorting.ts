@@ -5,8 +5,9 @@ import { transaction } from '@/db/knex'
 import { ensureResponses } from '@/db/responses'
 import { lastSortingDecision, setSortingUndone } from '@/db/sorting-decisions'
 import { gatePaper } from './gate-paper'
+import { renewInk } from './renew-ink'
 import { renewSuggestions } from './renew-suggestions'
-import { idsOf, putRowsBack, rowsNow, sameRows, type SortingRows } from './sorting-record'
+import { idsOf, putRowsBack, rowsNow, sameRows, scriptsIn, type SortingRows } from './sorting-record'
 
 /**
  * Takes back the last thing this person decided at the sorting table of a paper, and so on backwards. Throws not_found when there
@@ -23,6 +24,8 @@ export async function undoSorting(actor: Actor, paperId: string): Promise<{ act:
     await setSortingUndone(trx, decision.id)
     await addAuditLine(trx, actor, { act: 'sorting.undone', objectKind: 'sorting-decision', objectId: decision.id, paperId, from: decision.act })
     await ensureResponses(trx, paperId)
+    const touched = await scriptsIn(trx, decision.before)
+    await renewInk(trx, paperId, ({ scriptId }) => touched.has(scriptId))
     await renewSuggestions(trx, paperId)
     return { act: decision.act }
   })

@@ -10,7 +10,11 @@ export type TruthPage = Readonly<{
   homography: Homography | null
   width_px: number
 }>
-export type Truth = Readonly<{ pages: readonly TruthPage[]; questions: readonly Readonly<{ page: number; region: PaperRect }>[] }>
+export type Truth = Readonly<{
+  pages: readonly TruthPage[]
+  questions: readonly Readonly<{ label?: string; page: number; region: PaperRect }>[]
+  responses?: readonly Readonly<{ candidate_number: string; question: string; blank: boolean }>[]
+}>
 export type ResultPage = Readonly<{
   index: number
   half?: number

@@ -1,0 +1,86 @@
+import { deflateRawSync } from 'node:zlib'
+import type { GreyPicture } from '@/lib/core/grey-picture'
+import { strokeCellPoints, type StrokeMap } from '@/lib/core/leaf'
+import { inverse, type Homography } from '@/lib/core/paper-space'
+import type { Template } from './template'
+
+/** Darker than this on levelled paper is written, light pencil too; what shines through from the back stays brighter. */
+const written = 195
+/** Near the page's edge lie the lid, holes and staples: 10 mm, in pixels of 100 dpi. */
+const margin = 40
+/** What hangs together and reaches less far than this, in pixels of 100 dpi (1.3 mm), is dust. */
+const shortest = 5
+/** A line as long as this share of the page and as thin as this is dirt on the scanner's glass. */
+const streakShare = 0.3
+const streakWidth = 4
+
+/**
+ * Where a pen went on a page: what hangs together as strokes do, where the blank page has no print within a millimetre; dots, streaks and
+ * what shines through left out. Pixels of 100 dpi in squares of 1 mm. `map` takes template to leaf pixels (100 dpi).
+ */
+export function strokeMap(leaf: GreyPicture, template: Template, map: Homography): StrokeMap {
+  const { width, height } = template.white
+  const cell = (strokeCellPoints * 100) / 72
+  const columns = Math.ceil(width / cell)
+  const counts = new Uint8Array(columns * Math.ceil(height / cell))
+  const { marks, places } = inked(leaf, template, inverse(map))
+  const part: number[] = []
+  for (const start of places.keys()) {
+    if (marks[start] !== 1) continue
+    part.length = 0
+    if (!isStroke(gather(marks, leaf.width, start, part), leaf)) continue
+    for (const at of part) {
+      const place = places.get(at)!
+      counts[Math.floor(Math.floor(place / width) / cell) * columns + Math.floor((place % width) / cell)]!++
+    }
+  }
+  return { columns, cells: deflateRawSync(counts).toString('base64') }
+}
+
+/** The leaf's dark pixels that are no print (1 in `marks`), and where on the template each lies. */
+function inked({ width, data }: GreyPicture, { white, clear }: Template, [[a, b, c], [d, e, f], [g, h, i]]: Homography): { marks: Uint8Array; places: Map<number, number> } {
+  const marks = new Uint8Array(data.length)
+  const places = new Map<number, number>()
+  for (let at = 0; at < data.length; at++) {
+    if (data[at]! >= written) continue
+    const x = (at % width) + 0.5
+    const y = Math.floor(at / width) + 0.5
+    const w = g * x + h * y + i
+    const u = Math.floor((a * x + b * y + c) / w)
+    const v = Math.floor((d * x + e * y + f) / w)
+    if (u < margin || v < margin || u >= white.width - margin || v >= white.height - margin || clear[v * white.width + u] === 0) continue
+    marks[at] = 1
+    places.set(at, v * white.width + u)
+  }
+  return { marks, places }
+}
+
+type Extent = Readonly<{ wide: number; high: number }>
+
+/** Collects what hangs together with a pixel (corners count) and takes it off the marks. */
+function gather(marks: Uint8Array, width: number, start: number, part: number[]): Extent {
+  let [left, right, top, bottom] = [width, 0, Infinity, 0]
+  marks[start] = 2
+  part.push(start)
+  for (let k = 0; k < part.length; k++) {
+    const at = part[k]!
+    const x = at % width
+    const y = Math.floor(at / width)
+    left = Math.min(left, x)
+    right = Math.max(right, x)
+    top = Math.min(top, y)
+    bottom = Math.max(bottom, y)
+    for (let j = -width; j <= width; j += width)
+      for (let i = -1; i <= 1; i++)
+        if (marks[at + j + i] === 1) {
+          marks[at + j + i] = 2
+          part.push(at + j + i)
+        }
+  }
+  return { wide: right - left + 1, high: bottom - top + 1 }
+}
+
+function isStroke({ wide, high }: Extent, leaf: GreyPicture): boolean {
+  const long = Math.max(wide, high)
+  return long >= shortest && !(Math.min(wide, high) <= streakWidth && long > streakShare * Math.max(leaf.width, leaf.height))
+}

@@ -11,6 +11,8 @@ export type SampledAnswer = Readonly<{
   marker: string
   first: HalfMarks
   second: HalfMarks | null
+  /** The sum of the adjustments that hold for the marking that counts, in halves. */
+  adjustment: number
   countingRound: string | null
   reason: string | null
 }>
@@ -21,6 +23,7 @@ const statement = `
     first.marker_id as markerId, substr(users.given_name, 1, 1) || '. ' || users.family_name as marker,
     coalesce((select sum(worth) from stamps where marking_id = first.id and removed = 0), 0) as first,
     case when second.id is not null then coalesce((select sum(worth) from stamps where marking_id = second.id and removed = 0), 0) end as second,
+    coalesce((select sum(halves) from adjustments where response_id = responses.id and undone_at is null and (marking_id is null or marking_id = counting.id)), 0) as adjustment,
     counting.round as countingRound, counting_decisions.reason as reason
   from class_sets
   join samples on samples.class_set_id = class_sets.id

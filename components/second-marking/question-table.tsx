@@ -6,7 +6,7 @@ import styles from './second-marking.module.css'
 
 /** Where comparing a question begins: what is outside and undecided first. */
 function toCompare({ compared }: SampleQuestion): string | null {
-  return (compared.find(({ within, decided }) => !within && decided === null) ?? compared[0])?.responseId ?? null
+  return (compared.find(({ open }) => open) ?? compared[0])?.responseId ?? null
 }
 
 type QuestionTableProps = Readonly<{ paperId: string; sample: SampleView }>

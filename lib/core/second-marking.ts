@@ -36,7 +36,10 @@ export type DrawnAs = 'highest' | 'lowest' | 'spread' | 'added'
  */
 export type SampledScript = Readonly<{ scriptId: string; number: number; name: string | null; drawnAs: DrawnAs | null; read: number; answers: number }>
 
-/** One answer with both marks. `decided` null: nobody has decided, the first mark counts meanwhile. */
+/**
+ * One answer with both marks. `decided` null: nobody has decided, the first mark counts meanwhile, `adjusted` where an adjustment holds for it. `open`: outside the tolerance, and
+ * neither a decision nor an adjustment has brought it in.
+ */
 export type ComparedAnswer = Readonly<{
   responseId: string
   questionId: string
@@ -47,6 +50,8 @@ export type ComparedAnswer = Readonly<{
   second: HalfMarks
   within: boolean
   decided: Stands | null
+  adjusted: HalfMarks | null
+  open: boolean
 }>
 
 export type SampleQuestion = Readonly<{ questionId: string; label: string; maximum: HalfMarks; tolerance: HalfMarks; read: number; answers: number; compared: readonly ComparedAnswer[]; figures: AgreementFigures }>

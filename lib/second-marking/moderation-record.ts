@@ -57,7 +57,7 @@ function figuresSection({ moderation: { questions, markers, answers, totals } }:
 }
 
 function decisionsSection({ decisions, undecided }: Recorded): RecordSection {
-  const line = undecided > 0 ? `${undecided} answers outside the tolerance are not decided yet; their first marks count meanwhile.` : 'Wherever nothing is listed here the first mark stands.'
+  const line = undecided > 0 ? `${undecided} answers outside the tolerance are not decided yet; their first marks count meanwhile.` : 'Wherever nothing is listed here the first mark stands, with the adjustments below.'
   return section('Decisions on single answers', [line], decisions.length === 0 ? null : {
     heads: ['Answer', 'First', 'Second', 'Difference', 'Decided', 'Mark', 'Reason', 'By', 'On'], figures: false,
     rows: decisions.map(({ label, scriptNumber, first, second, mark, stands, reason, by, at, superseded }) => [

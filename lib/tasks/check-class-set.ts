@@ -41,7 +41,7 @@ async function undecidedOf(trx: Db, actor: Actor, { paper, set, scripts: all }: 
   const samples = (await readSecondMarking(actor, paper.id, trx)).samples.filter(({ classSetId, closedAt }) => classSetId === set.id && closedAt === null)
   const lines = new Map<string, string>()
   for (const sample of samples) {
-    const apart = new Set(sample.questions.flatMap(({ compared }) => compared.filter(({ within, decided }) => !within && decided === null).map(({ scriptNumber }) => scriptNumber)))
+    const apart = new Set(sample.questions.flatMap(({ compared }) => compared.filter(({ open }) => open).map(({ scriptNumber }) => scriptNumber)))
     for (const { scriptId, read, answers } of sample.scripts) {
       const { who } = scripts.find((script) => script.scriptId === scriptId)!
       const number = all.find((script) => script.scriptId === scriptId)!.position + 1

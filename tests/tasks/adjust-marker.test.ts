@@ -77,6 +77,7 @@ describe('one adjustment for a marker', () => {
     const printed = await listAdjustments(db(), made.classSetId)
     expect(printed).toHaveLength(10)
     expect(printed[0]!.reason).toMatch(/^raised by 1 mark after second marking, \d+ \w+ \d{4}$/)
+    expect((await readSecondMarking(made.teacher, made.paperId)).samples[0]!.undecided).toBe(0)
     const [kept] = (await readSecondMarking(made.teacher, made.paperId)).samples[0]!.adjustments
     expect(kept).toMatchObject({ id: adjustmentId, halves: 2, answers: 10, pairs: 10, markerId: made.severe.userId, undone: null })
     expect(kept!.by).toContain(made.teacher.familyName)
@@ -84,6 +85,7 @@ describe('one adjustment for a marker', () => {
     await undoAdjustment(made.teacher, adjustmentId)
     expect(await made.marks()).toEqual(before)
     expect(await listAdjustments(db(), made.classSetId)).toEqual([])
+    expect((await readSecondMarking(made.teacher, made.paperId)).samples[0]!.undecided).toBe(9)
     expect((await readSecondMarking(made.teacher, made.paperId)).samples[0]!.adjustments[0]!.undone).not.toBeNull()
     expect(await db()('audit_lines').whereIn('act', ['marker.adjusted', 'marker.adjustment-undone']).orderBy('id').select('act', 'from_value', 'to_value')).toEqual([
       { act: 'marker.adjusted', from_value: made.severe.userId, to_value: '2' }, { act: 'marker.adjustment-undone', from_value: '2', to_value: '0' },

@@ -62,8 +62,11 @@ export function unread(index: number, problem: LeafProblem): LeafReading {
   return { index, image: null, empty: false, guesses: [], clear: false, ink: null, pen: null, problem }
 }
 
-/** What a page was written with, as it looks: brightness of the strokes' middle (0 to 255, of levelled paper) and their width in pixels of 100 dpi. */
-export type PenTrace = Readonly<{ core: number; width: number }>
+/**
+ * What a page was written with, as it looks: brightness of the strokes' middle (0 to 255, of levelled paper) and their width in pixels of
+ * 100 dpi; and by what hand: how far upright strokes lean to the right for each pixel upwards, and the middle height of signs. Null where too little stands free.
+ */
+export type PenTrace = Readonly<{ core: number; width: number; slant?: number | null; height?: number | null }>
 
 /** Where a pen went on a page, for telling answers from empty spaces: inked pixels of 100 dpi in each 1 mm square, row after row, deflated, as base64. */
 export type StrokeMap = Readonly<{ columns: number; cells: string }>
@@ -84,6 +87,7 @@ export type LeafReason =
   | 'page_missing'
   | 'order_unclear'
   | 'pages_swapped'
+  | 'interleaved'
   | 'code_disagrees'
   | 'code_unknown'
   | 're_scan'

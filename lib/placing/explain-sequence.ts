@@ -1,10 +1,19 @@
+import { braidsOf } from './braids'
 import { pageOrders, type PageOrder } from './page-orders'
 import { costs, otherOrderCost, scriptCost, tangleCost, type Seen } from './script-cost'
 
 /** Neighbouring leaves (positions of the sequence) taken together. `margin` is by how much every explanation that parts or joins them otherwise is dearer. */
-export type Block = Readonly<{ kind: 'script' | 'tangle' | 'stray'; leaves: readonly number[]; disordered: boolean; margin: number }>
+export type Block = Readonly<{
+  kind: 'script' | 'braid' | 'tangle' | 'stray'
+  leaves: readonly number[]
+  /** The leaves of each script: two for a braid, whose scripts lie between each other. */
+  parts: readonly (readonly number[])[]
+  disordered: boolean
+  margin: number
+  key: string
+}>
 
-export type Option = Readonly<{ kind: Block['kind']; from: number; to: number; cost: number; key: string }>
+export type Option = Readonly<{ kind: Block['kind']; from: number; to: number; cost: number; key: string; parts?: Block['parts'] }>
 /** The search for one order of the pages: `ranks` are the pages' places in it, `forth` and `back` hold the cheapest cost up to and from each position, `into` the options that end there. */
 export type Search = Readonly<{ ranks: readonly Seen[]; forth: Float64Array; back: Float64Array; total: number; options: readonly Option[]; into: readonly (readonly Option[])[] }>
 
@@ -45,7 +54,9 @@ function explain(sequence: readonly Seen[], context: Context, otherOrder: number
   return path(best).map((option) => ({
     kind: option.kind,
     leaves: range(option),
-    disordered: isDisordered(range(option).map((at) => best.ranks[at]!)),
+    parts: option.parts ?? [range(option)],
+    key: option.key,
+    disordered: option.kind === 'script' && isDisordered(range(option).map((at) => best.ranks[at]!)),
     margin: Math.min(...searches.map((one) => dearest(one, option))) - best.total,
   }))
 }
@@ -81,9 +92,20 @@ function optionsFor(sequence: readonly Seen[], from: number, to: number, pages: 
     const pens = known.slice(1).reduce((sum, at, k) => sum + together(known[k]!, at), 0)
     found.push({ kind: 'script', from, to, cost: script + pens + parted, key })
   }
-  const tangle = tangleCost(run, pages)
+  for (const { parts, changes } of braidsOf(run, pages)) {
+    const own = parts.map((part) => part.map((at) => from + at))
+    const cost = costs.interleaved + costs.changedPlaces * changes + own.reduce((sum, part) => sum + likeness(part, together), 0)
+    found.push({ kind: 'braid', from, to, cost: cost + parted, key: own.map((part) => part.join()).join('/'), parts: own })
+  }
+  const tangle = tangleCost(run)
   if (tangle !== null) found.push({ kind: 'tangle', from, to, cost: tangle + parted, key: `tangle ${key}` })
   return found
+}
+
+/** What it costs to hold leaves for one student's, each against each other, weighed as if each were held against the next alone. */
+function likeness(leaves: readonly number[], together: Together): number {
+  const pairs = leaves.flatMap((one, k) => leaves.slice(k + 1).map((other) => together(one, other)))
+  return (pairs.reduce((sum, cost) => sum + cost, 0) * (leaves.length - 1)) / pairs.length
 }
 
 function path({ forth, into }: Search): Option[] {

@@ -67,6 +67,14 @@ describe('placing leaves in scripts', () => {
     expect(scripts('A1 A2 B1 c2 c1 D1 D2 E1 E2 F1 F2', 2).slice(0, 9)).not.toMatch(/^1 1 2 2/)
     expect(scripts('a1 a2 B1 c2 c1 D1 D2' + more, 2).slice(0, 9)).not.toMatch(/^1 1 2 2/)
   })
+  it('leaves it open whose page 2 lies between a page 1 and another when nothing written tells them apart', () => {
+    expect(scripts(`A1 A2 B1 C2 C1 D1 D2${more}`, 2).slice(0, 13)).toBe('1 1 . . . 2 2')
+  })
+  it('parts two scripts that lie page by page between each other where pens tell them apart', () => {
+    expect(scripts(`A1 A2 B1 c1 B2 c2 D1 D2${more}`, 2).slice(0, 15)).toBe('1 1 2 3 2 3 4 4')
+    expect(scripts('A1 b1 A2 b2 A3 b3 A4 b4 C1 C2 C3 C4', 4)).toBe('1 2 1 2 1 2 1 2 3 3 3 3')
+    expect(reasons('A1 b1 A2 b2 A3 b3 A4 b4 C1 C2 C3 C4', 4, 1)).toEqual(['interleaved'])
+  })
   it('keeps pages of one pen together beside a missing page', () => {
     expect(scripts('a1 a2 B1 C1 C2', 2).slice(0, 3)).toBe('1 1')
   })

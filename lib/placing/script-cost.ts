@@ -1,8 +1,9 @@
 /**
  * What it costs to explain neighbouring leaves as one script, or as a tangle that only a person can part. Roughly minus the
- * logarithm of how often a fault happens at the copier: a missing page about once in 400 scripts, pages in another order once in 50.
+ * logarithm of how often a fault happens at the copier: a missing page about once in 400 scripts, pages in another order once in 50; that
+ * none lies so among the first twenty or so speaks only a little against the next.
  */
-export const costs = { missing: 6, eachMore: 0.5, otherOrder: 4, neverSwapped: 5.2, eachBreak: 2, stray: 3, unread: 2, interleaved: 6, tangled: 8, eachTangled: 1, partedSheet: 6 } as const
+export const costs = { missing: 6, eachMore: 0.5, otherOrder: 4, neverSwapped: 4.2, eachBreak: 2, far: 2, stray: 3, unread: 2, interleaved: 7, tangled: 10, eachTangled: 1, changedPlaces: 1.5, partedSheet: 6 } as const
 
 /** What pages in another order cost in a sheaf where `swapped` of `whole` complete scripts lie so: rarer the longer none has shown up. */
 export function otherOrderCost(swapped: number, whole: number): number {
@@ -42,24 +43,13 @@ function orderCost(known: readonly number[], pages: number, absent: number, othe
   const order = absent ? known.map((page) => ranks.indexOf(page) + 1) : known
   const framed = [0, ...order, (absent ? known.length : pages) + 1]
   const breaks = framed.slice(1).filter((rank, k) => rank !== framed[k]! + 1).length
-  return otherOrder + costs.eachBreak * Math.max(0, breaks - 3)
+  // Two neighbouring sheets change places, or a sheet is turned: no page goes further than that.
+  const far = order.some((rank, k) => Math.abs(rank - k - 1) > 2) ? costs.far : 0
+  return otherOrder + far + costs.eachBreak * Math.max(0, breaks - 3)
 }
 
-/** Cost of leaving a run to a person: low where two scripts lie page by page between each other, else by its length. */
-export function tangleCost(run: readonly Seen[], pages: number): number | null {
+/** Cost of leaving a run to a person, by its length. */
+export function tangleCost(run: readonly Seen[]): number | null {
   if (run.length < 2 || run[0] === null || run.at(-1) === null) return null
-  if (run.length === 2 * pages && pages > 1 && interleaved(run as number[], pages)) return costs.interleaved
   return costs.tangled + costs.eachTangled * run.length
-}
-
-/** Whether every page is there twice, as of two scripts in order that were pushed into each other; one after the other is none. */
-function interleaved(run: readonly number[], pages: number): boolean {
-  if (new Set(run.slice(0, pages)).size === pages) return false
-  const ends = [0, 0]
-  for (const page of run) {
-    const k = ends[0] === page - 1 ? 0 : ends[1] === page - 1 ? 1 : -1
-    if (k < 0) return false
-    ends[k] = page
-  }
-  return ends[0] === pages && ends[1] === pages
 }

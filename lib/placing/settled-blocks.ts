@@ -20,7 +20,7 @@ export function settledBlocks(sequence: readonly Seen[], context: Context, margi
   const settled: Block[] = []
   for (const block of explainSequence(sequence, context)) {
     if (block.leaves.at(-1)! >= reach) break
-    const least = block.kind === 'stray' || block.leaves.at(-1)! < from ? Infinity : Math.min(...searches.map((search) => leastMargin(search, block, sequence, reach)))
+    const least = block.kind === 'stray' || block.leaves.at(-1)! < from ? Infinity : Math.min(...searches.map((search) => leastMargin(search, block, reach)))
     if (least < margin) break
     settled.push({ ...block, margin: Math.min(block.margin, least) })
   }
@@ -35,11 +35,9 @@ function plainOrder(searches: readonly Search[], reach: number, pages: number): 
 }
 
 /** By how much the cheapest parting that breaks the block is dearer than the cheapest that keeps it, at the worst place to go on from. */
-function leastMargin({ forth, into }: Search, block: Block, sequence: readonly Seen[], reach: number): number {
+function leastMargin({ forth, into }: Search, block: Block, reach: number): number {
   const [from, to] = [block.leaves[0]!, block.leaves.at(-1)! + 1]
-  const known = block.leaves.filter((at) => sequence[at] !== null).join()
-  const key = block.kind === 'tangle' ? `tangle ${known}` : known
-  const breaks = (option: Option): boolean => option.from < to && option.to > from && option.key !== key && option.key !== ''
+  const breaks = (option: Option): boolean => option.from < to && option.to > from && option.key !== block.key && option.key !== ''
   const kept = forth.map((cost, at) => (at <= from ? cost : Infinity))
   const broken = new Float64Array(forth.length).fill(Infinity)
   for (let at = from + 1; at < forth.length; at++) {

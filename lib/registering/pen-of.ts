@@ -1,6 +1,7 @@
 import type { GreyPicture } from '@/lib/core/grey-picture'
 import type { PenTrace } from '@/lib/core/leaf'
 import type { Homography } from '@/lib/core/paper-space'
+import { HandCounter } from './hand-counter'
 import type { Template } from './template'
 
 const dark = 165
@@ -16,6 +17,8 @@ const fewest = 300
 export function penOf(leaf: GreyPicture, template: Template, [[a, b, c], [d, e, f], [g, h, i]]: Homography): PenTrace | null {
   const { width, height } = template.white
   const cores = new Uint32Array(256)
+  const hand = new HandCounter()
+  const line = new Uint8Array(width).fill(255)
   let [dots, crossings, strokes] = [0, 0, 0]
   for (let y = margin; y < height - margin; y++) {
     let before = 255
@@ -26,6 +29,7 @@ export function penOf(leaf: GreyPicture, template: Template, [[a, b, c], [d, e, 
       const v = ((d * x + e * y + f) / w) | 0
       const free = template.clear[y * width + x] === 1 && u >= 0 && v >= 0 && u < leaf.width && v < leaf.height
       const value = free ? leaf.data[v * leaf.width + u]! : 255
+      line[x] = value
       if (value < dark) {
         dots++
         darkest = Math.min(darkest, value)
@@ -37,10 +41,11 @@ export function penOf(leaf: GreyPicture, template: Template, [[a, b, c], [d, e, 
       }
       before = value
     }
+    hand.add(line, y)
   }
   if (strokes < fewest) return null
   let left = strokes / 2
   let core = 0
   while (core < 255 && (left -= cores[core]!) > 0) core++
-  return { core, width: dots / crossings }
+  return { core, width: dots / crossings, ...hand.result() }
 }

@@ -18,7 +18,7 @@ const reasonWords: Record<LeafReason, Words> = {
   page_missing: { loose: (missing) => (missing.length > 0 ? `${listed(missing)} of its script ${missing.length > 1 ? 'are' : 'is'} missing` : 'a page of its script is missing'), placed: null },
   order_unclear: { loose: () => 'the sheets around it can be put together in more than one way', placed: null },
   pages_swapped: { loose: () => 'the pages lie in another order than the paper', placed: () => 'pages lay in another order' },
-  interleaved: 'its script lay page by page between another one, and the writing tells them apart',
+  interleaved: { loose: () => 'its script lies page by page between another one', placed: () => 'lay between another script, told by the writing' },
   code_disagrees: { loose: () => 'its code is that of another page than its print shows', placed: null },
   code_unknown: { loose: () => 'its code was not printed for this paper here', placed: null },
   re_scan: { loose: () => 'it is a new scan of a page that lay here before', placed: (page) => `${page} scanned again later` },

@@ -28,8 +28,10 @@ const reasonWords: Record<LeafReason, Words> = {
 }
 
 /** Why a sheet was left loose, as one sentence without a full stop. */
-export function whyLoose({ reasons, problem, missing }: Pick<LooseLeaf, 'reasons' | 'problem' | 'missing'>): string {
-  if (problem === 'page_too_large') return 'its picture is too large to read'
+export function whyLoose({ reasons, problem, missing, number }: Pick<LooseLeaf, 'reasons' | 'problem' | 'missing' | 'number'>): string {
+  if (problem === 'page_too_large') return `the picture of page ${number} of the file is too large to read: scan that sheet again at 300 dpi or less`
+  if (problem === 'page_incomplete') return `a part of page ${number} of the file is missing: scan that sheet again`
+  if (problem) return `page ${number} of the file cannot be read: scan that sheet again`
   if (reasons.length === 0) return 'it was put on the table by hand'
   return reasons.map((reason) => reasonWords[reason].loose(missing)).join('; ')
 }

@@ -48,8 +48,9 @@ describe('what the table says', () => {
   })
 
   it('puts reasons into words', () => {
-    expect(whyLoose({ reasons: ['unlike_paper'], problem: null, missing: [] })).toBe('it does not look like this paper')
-    expect(whyLoose({ reasons: ['order_unclear', 'page_missing'], problem: null, missing: [2, 3, 4] })).toBe('the sheets around it can be put together in more than one way; pages 2, 3 and 4 of its script are missing')
+    expect(whyLoose({ reasons: ['unlike_paper'], problem: null, missing: [], number: 3 })).toBe('it does not look like this paper')
+    expect(whyLoose({ reasons: ['unreadable'], problem: 'page_incomplete', missing: [], number: 7 })).toBe('a part of page 7 of the file is missing: scan that sheet again')
+    expect(whyLoose({ reasons: ['order_unclear', 'page_missing'], problem: null, missing: [2, 3, 4], number: 3 })).toBe('the sheets around it can be put together in more than one way; pages 2, 3 and 4 of its script are missing')
     expect(sayLeaf({ number: 3, half: 1 })).toBe('right half of sheet 3')
   })
 

@@ -47,6 +47,8 @@ export const errorStatus = {
   too_many_pages: 422,
   file_same: 409,
   page_unreadable: 422,
+  page_too_large: 422,
+  page_incomplete: 422,
   file_locked: 422,
   code_place_bad: 422,
   code_place_missing: 409,

@@ -17,8 +17,8 @@ export type PageImage = Readonly<{
   shownTurn: Turn
 }>
 
-/** What keeps a leaf from being read at all. */
-export type LeafProblem = 'page_unreadable' | 'page_too_large' | 'page_empty'
+/** What keeps a leaf from being read at all; `page_incomplete`: a part of its picture is missing in the file. */
+export type LeafProblem = 'page_unreadable' | 'page_too_large' | 'page_incomplete' | 'page_empty'
 
 /** A page of the blank paper that a leaf may be, with how the leaf lies on it. `confidence` runs from 0 to 1, alike for grey, colour and 1-bit scans. */
 export type PageGuess = Readonly<{ paperPage: number; rotation: Turn; homography: Homography; confidence: number }>

@@ -33,7 +33,7 @@ export function liftImage(source: PageSource): LiftedImage | 'too_large' | null 
   const { dpiX, dpiY, shownTurn } = frame
   // a speck stretched over a page is no scan of it
   if (dpiX < leastDpi || dpiY < leastDpi) return null
-  return { image: { encoding: coded.encoding, width: coded.width, height: coded.height, dpiX, dpiY, shownTurn }, bytes: coded.bytes, inverted: coded.inverted }
+  return { image: { encoding: coded.encoding, width: coded.width, height: coded.height, dpiX, dpiY, shownTurn }, bytes: coded.bytes, inverted: coded.inverted, broken: stream.broken }
 }
 
 function codedImage(pdf: PdfFile, stream: PdfStream, width: number, height: number, coloured: boolean): Coded | null {

@@ -6,15 +6,15 @@ import { pageSource, type PageSource } from './page-source'
 import { listPages, type PageEntry } from './page-tree'
 import { FileWindow } from './pdf/file-window'
 import { PdfFile, isFault } from './pdf/pdf-file'
-import { TooLarge } from './pdf/value'
-import { mostPages, type SheafPage } from './sheaf-page'
+import { Incomplete, TooLarge } from './pdf/value'
+import { mostPages, pageError, type SheafPage } from './sheaf-page'
 
 /** A sheaf whose pages can be taken out one after the other, read from its file as they are asked for. `index` counts from 0. Close it after use. */
 export type OpenSheaf = Readonly<{
   pageCount: number
   /** Never throws for what is wrong with a page. */
   page: (index: number) => SheafPage
-  /** The page as a PDF of its own, in pieces, for drawing, and the points of its unit. Throws page_unreadable. */
+  /** The page as a PDF of its own, in pieces, for drawing, and the points of its unit. Throws page_unreadable, page_too_large, page_incomplete. */
   alone: (index: number) => Readonly<{ parts: readonly Uint8Array[]; unit: number }>
   close: () => void
 }>
@@ -66,7 +66,7 @@ function aloneOf(source: (index: number) => PageSource | null, index: number): R
     if (found) return { parts: pageAlone(found), unit: found.box.unit ?? 1 }
   } catch (error) {
     if (!isFault(error)) throw error
-    throw new AppError('page_unreadable', { page: index + 1, too_large: error instanceof TooLarge })
+    throw pageError(error instanceof TooLarge ? 'page_too_large' : error instanceof Incomplete ? 'page_incomplete' : 'page_unreadable', index)
   }
-  throw new AppError('page_unreadable', { page: index + 1, too_large: false })
+  throw pageError('page_unreadable', index)
 }

@@ -3,7 +3,7 @@ import { imagePixels } from './image-pixels'
 import { contentOf, type PageSource } from './page-source'
 import { decodeFilters, pictureFilters } from './pdf/decode-filters'
 import type { PdfFile } from './pdf/pdf-file'
-import { PdfRef, PdfStream, TooLarge, isDict, isList, type PdfDict, type PdfValue } from './pdf/value'
+import { Incomplete, PdfRef, PdfStream, TooLarge, isDict, isList, type PdfDict, type PdfValue } from './pdf/value'
 import { writePdf, writeValue } from './pdf/write-pdf'
 import { mostPixels } from './sheaf-page'
 
@@ -13,13 +13,15 @@ const mostDecoded = 64 << 20
 /** Operators run, pictures counted by their pixels, through all forms. A page of 600 dpi strips costs half a million. */
 const mostWork = 20_000_000
 const pixelsAnOperator = 100
+const mostTiles = 1_000_000
 const leftOut = new Set(['Metadata', 'PieceInfo', 'StructParent', 'StructParents', 'AF', 'OPI', 'Parent', 'LastModified', 'Alternates'])
 const coding = new Set(['Filter', 'F', 'DecodeParms', 'DP', 'Length', 'DL', 'FFilter', 'FDecodeParms'])
 const resourceKinds = new Set(['XObject', 'Font', 'Pattern', 'ColorSpace', 'ExtGState', 'Shading', 'Properties'])
 
 /**
  * One page as a PDF of its own, in pieces: what its content draws and nothing else of the sheaf (no scripts, notes or attachments).
- * Its box is the shown one. Throws TooLarge when drawing it would take more than a page may, Malformed when its content cannot be read.
+ * Its box is the shown one. Throws TooLarge when drawing it would take more than a page may, Incomplete where the file ends within
+ * what it draws, Malformed when its content cannot be read.
  */
 export function pageAlone(source: PageSource): Uint8Array[] {
   return new PageCopier(source).copy()
@@ -132,7 +134,9 @@ class PageCopier {
   private stream(stream: PdfStream): Uint8Array[] {
     const { dict } = stream
     const isImage = dict.get('Subtype') === 'Image'
+    if (stream.broken) throw new Incomplete('stream')
     if (isImage) this.pixelsOf(stream)
+    if (dict.has('PatternType') && this.tiles(dict) > mostTiles) throw new TooLarge('tiles')
     const { bytes, filter } = isImage ? this.picture(stream) : { bytes: this.decoded(stream), filter: [] }
     const kept = [...dict].filter(([key]) => !leftOut.has(key) && !coding.has(key) && key !== 'Resources')
     const own = this.pdf.dict(dict.get('Resources'))
@@ -143,6 +147,14 @@ class PageCopier {
       entries.push(['Resources', this.copied(dict.has('CharProcs') ? own : this.used(own, names))])
     }
     return [writeValue(new Map(entries)), streamWord, bytes, endWord]
+  }
+
+  /** How often a pattern may have to be laid to cover the page. */
+  private tiles(pattern: PdfDict): number {
+    const [a = 1, b = 0, c = 0, d = 1] = this.pdf.list(pattern.get('Matrix')).map((value) => this.pdf.number(value) ?? 0)
+    const step = ['XStep', 'YStep'].map((key) => this.pdf.number(pattern.get(key)) ?? 1)
+    const { width, height } = this.source.box
+    return (width * height) / Math.max(1e-9, Math.abs(step[0]! * step[1]! * (a * d - b * c)))
   }
 
   /** An image's bytes as they are coded, without general filters around a picture's own. */

@@ -1,7 +1,7 @@
 import type { Turn } from '@/lib/core/paper-space'
 import type { PageEntry } from './page-tree'
 import type { PdfFile } from './pdf/pdf-file'
-import { PdfStream, TooLarge, type PdfDict, type PdfValue } from './pdf/value'
+import { Incomplete, PdfStream, TooLarge, type PdfDict, type PdfValue } from './pdf/value'
 import type { PageBox } from './stored-frame'
 
 /** A page with all that it draws and where. */
@@ -19,7 +19,7 @@ export function pageSource(pdf: PdfFile, { page, inherited }: PageEntry): PageSo
   return { pdf, dict, resources: pdf.dict(dict.get('Resources')) ?? new Map(), box: boxOf(pdf, dict) }
 }
 
-/** A page's content, all its parts in one. Throws TooLarge, Malformed. */
+/** A page's content, all its parts in one. Throws TooLarge, Incomplete, Malformed. */
 export function contentOf({ pdf, dict }: PageSource): Uint8Array {
   const contents = pdf.get(dict.get('Contents'))
   const parts: Uint8Array[] = []
@@ -27,6 +27,7 @@ export function contentOf({ pdf, dict }: PageSource): Uint8Array {
   for (const part of contents instanceof PdfStream ? [contents] : pdf.list(contents)) {
     const stream = pdf.get(part)
     if (!(stream instanceof PdfStream)) continue
+    if (stream.broken) throw new Incomplete('content')
     const bytes = pdf.decoded(stream, mostContent)
     size += bytes.length
     if (size > mostContent) throw new TooLarge('content')

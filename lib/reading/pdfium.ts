@@ -17,6 +17,7 @@ type Calls = {
   _FPDFPageObj_GetMatrix(object: number, matrix: number): number
   _FPDFFormObj_CountObjects(form: number): number
   _FPDFFormObj_GetObject(form: number, index: number): number
+  _FPDFImageObj_GetBitmap(object: number): number
   _FPDFImageObj_GetImagePixelSize(object: number, width: number, height: number): number
   _FPDFBitmap_CreateEx(width: number, height: number, format: number, first: number, stride: number): number
   _FPDFBitmap_FillRect(bitmap: number, left: number, top: number, width: number, height: number, colour: number): void

@@ -41,16 +41,31 @@ export function frameOf(engine: Pdfium, page: number, box: PageBox): Readonly<{ 
 
 function imagesOn(engine: Pdfium, page: number): PlacedImage[] {
   const found: PlacedImage[] = []
+  eachImage(engine, page, (object, matrix) => found.push({ matrix, ...pixelSize(engine, object) }))
+  return found
+}
+
+/** Whether each image of a page can be decoded: one that cannot leaves its place white. */
+export function everyImageDecodes(engine: Pdfium, page: number): boolean {
+  let all = true
+  eachImage(engine, page, (object) => {
+    const bitmap = engine._FPDFImageObj_GetBitmap(object)
+    if (bitmap) engine._FPDFBitmap_Destroy(bitmap)
+    else all = false
+  })
+  return all
+}
+
+function eachImage(engine: Pdfium, page: number, work: (object: number, matrix: Affine) => void): void {
   const look = (object: number, outer: Affine, depth: number): void => {
     const type = engine._FPDFPageObj_GetType(object)
     if (type !== imageObject && type !== formObject) return
     const own = withFloats(engine, [...identity], (at, read) => (engine._FPDFPageObj_GetMatrix(object, at) ? (read() as unknown as Affine) : identity))
     const matrix = chain(own, outer)
-    if (type === imageObject) found.push({ matrix, ...pixelSize(engine, object) })
+    if (type === imageObject) work(object, matrix)
     else if (depth < 5) for (let k = 0; k < Math.min(engine._FPDFFormObj_CountObjects(object), 500); k++) look(engine._FPDFFormObj_GetObject(object, k), matrix, depth + 1)
   }
   for (let k = 0; k < Math.min(engine._FPDFPage_CountObjects(page), 2000); k++) look(engine._FPDFPage_GetObject(page, k), identity, 0)
-  return found
 }
 
 function pixelSize(engine: Pdfium, object: number): { width: number; height: number } {

@@ -52,7 +52,7 @@ async function readLeaf(job: LeafJob): Promise<LeafAnswer> {
     return { readings: [], onto: template ? registerPartToPage(cv, image, picture, template, onto.part) : null }
   } catch (error) {
     if (!(error instanceof AppError)) throw error
-    return { readings: [unread(index, error.detail['too_large'] ? 'page_too_large' : 'page_unreadable')], onto: null }
+    return { readings: [unread(index, error.code === 'page_too_large' || error.code === 'page_incomplete' ? error.code : 'page_unreadable')], onto: null }
   }
 }
 

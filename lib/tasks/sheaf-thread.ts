@@ -1,6 +1,7 @@
 import sharp from 'sharp'
 import { AppError, type ErrorCode, type ErrorDetail } from '@/lib/core/errors'
 import { drawStoredPage, sharpOf } from '@/lib/reading/decode-page'
+import { pageError } from '@/lib/reading/sheaf-page'
 import { openSheaf, type OpenSheaf } from '@/lib/reading/open-sheaf'
 import { wrapScan } from '@/lib/reading/pictures/wrap-scan'
 
@@ -33,7 +34,7 @@ async function pictureOf(sheaf: OpenSheaf, index: number): Promise<Uint8Array> {
   const page = sheaf.page(index)
   if (page.image !== null && page.image.encoding === 'jpeg' && !page.inverted) return page.bytes
   if (page.image) return sharpOf(page).png({ compressionLevel: 3 }).toBuffer()
-  if (page.problem !== 'must_render') throw new AppError('page_unreadable', { page: index + 1, too_large: page.problem === 'page_too_large' })
+  if (page.problem !== 'must_render') throw pageError(page.problem, index)
   const { picture } = await drawStoredPage(sheaf, index, 3)
   return sharp(picture.data, { raw: { width: picture.width, height: picture.height, channels: 3 } }).png({ compressionLevel: 3 }).toBuffer()
 }

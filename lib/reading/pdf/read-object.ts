@@ -60,7 +60,7 @@ function streamOf(file: FileWindow, dict: PdfDict, number: number, generation: n
   if (typeof length === 'number' && length >= 0 && at + length <= file.size && endsAt(file, at + length)) return new PdfStream(dict, number, generation, at, Math.floor(length))
   // the length said is wrong or lost: up to the word that ends it, or what is left of the file
   const end = file.find('endstream', at)
-  return new PdfStream(dict, number, generation, at, (end < 0 ? file.size : withoutLineEnd(file, end)) - at)
+  return new PdfStream(dict, number, generation, at, (end < 0 ? file.size : withoutLineEnd(file, end)) - at, end < 0)
 }
 
 function endsAt(file: FileWindow, at: number): boolean {

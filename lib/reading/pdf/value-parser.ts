@@ -6,6 +6,7 @@ const ends = new Uint8Array(spaces)
 for (const c of '()<>[]{}/%') ends[c.charCodeAt(0)] = 1
 
 const deepest = 60
+const longestString = 1 << 20
 const [slash, open, close, less, more, left, right, percent, backslash] = [...'/()<>[]%\\'].map((c) => c.charCodeAt(0)) as [number, number, number, number, number, number, number, number, number]
 
 /** The bytes at hand ended in the middle of a value: with more of the file at hand it may be read. */
@@ -145,6 +146,7 @@ export class ValueParser {
     for (this.at++; ; this.at++) {
       const c = this.bytes[this.at]
       if (c === undefined) throw new RanOut()
+      if (out.length > longestString) throw new Malformed('string too long')
       if (c === backslash) this.escape(out)
       else if (c === close && --depth === 0) break
       else {

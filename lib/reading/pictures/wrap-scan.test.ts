@@ -117,7 +117,7 @@ describe('a TIFF', () => {
     const { data, width, height } = pictures.g4
     const page = { width, height, strips: [data], blackIsZero: true }
     const file = await wrapped(tiffOf([page, { ...page, width: 400_000, height: 400_000 }, page]))
-    await expect(sheetOf(file, 1)).rejects.toMatchObject({ code: 'page_unreadable', detail: { page: 2, too_large: true } })
+    await expect(sheetOf(file, 1)).rejects.toMatchObject({ code: 'page_too_large', detail: { page: 2 } })
     expect((await sheetOf(file, 2)).pages).toBe(3)
   })
 })

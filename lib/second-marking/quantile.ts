@@ -3,13 +3,13 @@ import { betaShare } from './beta-share'
 /** Where a share between 0 and 1 that only grows reaches `share`: by the chord, the end that stays weighing half as much each time it stays, and by halving where that is slow. */
 function reached(share: number, shareAt: (x: number) => number): number {
   let [low, high, under, over] = [0, 1, -share, 1 - share]
-  for (let k = 0; k < 200 && high - low > 1e-15 * high; k++) {
+  for (let k = 0; k < 200 && high - low > 1e-14 * high; k++) {
     const middle = k % 4 === 3 ? (low + high) / 2 : (low * over - high * under) / (over - under)
     const off = shareAt(middle) - share
     if (off === 0) return middle
     if (off < 0) [low, under, over] = [middle, off, over / 2]
     else [high, over, under] = [middle, off, under / 2]
-    if (Math.abs(off) < 1e-15) return middle
+    if (Math.abs(off) < 1e-14) return middle
   }
   return (low + high) / 2
 }

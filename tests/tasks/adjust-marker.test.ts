@@ -1,10 +1,12 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import { db } from '@/db/knex'
 import { listAdjustments } from '@/db/scripts-to-return'
+import { scriptResult } from '@/lib/handing-back/script-result'
 import { adjustMarker } from '@/lib/tasks/adjust-marker'
 import { closeSample } from '@/lib/tasks/close-sample'
 import { decideMarking } from '@/lib/tasks/decide-marking'
 import { drawSample } from '@/lib/tasks/draw-sample'
+import { gatheredScript, gatherClassSet } from '@/lib/tasks/gather-class-set'
 import { readAdjustment } from '@/lib/tasks/read-adjustment'
 import { readMarkBook } from '@/lib/tasks/read-mark-book'
 import { readSecondMarking } from '@/lib/tasks/read-second-marking'
@@ -77,6 +79,8 @@ describe('one adjustment for a marker', () => {
     const printed = await listAdjustments(db(), made.classSetId)
     expect(printed).toHaveLength(10)
     expect(printed[0]!.reason).toMatch(/^raised by 1 mark after second marking, \d+ \w+ \d{4}$/)
+    const script = gatheredScript(await gatherClassSet(db(), made.classSetId), made.scriptIds[18]!)!
+    expect(scriptResult(script).detail.adjustments).toEqual([{ says: `Question 2: ${printed[0]!.reason}`, by: 1 }])
     expect((await readSecondMarking(made.teacher, made.paperId)).samples[0]!.undecided).toBe(0)
     const [kept] = (await readSecondMarking(made.teacher, made.paperId)).samples[0]!.adjustments
     expect(kept).toMatchObject({ id: adjustmentId, halves: 2, answers: 10, pairs: 10, markerId: made.severe.userId, undone: null })

@@ -1,7 +1,8 @@
 import type { GreyPicture } from '@/lib/core/grey-picture'
-import { compose, toPixels, type Homography } from '@/lib/core/paper-space'
+import { compose, toPixels, type Homography, type PixelPoint } from '@/lib/core/paper-space'
 import { fitAffine, type Pair } from './fit-affine'
 import { withMats, type Cv } from './opencv'
+import { steadyFit } from './steady-fit'
 import type { Template } from './template'
 import { follow } from './track'
 
@@ -19,8 +20,15 @@ export function fineFit(cv: Cv, leaf: GreyPicture, half: GreyPicture, template: 
   const rough = follow(half, template.tracks50, halved(near), furthest)
   const [a, b, c, d, e, f] = fitAffine(rough, 0.7)
   const nearer = compose(near, [[a, c, e * 2], [b, d, f * 2], [0, 0, 1]])
-  const map = homography(cv, follow(leaf, template.tracks, nearer, furthest), nearer)
-  return map && plausible(map, near) ? map : null
+  const followed = follow(leaf, template.tracks, nearer, furthest).map((pair) => ({ ...pair, ...onLeaf(nearer, pair) }))
+  const agreed = agreeing(cv, followed)
+  const map = agreed.length < fewest ? null : steadyFit(agreed)
+  return map && plausible(map, agreed) ? map : null
+}
+
+function onLeaf(near: Homography, { u, v }: Pair): { u: number; v: number } {
+  const at = toPixels(near, { x: u, y: v })
+  return { u: at.x, v: at.y }
 }
 
 /** The same map between pictures of half the density. */
@@ -28,22 +36,22 @@ function halved([[a, b, c], [d, e, f]]: Homography): Homography {
   return [[a, b, c / 2], [d, e, f / 2], [0, 0, 1]]
 }
 
-function homography(cv: Cv, pairs: readonly Pair[], near: Homography): Homography | null {
-  if (pairs.length < fewest) return null
+/** The pairs that lie on one common map. */
+function agreeing(cv: Cv, pairs: readonly Pair[]): Pair[] {
+  if (pairs.length < fewest) return []
   return withMats(cv, (keep) => {
     const from = keep(cv.matFromArray(pairs.length, 1, cv.CV_32FC2, pairs.flatMap(({ x, y }) => [x, y])))
-    const to = keep(cv.matFromArray(pairs.length, 1, cv.CV_32FC2, pairs.flatMap(({ u, v }) => Object.values(toPixels(near, { x: u, y: v })))))
-    const h = keep(cv.findHomography(from, to, cv.RANSAC, ransacPixels, keep(new cv.Mat()), 1000, 0.995))
-    if (h.rows !== 3) return null
-    const row = (k: number) => [h.data64F[k]!, h.data64F[k + 1]!, h.data64F[k + 2]!] as const
-    return [row(0), row(3), row(6)]
+    const to = keep(cv.matFromArray(pairs.length, 1, cv.CV_32FC2, pairs.flatMap(({ u, v }) => [u, v])))
+    const inside = keep(new cv.Mat())
+    const h = keep(cv.findHomography(from, to, cv.RANSAC, ransacPixels, inside, 1000, 0.995))
+    return h.rows === 3 ? pairs.filter((_, k) => inside.data[k]! > 0) : []
   })
 }
 
-/** A scan turns, shifts and stretches a little; it neither folds nor runs off. */
-function plausible(map: Homography, near: Homography): boolean {
-  return [[0, 0], [800, 0], [0, 1100], [800, 1100]].every(([x, y]) => {
-    const [p, q] = [toPixels(map, { x: x!, y: y! }), toPixels(near, { x: x!, y: y! })]
-    return Math.hypot(p.x - q.x, p.y - q.y) < 40
-  })
+/** A scan turns, shifts and stretches a little; it neither folds nor runs off, and the print that agrees lies on it. */
+function plausible(map: Homography, agreed: readonly Pair[]): boolean {
+  const [o, right, down] = [{ x: 0, y: 0 }, { x: 800, y: 0 }, { x: 0, y: 800 }].map((at) => toPixels(map, at)) as [PixelPoint, PixelPoint, PixelPoint]
+  const lengths = [right, down].map((end) => Math.hypot(end.x - o.x, end.y - o.y) / 800)
+  const off = agreed.map(({ x, y, u, v }) => Math.hypot(toPixels(map, { x, y }).x - u, toPixels(map, { x, y }).y - v)).sort((p, q) => p - q)
+  return lengths.every((length) => length > 0.85 && length < 1.15) && off[off.length >> 1]! < ransacPixels
 }

@@ -5,10 +5,12 @@ import { widthOf, type FontRole } from './text-widths'
 /** One step of a path, in paper points: move, straight line, cubic curve, close. Arcs and quadratics never reach a painter. */
 export type Step = readonly ['M', number, number] | readonly ['L', number, number] | readonly ['C', number, number, number, number, number, number] | readonly ['Z']
 
+/** Where a path is one of the design's outlines, which one and where its origin lies: a painter may keep it and lay it again. */
+type Outline = Readonly<{ data: string; at: PaperPoint }>
 /** A shape filled with the pen's colour by the nonzero rule, without a line round it. */
-export type FilledInk = Readonly<{ kind: 'filled'; path: readonly Step[] }>
+export type FilledInk = Readonly<{ kind: 'filled'; path: readonly Step[]; shape?: Outline }>
 /** An open line of `width` points. `dash` is drawn, left out; caps are round, on a broken line butt. */
-export type LineInk = Readonly<{ kind: 'line'; path: readonly Step[]; width: number; dash: readonly [number, number] | null }>
+export type LineInk = Readonly<{ kind: 'line'; path: readonly Step[]; width: number; dash: readonly [number, number] | null; shape?: Outline }>
 /** One line of type. `at` lies on the baseline; `size` and `spacing` (between letters) are points. */
 export type TextInk = Readonly<{ kind: 'text'; text: string; at: PaperPoint; font: FontRole; size: number; spacing: number; anchor: 'start' | 'middle' | 'end' }>
 /** What a painter draws, all in one pen's colour: canvas and PDF know nothing else about a stamp's shape. */
@@ -31,7 +33,12 @@ export function pathData(path: readonly Step[]): string {
 }
 
 export function filled(data: string, at: PaperPoint): FilledInk {
-  return { kind: 'filled', path: stepsOf(data, at) }
+  return { kind: 'filled', shape: { data, at }, get path() { return stepsOf(data, at) } }
+}
+
+/** A line along an outline of the design. */
+export function outline(data: string, at: PaperPoint, width: number, dash: LineInk['dash'] = null): LineInk {
+  return { kind: 'line', width, dash, shape: { data, at }, get path() { return stepsOf(data, at) } }
 }
 
 export function line(path: readonly Step[], width = 1.5, dash: LineInk['dash'] = null): LineInk {

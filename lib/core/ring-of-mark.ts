@@ -1,4 +1,4 @@
-import { line, stepsOf, text, type Ink } from './ink'
+import { line, outline, text, type Ink } from './ink'
 import { sayMark, type HalfMarks } from './marks'
 import type { PaperPoint, PaperRect } from './paper-space'
 import type { Pen } from './stamp'
@@ -15,8 +15,8 @@ const overrun = 4
  * broken one, agreed a double one.
  */
 export function ringOfMark(mark: HalfMarks, pen: Pen, at: PaperPoint): readonly Ink[] {
-  const ring = line(stepsOf(markRingShape, at), ringLine, pen === 'second' ? [6, 3.4] : null)
-  const around = pen === 'agreed' ? [line(stepsOf(markRingAroundShape, at), ringLine)] : []
+  const ring = outline(markRingShape, at, ringLine, pen === 'second' ? [6, 3.4] : null)
+  const around = pen === 'agreed' ? [outline(markRingAroundShape, at, ringLine)] : []
   const long = sayMark(mark).length >= 3
   return [ring, ...around, ...figureWithHalf(mark, { x: at.x + 22, y: at.y + (long ? 20 : 21) }, long ? 14 : 17)]
 }

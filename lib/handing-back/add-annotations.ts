@@ -2,8 +2,7 @@ import { PDFHexString, PDFName, PDFString, type PDFDict, type PDFDocument, type 
 import { boundsOf, penColour, pointsOn, type Ink } from '@/lib/core/ink'
 import { corners, toPixels, type Homography } from '@/lib/core/paper-space'
 import { num, packedForm } from '@/lib/typesetting/operators'
-import { paintInk, type Drawing, type Drawn } from './paint-ink'
-import type { Typesetter } from '@/lib/typesetting/typesetter'
+import { paintInk, type Drawing, type Drawn, type Painting } from './paint-ink'
 
 /** Who put a drawing on the page, and when. */
 export type Signing = (of: Drawn) => Readonly<{ author: string; at: Date }>
@@ -24,22 +23,22 @@ const standing: Partial<Record<Drawn['kind'], string>> = { seen: 'seen', 'nothin
  * date. The pictures are drawn in the page's user space by the one painter of ink, so they lie exactly where drawn marking lies.
  * `toPage` takes paper points to user space.
  */
-export function addAnnotations(pdf: PDFDocument, page: PDFPage, drawings: readonly Drawing[], toPage: Homography, type: Typesetter, signing: Signing): void {
-  const fonts = pdf.context.nextRef()
+export function addAnnotations(pdf: PDFDocument, page: PDFPage, drawings: readonly Drawing[], toPage: Homography, painting: Painting, signing: Signing): void {
+  const resources = pdf.context.nextRef()
   const annotations = drawings.flatMap(({ of, ...drawing }) => {
     const box = of && boxOf(drawing.inks, toPage)
-    return box ? [annotation(pdf, page, { of, ...drawing }, { box, fonts, toPage, type, signing })] : []
+    return box ? [annotation(pdf, page, { of, ...drawing }, { box, resources, toPage, painting, signing })] : []
   })
-  pdf.context.assign(fonts, type.resources())
+  pdf.context.assign(resources, pdf.context.obj({ Font: painting.type.resources(), XObject: painting.shapes.resources() }))
   page.node.set(PDFName.of('Annots'), pdf.context.obj(annotations))
 }
 
-type Laid = Readonly<{ box: Box; fonts: PDFRef; toPage: Homography; type: Typesetter; signing: Signing }>
+type Laid = Readonly<{ box: Box; resources: PDFRef; toPage: Homography; painting: Painting; signing: Signing }>
 
-function annotation({ context }: PDFDocument, page: PDFPage, { of, ...drawing }: Drawing & { of: Drawn }, { box, fonts, toPage, type, signing }: Laid): PDFRef {
+function annotation({ context }: PDFDocument, page: PDFPage, { of, ...drawing }: Drawing & { of: Drawn }, { box, resources, toPage, painting, signing }: Laid): PDFRef {
   const { author, at } = signing(of)
   const subtype = subtypeOf(of)
-  const look = packedForm(context, paintInk([drawing], toPage, type), box, fonts)
+  const look = packedForm(context, paintInk([drawing], toPage, painting), box, resources)
   const dict: PDFDict = context.obj({
     Type: 'Annot', Subtype: subtype, Rect: [...box], P: page.ref, F: printed, NM: PDFHexString.fromText(of.id), T: PDFHexString.fromText(author),
     Subj: PDFHexString.fromText(of.label === null ? 'Page' : `Question ${of.label}`), Contents: PDFHexString.fromText(subtype === 'FreeText' ? of.text || standing[of.kind] || of.says : of.says),

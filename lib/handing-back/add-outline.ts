@@ -1,4 +1,5 @@
-import { PDFHexString, PDFName, type PDFDict, type PDFDocument, type PDFRef } from 'pdf-lib'
+import { PDFName, type PDFDict, type PDFDocument, type PDFRef } from 'pdf-lib'
+import { textString } from '@/lib/typesetting/operators'
 
 /** A bookmark: where it leads is the page's top. */
 export type Bookmark = Readonly<{ says: string; page: PDFRef }>
@@ -9,7 +10,7 @@ export function addOutline({ context, catalog }: PDFDocument, bookmarks: readonl
   const root = context.nextRef()
   const refs = bookmarks.map(() => context.nextRef())
   bookmarks.forEach(({ says, page }, k) => {
-    const item: PDFDict = context.obj({ Title: PDFHexString.fromText(says), Parent: root, Dest: [page, 'Fit'] })
+    const item: PDFDict = context.obj({ Title: textString(says), Parent: root, Dest: [page, 'Fit'] })
     const [before, after] = [refs[k - 1], refs[k + 1]]
     if (before) item.set(PDFName.of('Prev'), before)
     if (after) item.set(PDFName.of('Next'), after)

@@ -1,17 +1,14 @@
-import type { PDFDocument } from 'pdf-lib'
 import { sayMark } from '@/lib/core/marks'
 import { ringOfMark } from '@/lib/core/ring-of-mark'
-import { ink, sheetSize, type Sheet, type Style } from './sheet'
-import type { Structure } from './structure'
+import { ink, sheetSize, type Sheet, type SheetFile, type Style } from './sheet'
 import type { Summary } from './summary'
 import { drawColumns } from './draw-columns'
 import { SummarySheets, frame, leading, small, soft } from './summary-sheets'
 import { drawTable } from './draw-table'
-import type { Typesetter } from '@/lib/typesetting/typesetter'
 
 /** Draws the summary and returns how many sheets it took. `following` is how many pages of the script come after it. */
-export function addSummary(pdf: PDFDocument, summary: Summary, following: number, type: Typesetter, structure: Structure): number {
-  const sheets = new SummarySheets(pdf, type, structure)
+export function addSummary(file: SheetFile, summary: Summary, following: number): number {
+  const sheets = new SummarySheets(file)
   drawHead(sheets, summary)
   drawWho(sheets, summary)
   drawTable(sheets, summary)

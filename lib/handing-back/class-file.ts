@@ -2,6 +2,7 @@ import { PDFDocument, type PDFPage } from 'pdf-lib'
 import { addOutline, type Bookmark } from './add-outline'
 import { addScript, describe, type LoadedSheaves, type ScriptToReturn } from './returned-script'
 import type { ScriptPage } from './returned-page'
+import { Shapes } from './shapes'
 import { StreamedFile } from './streamed-file'
 import { Structure } from './structure'
 import { Typesetter } from '@/lib/typesetting/typesetter'
@@ -17,12 +18,13 @@ export async function* classFile(title: string, builtAt: Date, scripts: AsyncIte
   const pdf = await PDFDocument.create({ updateMetadata: false })
   describe(pdf, title, builtAt)
   const type = await Typesetter.for(pdf.context)
+  const shapes = new Shapes(pdf.context)
   const file = new StreamedFile(pdf)
   const bookmarks: Bookmark[] = []
   yield file.begin()
   for await (const { name, sheaves, ...script } of scripts) {
     const first = pdf.getPageCount()
-    addScript({ pdf, type, structure: new Structure(), signing: null }, sheaves, script)
+    addScript({ pdf, type, shapes, structure: new Structure(), signing: null }, sheaves, script)
     const added = pdf.getPageCount() - first
     if (added === 0) continue
     bookmarks.push({ says: name, page: pdf.getPage(first).ref })

@@ -4,6 +4,7 @@ import { halves } from '@/lib/core/marks'
 import { ringOfMark } from '@/lib/core/ring-of-mark'
 import { crossShape, tickAnchor } from '@/lib/core/stamp-shapes'
 import { ink, type Sheet, type Style } from './sheet'
+import type { Branch } from './structure'
 import type { Summary } from './summary'
 import { frame, leading, plain, type SummarySheets } from './summary-sheets'
 
@@ -83,16 +84,19 @@ function head({ structure }: SummarySheets, words: string): Block {
   }
 }
 
-/** Lines of a paragraph, one block each, with a number before the first where it is an item of a list. */
+/** Lines of a paragraph, one block each and one paragraph to a reader, with a number before the first where it is an item of a list. */
 function paragraph({ type, structure }: SummarySheets, words: string, number = ''): Block[] {
   const indent = number === '' ? 0 : 15
+  let element: Branch | null = null
   return type.lines(words, 'sans', plain.size, width - indent).map((line, k) => ({
     height: leading,
-    draw: (sheet, x, y) =>
-      structure.within('P', () => {
+    draw: (sheet, x, y) => {
+      element ??= structure.element('P')
+      structure.inside(element, () => {
         if (k === 0 && number !== '') sheet.line(number, x + indent - 4, y + 10.9, plain, 'end')
         sheet.line(line, x + indent, y + 10.9, plain)
-      }),
+      })
+    },
   }))
 }
 

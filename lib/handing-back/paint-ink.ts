@@ -3,7 +3,8 @@ import { penColour, type Ink, type LineInk, type TextInk } from '@/lib/core/ink'
 import { toPixels, type Homography, type PaperPoint } from '@/lib/core/paper-space'
 import type { Pen, StampKind } from '@/lib/core/stamp'
 import type { Face } from '@/lib/typesetting/font-files'
-import { actualText, colour, num } from '@/lib/typesetting/operators'
+import { actualText, colour, num, place } from '@/lib/typesetting/operators'
+import type { Shapes } from './shapes'
 import type { Typesetter } from '@/lib/typesetting/typesetter'
 
 /** What a drawing is, for a copy whose marking other programs list: a stamp by its id, a question's ring or a page's sum. */
@@ -13,19 +14,32 @@ export type Drawing = Readonly<{ pen: Pen; inks: readonly Ink[]; of?: Drawn }>
 
 const faceOf: Readonly<Record<FontRole, Face>> = { note: 'book-italic', code: 'sans-bold', worth: 'sans-bold', figure: 'sans-strong' }
 
+/** What ink is painted with: the type and the outlines of one file. */
+export type Painting = Readonly<{ type: Typesetter; shapes: Shapes }>
+
 /**
  * Drawings as PDF operators. `toPage` takes paper points to the page's user space; every point of a shape goes through it, type and line
  * widths follow it where they stand, so that a turned, skewed or /Rotate page needs nothing of its own.
  */
-export function paintInk(drawings: readonly Drawing[], toPage: Homography, type: Typesetter): string {
-  return drawings.map(({ pen, inks }) => `q ${colour(penColour[pen], 'both')} 1 j ${inks.map((ink) => paint(ink, toPage, type)).join('\n')} Q`).join('\n')
+export function paintInk(drawings: readonly Drawing[], toPage: Homography, { type, shapes }: Painting): string {
+  return drawings.map(({ pen, inks }) => `q ${colour(penColour[pen], 'both')} 1 j ${inks.map((ink) => paint(ink, toPage, type, shapes)).join('\n')} Q`).join('\n')
 }
 
-function paint(ink: Ink, toPage: Homography, type: Typesetter): string {
+function paint(ink: Ink, toPage: Homography, type: Typesetter, shapes: Shapes): string {
   if (ink.kind === 'text') return paintText(ink, toPage, type)
+  if (ink.shape) return `q ${laid(ink.shape.at, toPage).map(num4).join(' ')} cm /${shapes.nameOf(ink, ink.shape.data)} Do Q`
   const path = ink.path.map(([letter, ...numbers]) => step(letter, numbers, toPage)).join(' ')
   return ink.kind === 'filled' ? `${path} f` : `${lineState(ink, toPage)} ${path} S`
 }
+
+/** What lays something drawn about the origin, y down, at a point of the paper: over the size of a stamp a scan is as good as straight. */
+function laid(at: PaperPoint, toPage: Homography): number[] {
+  const { x, y } = toPixels(toPage, at)
+  return [...near(toPage, at), x, y]
+}
+
+/** A matrix turns and stretches: a thousandth would show over the width of a ring. */
+const num4 = (value: number): string => String(Math.round(value * 10_000) / 10_000 || 0)
 
 const operatorOf = { M: 'm', L: 'l', C: 'c', Z: 'h' } as const
 
@@ -33,7 +47,7 @@ function step(letter: keyof typeof operatorOf, numbers: readonly number[], toPag
   const mapped: string[] = []
   for (let k = 0; k + 1 < numbers.length; k += 2) {
     const { x, y } = toPixels(toPage, { x: numbers[k]!, y: numbers[k + 1]! })
-    mapped.push(num(x), num(y))
+    mapped.push(place(x), place(y))
   }
   return [...mapped, operatorOf[letter]].join(' ')
 }

@@ -8,6 +8,7 @@ import { packed } from '@/lib/typesetting/operators'
 import { pageContent } from './own-resources'
 import { paintInk, type Drawing } from './paint-ink'
 import { pageBox, pixelsToPage, type ImageSize } from './picture-place'
+import type { Shapes } from './shapes'
 import type { Structure } from './structure'
 import type { Typesetter } from '@/lib/typesetting/typesetter'
 
@@ -28,14 +29,14 @@ export type ScriptPage = Readonly<{
 }>
 
 /** A file that is being built: what all its pages share. With `signing` the marking lies over the pages as annotations and is not drawn into them. */
-export type FileInWork = Readonly<{ pdf: PDFDocument; type: Typesetter; structure: Structure; signing: Signing | null }>
+export type FileInWork = Readonly<{ pdf: PDFDocument; type: Typesetter; shapes: Shapes; structure: Structure; signing: Signing | null }>
 
 /**
  * Adds a page of a sheaf to a returned script: its own content and images untouched, byte for byte, the marking drawn over them, turned
  * so that the paper reads upright. Throws page_shared where the picture also shows another page, page_unreadable for content in a coding
  * that cannot be looked through.
  */
-export function addReturnedPage({ pdf, type, structure, signing }: FileInWork, source: PDFDocument, page: ScriptPage, copier: ObjectCopier): void {
+export function addReturnedPage({ pdf, type, shapes, structure, signing }: FileInWork, source: PDFDocument, page: ScriptPage, copier: ObjectCopier): void {
   if (page.half !== undefined) throw new AppError('page_shared', { page: page.index + 1 })
   const from = source.getPage(page.index)
   const content = readable(from, page.index)
@@ -44,10 +45,15 @@ export function addReturnedPage({ pdf, type, structure, signing }: FileInWork, s
   const resources = copier.copyResources(content, from.node.Resources())
   const toPage = page.homography && compose(pixelsToPage(from, content, page.image), page.homography)
   to.node.set(PDFName.of('Rotate'), PDFNumber.of(toPage ? uprightTurn(toPage) : from.getRotation().angle))
-  const ink = toPage && !signing ? paintInk(page.drawings, toPage, type) : ''
+  const ink = toPage && !signing ? paintInk(page.drawings, toPage, { type, shapes }) : ''
   structure.within('Figure', () => drawOver(pdf, to, from, copier, content, ink, structure), page.words)
-  if (toPage && signing) addAnnotations(pdf, to, page.drawings, toPage, type, signing)
-  resources.set(PDFName.of('Font'), withFonts(resources.lookup(PDFName.of('Font')), type.resources()))
+  if (toPage && signing) addAnnotations(pdf, to, page.drawings, toPage, { type, shapes }, signing)
+  for (const [kind, added] of [['Font', type.resources()], ['XObject', shapes.resources()]] as const) {
+    const own = resources.lookup(PDFName.of(kind))
+    // A name that stands for two things would show the wrong one: such a page is one of our own files that came in as a scan.
+    if (ink !== '' && own instanceof PDFDict && own.keys().some((name) => added.has(name))) throw new AppError('page_unreadable', { page: page.index + 1 })
+    resources.set(PDFName.of(kind), withOwn(own, added))
+  }
   to.node.set(PDFName.of('Resources'), resources)
 }
 
@@ -102,7 +108,7 @@ function balance(content: Uint8Array): { opened: number; missing: number } {
   return { opened: depth - lowest, missing: -lowest }
 }
 
-function withFonts(own: PDFObject | undefined, added: PDFDict): PDFDict {
+function withOwn(own: PDFObject | undefined, added: PDFDict): PDFDict {
   if (own instanceof PDFDict) for (const [name, value] of own.entries()) added.set(name, value)
   return added
 }

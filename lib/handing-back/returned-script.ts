@@ -4,6 +4,8 @@ import type { Signing } from './add-annotations'
 import { addOutline } from './add-outline'
 import { ObjectCopier } from './object-copier'
 import { addReturnedPage, type FileInWork, type ScriptPage } from './returned-page'
+import { Shapes } from './shapes'
+import { StreamedFile } from './streamed-file'
 import { Structure } from './structure'
 import type { Summary } from './summary'
 import { addSummary } from './add-summary'
@@ -37,17 +39,17 @@ export async function buildReturnedScript(sheaves: LoadedSheaves, { summary, tit
   describe(pdf, title ?? (summary ? `${summary.title}, ${summary.student}` : ''), builtAt)
   const type = await Typesetter.for(pdf.context)
   const structure = new Structure()
-  addScript({ pdf, type, structure, signing }, sheaves, { summary, pages })
+  addScript({ pdf, type, shapes: new Shapes(pdf.context), structure, signing }, sheaves, { summary, pages })
   addOutline(pdf, pdf.getPages().map(({ ref }, k) => ({ says: bookmarkOf(k - (pdf.getPageCount() - pages.length)), page: ref })))
   structure.store(pdf)
   await type.embed()
-  // The writer would pause after each 50 objects, for the sake of screens: that is most of the time of so small a file.
-  return pdf.save({ addDefaultPage: false, updateFieldAppearances: false, objectsPerTick: Infinity })
+  const file = new StreamedFile(pdf)
+  return Buffer.concat([file.begin(), ...file.end()])
 }
 
 /** Adds one script to a file: its summary, where there is one, and its pages. Throws as above. */
 export function addScript(file: FileInWork, sheaves: LoadedSheaves, { summary, pages }: Pick<ScriptToReturn, 'summary' | 'pages'>): void {
-  if (summary) addSummary(file.pdf, summary, pages.length, file.type, file.structure)
+  if (summary) addSummary(file, summary, pages.length)
   const copiers = new Map<PDFDocument, ObjectCopier>()
   for (const page of pages) {
     const source = sheafOf(sheaves, page)

@@ -1,8 +1,9 @@
 import { PDFName, type PDFDocument, type PDFPage } from 'pdf-lib'
 import type { Homography } from '@/lib/core/paper-space'
 import type { Face } from '@/lib/typesetting/font-files'
-import { actualText, colour, num, packed } from '@/lib/typesetting/operators'
+import { actualText, colour, num, packed, place } from '@/lib/typesetting/operators'
 import { paintInk, type Drawing } from './paint-ink'
+import type { Shapes } from './shapes'
 import { Structure } from './structure'
 import type { Typesetter } from '@/lib/typesetting/typesetter'
 
@@ -14,17 +15,24 @@ export const ink = { text: '#17233F', soft: '#4B5771', rule: '#C6D2E0', edge: '#
 /** How type is set: face, size in points, colour. */
 export type Style = Readonly<{ face: Face; size: number; colour: string }>
 
+/** What sheets of one file are drawn with. */
+export type SheetFile = Readonly<{ pdf: PDFDocument; type: Typesetter; shapes: Shapes; structure: Structure }>
+
 /** One page that is drawn from the top left, y down, in points. Finish it once all is drawn. */
 export class Sheet {
   readonly page: PDFPage
   private readonly operators: string[] = []
 
-  constructor(
-    private readonly pdf: PDFDocument,
-    readonly type: Typesetter,
-    readonly structure: Structure,
-  ) {
-    this.page = pdf.addPage([sheetSize.width, sheetSize.height])
+  constructor(private readonly file: SheetFile) {
+    this.page = file.pdf.addPage([sheetSize.width, sheetSize.height])
+  }
+
+  get type(): Typesetter {
+    return this.file.type
+  }
+
+  get structure(): Structure {
+    return this.file.structure
   }
 
   /** One line of type as a piece of the open element. Returns its width. */
@@ -56,14 +64,14 @@ export class Sheet {
   /** Stamps as on a script, `scale` times their size, their origin at (x, y), read as `says`. */
   stamps(drawings: readonly Drawing[], x: number, y: number, scale: number, says: string): void {
     const map: Homography = [[scale, 0, x], [0, -scale, sheetSize.height - y], [0, 0, 1]]
-    this.operators.push(this.structure.piece(this.page, actualText(says, paintInk(drawings, map, this.type))))
+    this.operators.push(this.structure.piece(this.page, actualText(says, paintInk(drawings, map, this.file))))
   }
 
   /** Writes the page. */
   finish(): void {
-    const { context } = this.pdf
+    const { context } = this.file.pdf
     this.page.node.set(PDFName.of('Contents'), packed(context, this.operators.join('\n')))
-    this.page.node.set(PDFName.of('Resources'), context.obj({ Font: this.type.resources() }))
+    this.page.node.set(PDFName.of('Resources'), context.obj({ Font: this.type.resources(), XObject: this.file.shapes.resources() }))
     this.page.node.set(PDFName.of('Tabs'), PDFName.of('S'))
   }
 
@@ -78,6 +86,6 @@ export class Sheet {
   }
 
   private at(x: number, y: number): string {
-    return `${num(x)} ${num(sheetSize.height - y)}`
+    return `${place(x)} ${place(sheetSize.height - y)}`
   }
 }

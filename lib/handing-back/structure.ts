@@ -1,8 +1,9 @@
-import { PDFDict, PDFHexString, PDFName, PDFString, type PDFDocument, type PDFPage, type PDFRef } from 'pdf-lib'
+import { PDFDict, PDFName, PDFString, type PDFDocument, type PDFPage, type PDFRef } from 'pdf-lib'
+import { textString } from '@/lib/typesetting/operators'
 
 /** The kinds of structure a returned script has (ISO 32000-1, 14.8.4). */
 export type Tag = 'H1' | 'H2' | 'P' | 'L' | 'LI' | 'Table' | 'TR' | 'TH' | 'TD' | 'Figure'
-type Branch = { tag: Tag | 'Document'; children: (Branch | Leaf)[]; alt: string | null }
+export type Branch = { tag: Tag | 'Document'; children: (Branch | Leaf)[]; alt: string | null }
 type Leaf = Readonly<{ page: PDFPage; id: number }>
 
 /**
@@ -15,8 +16,19 @@ export class Structure {
 
   /** An element round what `draw` writes. */
   within<T>(tag: Tag, draw: () => T, alt: string | null = null): T {
+    const branch = this.element(tag, alt)
+    return this.inside(branch, draw)
+  }
+
+  /** A new, empty element of the open one, to be filled piece by piece. */
+  element(tag: Tag, alt: string | null = null): Branch {
     const branch: Branch = { tag, children: [], alt }
     this.open.at(-1)!.children.push(branch)
+    return branch
+  }
+
+  /** Puts what `draw` writes into an element. */
+  inside<T>(branch: Branch, draw: () => T): T {
     this.open.push(branch)
     try {
       return draw()
@@ -62,15 +74,17 @@ export class Structure {
   private write(pdf: PDFDocument, branch: Branch, parent: PDFRef, owners: Map<PDFPage, PDFRef[]>): PDFRef {
     const { context } = pdf
     const ref = context.nextRef()
+    const page = branch.children.flatMap((child) => ('page' in child ? [child.page] : []))[0]
     const kids = branch.children.map((child) => {
       if (!('page' in child)) return this.write(pdf, child, ref, owners)
       const refs = owners.get(child.page) ?? []
       refs[child.id] = ref
       owners.set(child.page, refs)
-      return context.obj({ Type: 'MCR', Pg: child.page.ref, MCID: child.id })
+      return child.page === page ? context.obj(child.id) : context.obj({ Type: 'MCR', Pg: child.page.ref, MCID: child.id })
     })
-    const dict: PDFDict = context.obj({ Type: 'StructElem', S: branch.tag, P: parent, K: kids })
-    if (branch.alt !== null) dict.set(PDFName.of('Alt'), PDFHexString.fromText(branch.alt))
+    const dict: PDFDict = context.obj({ S: branch.tag, P: parent, K: kids.length === 1 ? kids[0]! : kids })
+    if (page) dict.set(PDFName.of('Pg'), page.ref)
+    if (branch.alt !== null) dict.set(PDFName.of('Alt'), textString(branch.alt))
     if (branch.tag === 'Document') dict.set(PDFName.of('Lang'), PDFString.of('en-GB'))
     if (branch.tag === 'TH') dict.set(PDFName.of('A'), context.obj({ O: 'Table', Scope: 'Column' }))
     context.assign(ref, dict)

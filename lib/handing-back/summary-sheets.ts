@@ -1,5 +1,4 @@
-import type { PDFDocument } from 'pdf-lib'
-import { Sheet, ink, sheetSize, type Style } from './sheet'
+import { Sheet, ink, sheetSize, type SheetFile, type Style } from './sheet'
 import type { Structure } from './structure'
 import type { Typesetter } from '@/lib/typesetting/typesetter'
 
@@ -15,12 +14,16 @@ export class SummarySheets {
   readonly sheets: Sheet[] = []
   y = frame.top
 
-  constructor(
-    private readonly pdf: PDFDocument,
-    readonly type: Typesetter,
-    readonly structure: Structure,
-  ) {
+  constructor(private readonly file: SheetFile) {
     this.turn()
+  }
+
+  get type(): Typesetter {
+    return this.file.type
+  }
+
+  get structure(): Structure {
+    return this.file.structure
   }
 
   get sheet(): Sheet {
@@ -29,7 +32,7 @@ export class SummarySheets {
 
   /** Starts the next sheet. */
   turn(): void {
-    this.sheets.push(new Sheet(this.pdf, this.type, this.structure))
+    this.sheets.push(new Sheet(this.file))
     this.y = frame.top
   }
 }

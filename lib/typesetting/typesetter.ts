@@ -1,50 +1,46 @@
 import { CustomFontSubsetEmbedder, PDFDict, type PDFContext, type PDFRef } from 'pdf-lib'
 import { filesOf, fontOfFile, type Face, type FontFile } from './font-files'
+import { packWithNode } from './operators'
 
 /** A stretch of type from one font: its resource name, glyph codes in hex, its width at size 1, and the text where the glyphs do not say it. */
 export type Run = Readonly<{ font: string; codes: string; width: number; means: string | null }>
 type Used = Readonly<{ name: string; ref: PDFRef; embedder: CustomFontSubsetEmbedder }>
-type Found = Readonly<{ file: FontFile; text: string; means: string | null }>
+/** A letter or stretch in one font: its width at size 1. */
+type Found = Readonly<{ file: FontFile; text: string; width: number; means: string | null }>
 
 /** Shown for a letter that no face has. */
 const unknownLetter = '□'
 const lastFile = filesOf.sans.at(-1)!
+const allFiles = [...new Set(Object.values(filesOf).flat())]
+// The library's own way to one waits for fonts that are read elsewhere; these are read already, and only those that are used.
+const Embedder = CustomFontSubsetEmbedder as unknown as new (font: ReturnType<typeof fontOfFile>, data: Uint8Array, name: string) => CustomFontSubsetEmbedder
 
 /** Sets type in one PDF: finds a font for each letter, and at the end puts into the file the glyphs that were used and no others. */
 export class Typesetter {
   private readonly used = new Map<FontFile, Used>()
-  private readonly widths = new Map<string, number>()
 
-  private constructor(
-    private readonly context: PDFContext,
-    private readonly embedders: ReadonlyMap<FontFile, CustomFontSubsetEmbedder>,
-  ) {}
+  private constructor(private readonly context: PDFContext) {}
 
   static async for(context: PDFContext): Promise<Typesetter> {
-    const embedders = new Map<FontFile, CustomFontSubsetEmbedder>()
-    for (const file of new Set(Object.values(filesOf).flat())) {
-      const font = fontOfFile(file)
-      embedders.set(file, await CustomFontSubsetEmbedder.for({ create: () => font }, new Uint8Array(), `${subsetTag(embedders.size)}+${font.postscriptName}`))
-    }
-    return new Typesetter(context, embedders)
+    packWithNode(context)
+    return new Typesetter(context)
   }
 
   /** The runs of a text, drawn one after another. Never throws: what no face has becomes a box that still reads as the letter. */
   runs(text: string, face: Face): Run[] {
-    return this.stretches(text, face).map(({ file, text, means }) => {
+    return stretches(text, face).map(({ file, text, width, means }) => {
       const { name, embedder } = this.use(file)
-      const codes = embedder.encodeText(text).toString().slice(1, -1)
-      return { font: name, codes, width: this.stretchWidth(file, text), means }
+      return { font: name, codes: embedder.encodeText(text).toString().slice(1, -1), width, means }
     })
   }
 
   /** The width of a text in points. */
   width(text: string, face: Face, size: number): number {
-    const key = `${face} ${text}`
-    const known = this.widths.get(key)
+    const known = widths[face].get(text)
     if (known !== undefined) return known * size
-    const width = this.stretches(text, face).reduce((sum, { file, text }) => sum + this.stretchWidth(file, text), 0)
-    this.widths.set(key, width)
+    const width = stretches(text, face).reduce((sum, { width }) => sum + width, 0)
+    if (widths[face].size >= mostWidths) widths[face].clear()
+    widths[face].set(text, width)
     return width * size
   }
 
@@ -52,11 +48,15 @@ export class Typesetter {
   lines(text: string, face: Face, size: number, room: number): string[] {
     const lines: string[] = []
     let line = ''
+    let end = 0
+    const space = this.width(' ', face, size)
     for (const word of text.trim().split(/\s+/).flatMap((word) => this.pieces(word, face, size, room))) {
-      const longer = line === '' ? word : `${line} ${word}`
-      const full = line !== '' && this.width(longer, face, size) > room
+      const width = this.width(word, face, size)
+      // Letters are set one by one, so a line is as wide as its words and spaces together.
+      const full = line !== '' && end + space + width > room
       if (full) lines.push(line)
-      line = full ? word : longer
+      end = full || line === '' ? width : end + space + width
+      line = full || line === '' ? word : `${line} ${word}`
     }
     return line === '' ? lines : [...lines, line]
   }
@@ -86,27 +86,26 @@ export class Typesetter {
   private use(file: FontFile): Used {
     const known = this.used.get(file)
     if (known) return known
-    const used = { name: `Sf${this.used.size + 1}`, ref: this.context.nextRef(), embedder: this.embedders.get(file)! }
+    const font = fontOfFile(file)
+    const embedder = new Embedder(font, new Uint8Array(), `${subsetTag(allFiles.indexOf(file))}+${font.postscriptName}`)
+    const used = { name: `Sf${this.used.size + 1}`, ref: this.context.nextRef(), embedder }
     this.used.set(file, used)
     return used
   }
+}
 
-  private stretchWidth(file: FontFile, text: string): number {
-    return this.embedders.get(file)!.widthOfTextAtSize(text, 1)
+/** Letters that share a font, together. A letter spelt with parts is put together first, and taken apart when no face has it whole. */
+function stretches(text: string, face: Face): Found[] {
+  const stretches: { file: FontFile; text: string; width: number; means: string | null }[] = []
+  for (const letter of text.normalize('NFC').replace(/\s/g, ' ').replace(/\p{Cc}/gu, '')) {
+    const found = find(letter, face)
+    const last = stretches.at(-1)
+    if (last && last.file === found.file && last.means === null && found.means === null) {
+      last.text += found.text
+      last.width += found.width
+    } else stretches.push({ ...found })
   }
-
-  /** Letters that share a font, together. A letter spelt with parts is put together first, and taken apart when no face has it whole. */
-  private stretches(text: string, face: Face): Found[] {
-    const stretches: Found[] = []
-    for (const letter of text.normalize('NFC').replace(/\s/g, ' ').replace(/\p{Cc}/gu, '')) {
-      const found = find(letter, face)
-      const last = stretches.at(-1)
-      if (last && last.file === found.file && last.means === null && found.means === null) {
-        stretches[stretches.length - 1] = { ...last, text: last.text + found.text }
-      } else stretches.push(found)
-    }
-    return stretches
-  }
+  return stretches
 }
 
 /** The six capitals that mark a font name as a subset's, different for each font of a file. */
@@ -114,19 +113,28 @@ function subsetTag(k: number): string {
   return `SHEAF${String.fromCharCode(65 + k)}`
 }
 
-const places = new Map<string, Found>()
+const byFace = <T>(): Readonly<Record<Face, Map<string, T>>> => ({ sans: new Map(), 'sans-strong': new Map(), 'sans-bold': new Map(), book: new Map(), 'book-italic': new Map() })
+const places = byFace<Found>()
+/** Widths at size 1: a class's summaries are made of the same words. Emptied when full, for people may type anything. */
+const widths = byFace<number>()
+const mostWidths = 5000
 
 function find(letter: string, face: Face): Found {
-  const key = `${face} ${letter}`
-  const known = places.get(key)
+  const known = places[face].get(letter)
   if (known) return known
-  const found = inOneFile(letter, letter, face) ?? inOneFile(letter.normalize('NFKC'), letter, face) ?? { file: lastFile, text: unknownLetter, means: letter }
+  const found = inOneFile(letter, letter, face) ?? inOneFile(letter.normalize('NFKC'), letter, face) ?? inFile(lastFile, unknownLetter, letter)
   // Only for letters that have a font: their number is bounded by the fonts, what people type is not.
-  if (found.text !== unknownLetter) places.set(key, found)
+  if (found.text !== unknownLetter) places[face].set(letter, found)
   return found
 }
 
 function inOneFile(text: string, letter: string, face: Face): Found | null {
   const file = filesOf[face].find((file) => [...text].every((part) => fontOfFile(file).hasGlyphForCodePoint(part.codePointAt(0)!)))
-  return file ? { file, text, means: text === letter ? null : letter } : null
+  return file ? inFile(file, text, letter) : null
+}
+
+function inFile(file: FontFile, text: string, letter: string): Found {
+  const font = fontOfFile(file)
+  const width = [...text].reduce((sum, part) => sum + font.glyphForCodePoint(part.codePointAt(0)!).advanceWidth, 0) / font.unitsPerEm
+  return { file, text, width, means: text === letter ? null : letter }
 }

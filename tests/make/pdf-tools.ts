@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto'
 import { execFileSync } from 'node:child_process'
 import { mkdtempSync, readFileSync, readdirSync, writeFileSync } from 'node:fs'
 import { tmpdir } from 'node:os'
@@ -30,11 +31,11 @@ export function imageCount(file: string): number {
   return objectsOf(file).filter((object) => object.includes('"/Subtype":"/Image"')).length
 }
 
-/** The image streams as they are coded in the file, page by page. */
-export function codedImages(file: string, first = 1, last = 1000): Buffer[] {
+/** The image streams as they are coded in the file, page by page, each by its SHA-256. */
+export function codedImages(file: string, first = 1, last = 1000): string[] {
   const folder = mkdtempSync(join(tmpdir(), 'sheafmark-images-'))
   run('pdfimages', '-all', '-f', String(first), '-l', String(last), file, join(folder, 'image'))
-  return readdirSync(folder).sort().map((name) => readFileSync(join(folder, name)))
+  return readdirSync(folder).sort().map((name) => createHash('sha256').update(readFileSync(join(folder, name))).digest('hex'))
 }
 
 export function wordsOf(file: string, page: number): string {

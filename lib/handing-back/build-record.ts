@@ -3,6 +3,7 @@ import type { ModerationRecord, RecordSection, RecordTable } from '@/lib/core/mo
 import { Typesetter } from '@/lib/typesetting/typesetter'
 import { columnWidths } from './column-widths'
 import { describe } from './returned-script'
+import { Shapes } from './shapes'
 import { ink, sheetSize, type Sheet, type Style } from './sheet'
 import { Structure } from './structure'
 import { SummarySheets, frame, leading, plain, small, soft } from './summary-sheets'
@@ -21,7 +22,7 @@ export async function buildRecord(record: ModerationRecord, builtAt: Date): Prom
   describe(pdf, record.title, builtAt)
   const type = await Typesetter.for(pdf.context)
   const structure = new Structure()
-  const sheets = new SummarySheets(pdf, type, structure)
+  const sheets = new SummarySheets({ pdf, type, structure, shapes: new Shapes(pdf.context) })
   structure.within('H1', () => wrapped(sheets, record.title, title, 24))
   structure.within('P', () => wrapped(sheets, `${record.where}. As it stood on ${record.asOf}.`, soft, leading))
   for (const section of record.sections) drawSection(sheets, section)

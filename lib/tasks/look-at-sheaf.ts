@@ -1,5 +1,7 @@
 import type { Piscina } from 'piscina'
 import { AppError, type ErrorDetail } from '@/lib/core/errors'
+import { log } from '@/lib/infra/log'
+import { runLimited } from '@/lib/infra/run-limited'
 import { threadPool } from '@/lib/infra/thread-pool'
 import type { SheafAnswer, SheafJob } from './sheaf-thread'
 
@@ -33,13 +35,15 @@ export async function sheafPicture(file: string, index: number): Promise<Buffer>
 /** Asked in a thread, so that no file can hold up the process or bring it down. */
 function ask(job: SheafJob, most = longest): Promise<SheafAnswer> {
   pool ??= threadPool('lib/tasks/sheaf-thread.ts', 1, { idleMs })
-  return pool.run(job, { signal: AbortSignal.timeout(most) }) as Promise<SheafAnswer>
+  return runLimited<SheafAnswer>(pool, job, most)
 }
 
 /** A thread's answer. `given`: what a file that ends its thread is taken for. Throws what the answer says is wrong. */
 export async function answered(asked: Promise<SheafAnswer>, given: 'file_damaged' | 'page_unreadable', detail: ErrorDetail = {}): Promise<Answered> {
   const answer = await asked.catch((error: unknown) => {
-    throw isMissing(error) ? error : new AppError(given, detail)
+    if (isMissing(error)) throw error
+    log.warn({ err: error }, 'a file ended the thread that read it')
+    throw new AppError(given, detail)
   })
   if ('fault' in answer) throw new AppError(answer.fault, answer.detail)
   return answer

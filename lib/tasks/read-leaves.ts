@@ -2,6 +2,8 @@ import type { BlankPage } from '@/lib/core/grey-picture'
 import { unread, type LeafReading, type PageGuess } from '@/lib/core/leaf'
 import type { PrintedCodes } from '@/lib/core/printed-code'
 import { newId } from '@/lib/core/ids'
+import { log } from '@/lib/infra/log'
+import { runLimited } from '@/lib/infra/run-limited'
 import { threadPool } from '@/lib/infra/thread-pool'
 import { answered } from './look-at-sheaf'
 import type { LeafAnswer, LeafJob, LookJob, Onto } from './leaf-thread'
@@ -30,7 +32,7 @@ export type LeafReader = Readonly<{
  */
 export async function openLeaves(file: string, paper: readonly BlankPage[], threads = 1, codes?: PrintedCodes): Promise<LeafReader> {
   const pool = threadPool('lib/tasks/leaf-thread.ts', threads)
-  const look = pool.run({ look: file } satisfies LookJob, { signal: AbortSignal.timeout(longest) }) as Promise<SheafAnswer>
+  const look = runLimited<SheafAnswer>(pool, { look: file } satisfies LookJob, longest)
   const { pageCount } = await answered(look, 'file_damaged').catch(async (error: unknown) => {
     await pool.destroy()
     throw error
@@ -38,19 +40,26 @@ export async function openLeaves(file: string, paper: readonly BlankPage[], thre
   const pages = paper.map((page) => ({ ...page, picture: { ...page.picture, data: shared(page.picture.data) } }))
   const paperKey = newId()
   const common = { file, paperKey, paper: pages, ...(codes && codes.size > 0 ? { codes: shared(Buffer.from(JSON.stringify([...codes]))) } : {}) }
+  let closing = false
   const run = async (index: number, onto?: Onto): Promise<LeafAnswer | null> => {
     const job: LeafJob = { index, ...common, ...(onto === undefined ? {} : { onto }) }
     // a page that kills its thread is reported like one that cannot be read
-    return (pool.run(job, { signal: AbortSignal.timeout(longest) }) as Promise<LeafAnswer>).catch(() => null)
+    return runLimited<LeafAnswer>(pool, job, longest).catch((error: unknown) => {
+      if (!closing) log.warn({ err: error, page: index + 1 }, 'a page ended the thread that read it')
+      return null
+    })
   }
   return {
     pageCount,
     ready: async () => {
-      await Promise.all(Array.from({ length: threads }, () => pool.run({ index: null, ...common } satisfies LeafJob)))
+      await Promise.all(Array.from({ length: threads }, () => runLimited(pool, { index: null, ...common } satisfies LeafJob, longest)))
     },
     read: async (index) => (await run(index))?.readings ?? [unread(index, 'page_unreadable')],
     readOnto: async (index, onto) => (await run(index, onto))?.onto ?? null,
-    close: () => pool.destroy(),
+    close: () => {
+      closing = true
+      return pool.destroy()
+    },
   }
 }
 

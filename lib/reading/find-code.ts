@@ -1,11 +1,11 @@
 import type { GreyPicture } from '@/lib/core/grey-picture'
 import type { PageImage } from '@/lib/core/leaf'
 import type { PaperRect, PixelPoint } from '@/lib/core/paper-space'
-import { codesIn, type FoundCode } from './code-engine'
+import { codesIn, type Box, type FoundCode } from './code-engine'
 
-/** A place where a code was printed, with the size of its page, in points. */
-export type CodeWindow = Readonly<{ rect: PaperRect; pageWidth: number; pageHeight: number }>
-type Box = Readonly<{ left: number; top: number; width: number; height: number }>
+/** A place where a code was printed: its page (from 1) and that page's size in points. */
+export type CodeWindow = Readonly<{ page: number; rect: PaperRect; pageWidth: number; pageHeight: number }>
+type Density = Pick<PageImage, 'dpiX' | 'dpiY'>
 
 /** A skewed and shifted page carries its code so far from where it should be: 15 mm, in points. */
 const astray = (15 * 72) / 25.4
@@ -14,21 +14,41 @@ const mostPlaces = 8
 /** How dense the whole page is looked at first. */
 const overview = 110
 
-/**
- * Looks for a wanted code on a leaf: first where codes were printed, the page either way up, then all over the page at a low density,
- * then at the leaf's own. `wanted` says whether a text is one. Null when there is none.
- */
-export async function findCode(picture: GreyPicture, { dpiX, dpiY }: Pick<PageImage, 'dpiX' | 'dpiY'>, windows: readonly CodeWindow[], wanted: (text: string) => boolean): Promise<FoundCode | null> {
+/** Looks for a wanted code where codes were printed, the page either way up. `wanted` says whether a text is one. Null when there is none. */
+export async function codeInPlace(picture: GreyPicture, { dpiX, dpiY }: Density, windows: readonly CodeWindow[], wanted: (text: string) => boolean): Promise<FoundCode | null> {
   for (const box of placesOf(picture, dpiX, dpiY, windows)) {
-    const found = (await codesIn(part(picture, box))).find(({ text }) => wanted(text))
-    if (found) return moved(found, 1, box.left, box.top)
+    const found = await codeIn(picture, box, wanted)
+    if (found) return found
   }
+  return null
+}
+
+/** Looks for a code at a place that is known exactly: the corners of its square in pixels. */
+export async function codeAt(picture: GreyPicture, corners: readonly PixelPoint[], wanted: (text: string) => boolean): Promise<FoundCode | null> {
+  const [xs, ys] = [corners.map(({ x }) => x), corners.map(({ y }) => y)]
+  const margin = 0.15 * (Math.max(...xs) - Math.min(...xs))
+  const box = clipped(picture, { left: Math.min(...xs) - margin, top: Math.min(...ys) - margin, width: Math.max(...xs) - Math.min(...xs) + 2 * margin, height: Math.max(...ys) - Math.min(...ys) + 2 * margin })
+  if (box.width < 20 || box.height < 20) return null
+  const found = await codeIn(picture, box, wanted)
+  if (found) return found
+  const soft = await codesIn(shrunk(part(picture, box), 2))
+  const other = soft.find(({ text }) => wanted(text))
+  return other ? moved(other, 2, box.left, box.top) : null
+}
+
+/** Looks for a code all over a leaf, at a low density and then, if `closely`, at the leaf's own. */
+export async function codeAnywhere(picture: GreyPicture, { dpiX, dpiY }: Density, wanted: (text: string) => boolean, closely: boolean): Promise<FoundCode | null> {
   const n = Math.floor(Math.min(dpiX, dpiY) / overview)
   if (n >= 2) {
     const found = (await codesIn(shrunk(picture, n))).find(({ text }) => wanted(text))
     if (found) return moved(found, n, 0, 0)
   }
+  if (n >= 2 && !closely) return null
   return (await codesIn(picture)).find(({ text }) => wanted(text)) ?? null
+}
+
+async function codeIn(picture: GreyPicture, box: Box, wanted: (text: string) => boolean): Promise<FoundCode | null> {
+  return (await codesIn(picture, box)).find(({ text }) => wanted(text)) ?? null
 }
 
 /** Where on the leaf a code may be, one box for places that lie close together; the page upright first. */

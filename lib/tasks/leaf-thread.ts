@@ -36,17 +36,16 @@ async function readLeaf(job: LeafJob): Promise<LeafAnswer> {
   const sheaf = opened(job)
   const { cv } = await opencv()
   if (kept?.key !== job.paperKey) kept = await makeReady(cv, job)
-  const { templates, codes, windows } = kept
+  const { templates, windows } = kept
   const index = job.index ?? 0
   try {
     if (job.index === null) return { readings: [unread(index, 'page_empty')], onto: null }
     const { image, picture } = await decodePage(sheaf, index)
     const { onto } = job
     if (onto === undefined) {
-      // Codes are looked for where they stand on one page: an image that shows two is told by its print.
-      const coded = windows.length > 0 && !mayBeTwoUp(image, templates) ? await readByCode(cv, image, picture, templates, codes, windows) : null
-      const seen = coded?.reading ? [coded.reading] : registerSheet(cv, image, picture, templates)
-      return { readings: seen.map((one) => withNumber({ index, ...one, ...(coded ? { code: coded.code } : {}) }, picture, job.paper)), onto: null }
+      const register = () => registerSheet(cv, image, picture, templates)
+      const seen = windows.length > 0 ? await readByCode(cv, { image, picture }, kept, register, mayBeTwoUp(image, templates)) : register()
+      return { readings: seen.map((one) => withNumber({ index, ...one }, picture, job.paper)), onto: null }
     }
     const template = templates.find(({ page }) => page.page === onto.paperPage)
     return { readings: [], onto: template ? registerPartToPage(cv, image, picture, template, onto.part) : null }

@@ -78,12 +78,8 @@ export function registerByCode(cv: Cv, image: PageImage, picture: GreyPicture, t
     if (!best || best.share < provenShare) continue
     const { white } = ready.levelled
     const guess = guessOf({ ...best, confidence: Math.min(1, best.share * 1.6) }, ready)
-<<<<<<< HEAD
-    return { image, empty: false, guesses: [guess], clear: true, pen: penOf(white, template, best.map), ink: inkMap(white, template, best.map), strokes: strokeMap(white, template, best.map) }
-=======
     // How it was written tells students apart; here the code does.
-    return { image, empty: false, guesses: [guess], clear: true, pen: null, ink: inkMap(white, template, best.map) }
->>>>>>> 75df3ab (A leaf whose code was not where it was printed is registered first: its print says where to look, halves of a two-up scan have their codes read, empty backs cost nothing more)
+    return { image, empty: false, guesses: [guess], clear: true, pen: null, ink: inkMap(white, template, best.map), strokes: strokeMap(white, template, best.map) }
   }
   return null
 }

@@ -6,6 +6,7 @@ import { makeLearner, newNet } from './digits/learn'
 import { nextLesson, withLines } from './digits/lessons'
 import { measure } from './digits/measure'
 import { packNet } from './digits/pack-net'
+import { packSamples } from './digits/pack-samples'
 import { loadSamples } from './digits/samples'
 
 // npm run train:digits [-- --lessons 240000]
@@ -15,6 +16,7 @@ import { loadSamples } from './digits/samples'
 const { values } = parseArgs({ options: { lessons: { type: 'string', default: '240000' } } })
 const lessons = Number(values.lessons)
 const batch = 32
+const sample = 'tests/fixtures/held-out-digits.bin'
 const weights = 'lib/placing/digit-weights.json'
 
 async function main(): Promise<void> {
@@ -34,6 +36,7 @@ async function main(): Promise<void> {
       loss = 0
     }
     await writeFile(weights, packNet(net))
+    await writeFile(sample, packSamples(heldOut.filter((_, k) => k % 5 === 0)))
   }
   const net = loadNet(JSON.parse(await readFile(weights, 'utf8')))
   for (const line of measure(net, withLines(heldOut))) console.log(line)

@@ -14,45 +14,52 @@ const shortest = 5
 const streakShare = 0.3
 const streakWidth = 4
 
+/** Room for one leaf, used again for the next: whether a pixel is dark and no print, and where on the template it lies. */
+let room = { marks: new Uint8Array(0), places: new Int32Array(0) }
+
 /**
- * Where a pen went on a page: what hangs together as strokes do, where the blank page has no print within a millimetre; dots, streaks and
- * what shines through left out. Pixels of 100 dpi in squares of 1 mm. `map` takes template to leaf pixels (100 dpi).
+ * Where a pen went on a page: what hangs together as strokes do, where the blank page has no print within half a millimetre; dots, streaks
+ * and what shines through left out. Pixels of 100 dpi in squares of 1 mm. `map` takes template to leaf pixels (100 dpi).
  */
 export function strokeMap(leaf: GreyPicture, template: Template, map: Homography): StrokeMap {
   const { width, height } = template.white
   const cell = (strokeCellPoints * 100) / 72
   const columns = Math.ceil(width / cell)
   const counts = new Uint8Array(columns * Math.ceil(height / cell))
-  const { marks, places } = inked(leaf, template, inverse(map))
+  const inked = markInked(leaf, template, inverse(map))
+  const { marks, places } = room
   const part: number[] = []
-  for (const start of places.keys()) {
+  for (const start of inked) {
     if (marks[start] !== 1) continue
     part.length = 0
     if (!isStroke(gather(marks, leaf.width, start, part), leaf)) continue
     for (const at of part) {
-      const place = places.get(at)!
+      const place = places[at]!
       counts[Math.floor(Math.floor(place / width) / cell) * columns + Math.floor((place % width) / cell)]!++
     }
   }
   return { columns, cells: deflateRawSync(counts).toString('base64') }
 }
 
-/** The leaf's dark pixels that are no print (1 in `marks`), and where on the template each lies. */
-function inked({ width, data }: GreyPicture, { white, clear }: Template, [[a, b, c], [d, e, f], [g, h, i]]: Homography): { marks: Uint8Array; places: Map<number, number> } {
-  const marks = new Uint8Array(data.length)
-  const places = new Map<number, number>()
-  for (let at = 0; at < data.length; at++) {
-    if (data[at]! >= written) continue
-    const x = (at % width) + 0.5
-    const y = Math.floor(at / width) + 0.5
-    const w = g * x + h * y + i
-    const u = Math.floor((a * x + b * y + c) / w)
-    const v = Math.floor((d * x + e * y + f) / w)
-    if (u < margin || v < margin || u >= white.width - margin || v >= white.height - margin || clear[v * white.width + u] === 0) continue
-    marks[at] = 1
-    places.set(at, v * white.width + u)
-  }
-  return { marks, places }
+/** Marks the leaf's dark pixels that are no print, and notes where on the template each lies. */
+function markInked({ width, height, data }: GreyPicture, { white, free }: Template, [[a, b, c], [d, e, f], [g, h, i]]: Homography): number[] {
+  if (room.marks.length < data.length) room = { marks: new Uint8Array(data.length), places: new Int32Array(data.length) }
+  const { marks, places } = room
+  marks.fill(0)
+  const inked: number[] = []
+  const [right, bottom] = [white.width - margin, white.height - margin]
+  for (let y = 0, at = 0; y < height; y++)
+    for (let x = 0; x < width; x++, at++) {
+      if (data[at]! >= written) continue
+      const w = g * (x + 0.5) + h * (y + 0.5) + i
+      const u = Math.floor((a * (x + 0.5) + b * (y + 0.5) + c) / w)
+      const v = Math.floor((d * (x + 0.5) + e * (y + 0.5) + f) / w)
+      if (!(u >= margin && v >= margin && u < right && v < bottom) || free[v * white.width + u] === 0) continue
+      marks[at] = 1
+      places[at] = v * white.width + u
+      inked.push(at)
+    }
+  return inked
 }
 
 type Extent = Readonly<{ wide: number; high: number }>

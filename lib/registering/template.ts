@@ -22,6 +22,8 @@ export type Template = Readonly<{
   blocks25: readonly Block[]
   /** 1 where nothing is printed within a millimetre. */
   clear: Uint8Array
+  /** 1 where nothing is printed within half a millimetre: there a pen is told from print. */
+  free: Uint8Array
   corners: Float32Array
   patches: readonly Float32Array[]
   /** Print that is followed for the exact fit, at 100 and at 50 dpi. */
@@ -43,7 +45,7 @@ export function makeTemplate(cv: Cv, page: BlankPage): Template {
   }
   const ink12 = boxShrink(ink, 2)
   return {
-    page, white, ink25: ink, ink12, inked12: inkedPart(ink12), blocks25: blocksOf(ink), clear: clearOfPrint(white), corners: Float32Array.from(corners), patches,
+    page, white, ink25: ink, ink12, inked12: inkedPart(ink12), blocks25: blocksOf(ink), clear: clearOfPrint(white), free: clearOfPrint(white, 2), corners: Float32Array.from(corners), patches,
     tracks: makeTracks(white, corners),
     tracks50: makeTracks(boxShrink(white, 2), everyOther(corners)),
   }

@@ -1,8 +1,9 @@
 import type { DigitShares } from '@/lib/core/digit-reading'
 import { certainName } from '@/lib/core/sorting'
 import { matchApart } from './match-apart'
-import { isTelling, likeliestOther, numberLikelihood, numberShare } from './number-likelihood'
+import { boxLikelihoods, isTelling, numberLikelihood, plainNumber, saysNumber } from './number-likelihood'
 import { orderShares, orderTrust, type Anchor } from './order-shares'
+import { strangerLikelihood } from './stranger-likelihood'
 import { suggestNames } from './suggest-names'
 
 /** A script in the order of the pile: its confirmed name, and what its number boxes show (null: none, or not read). */
@@ -13,12 +14,12 @@ export type ListedNumber = Readonly<{ student: string; number: string }>
 export type NameSuggestion = Readonly<{ student: string; certainty: number; by: 'number' | 'list_order' }>
 
 /** One script in so many is of somebody who is not on the list. */
-const strangers = 0.03
-/** The digits must say the number by themselves, to this share together, before a name counts as certain. */
-const plainlyRead = 0.75
+const strangers = 0.08
+/** Where the pile lies in order, the next on the list is at most so many times likelier than anybody: order never stands in for digits. */
+const mostByOrder = 2
 /** A name is put forward from this certainty on. */
 const worthSaying = 0.3
-/** Without a plainly read number a suggestion stays below what may be confirmed unseen. */
+/** Unless each box says its digit, a suggestion stays below what may be confirmed at a glance. */
 const atMost = 0.9
 
 /**
@@ -44,25 +45,27 @@ function sure(said: NameSuggestion | undefined, place: ReadonlyMap<string, numbe
 
 /** The best naming of the scripts whose number says something; each may also be nobody's of the list. */
 function byNumber(scripts: readonly ReadScript[], list: readonly ListedNumber[], free: readonly boolean[], anchors: readonly Anchor[], trust: number): Map<string, NameSuggestion> {
+  const telling = scripts.flatMap(({ id, student, boxes }, at) => (student === null && boxes && isTelling(boxes) ? [{ id, boxes, at }] : []))
   const numbers = new Set(list.map(({ number }) => number))
-  const telling = scripts.flatMap((script, at) => (script.student === null && script.boxes && isTelling(script.boxes) ? [{ ...script, boxes: script.boxes, at, other: likeliestOther(script.boxes, numbers) }] : []))
-  const open = list.filter((_, k) => free[k])
+  const stranger = strangerLikelihood([...numbers])
+  const open = list.flatMap(({ number }, k) => (free[k] ? [{ number, k }] : []))
   const even = 1 / Math.max(1, open.length)
   const shares = orderShares(anchors, free, trust)
-  const granted = matchApart(telling.map(({ boxes, at, other }) => {
-    const byOrder = shares[at]?.filter((_, k) => free[k])
-    const cost = (number: string, k: number) => -numberLikelihood(boxes, number) - Math.log((1 - strangers) * Math.max(1e-6, byOrder?.[k] ?? even))
-    return { options: new Map(open.map(({ number }, k) => [k, cost(number, k)])), none: -other.likelihood - Math.log(strangers / (3 * list.length)) }
+  const granted = matchApart(telling.map(({ boxes, at }) => {
+    const likelihoods = boxLikelihoods(boxes)
+    const byOrder = (k: number) => Math.min(mostByOrder * even, Math.max(1e-6, shares[at]?.[k] ?? even))
+    const options = new Map(open.map(({ number, k }) => [k, -numberLikelihood(likelihoods, number) - Math.log((1 - strangers) * byOrder(k))]))
+    return { options, none: -stranger(likelihoods) - Math.log(strangers) }
   }))
   const said = new Map<string, NameSuggestion>()
-  telling.forEach(({ id, boxes, other }, row) => {
+  telling.forEach(({ id, boxes }, row) => {
     const { option, margin } = granted[row]!
-    const one = option === null ? undefined : open[option]
+    const plain = plainNumber(boxes)
     // A number that is plainly somebody's who is not on the list is nobody's of the list.
-    if (!one || numberShare(boxes, other.number) >= plainlyRead) return
+    if (option === null || (plain !== null && !numbers.has(plain))) return
+    const { student, number } = list[option]!
     const certainty = 1 / (1 + Math.exp(-margin))
-    const plain = numberShare(boxes, one.number) >= plainlyRead
-    if (certainty >= worthSaying) said.set(id, { student: one.student, certainty: plain ? certainty : Math.min(certainty, atMost), by: 'number' })
+    if (certainty >= worthSaying) said.set(id, { student, certainty: saysNumber(boxes, number) ? certainty : Math.min(certainty, atMost), by: 'number' })
   })
   return said
 }

@@ -4,50 +4,54 @@ import type { DigitShares } from '@/lib/core/digit-reading'
 const slip = 0.01
 /** A digit that the network cannot tell, or a box left empty, speaks for no number. */
 const silent = Math.log(0.1)
+/** Of a number's digit at least this share must be seen in its box before the box says it. */
+const spoken = 0.35
 
-/** How well boxes agree with a number: natural logarithm of its likelihood (0: certainly this; `silent` for each box that says nothing). */
-export function numberLikelihood(boxes: readonly DigitShares[], number: string): number {
-  if (number.length === boxes.length) return boxes.reduce((sum, shares, k) => sum + boxLikelihood(shares, number[k]!), 0)
-  return Math.max(...layings(number, boxes.length).map((laid) => boxes.reduce((sum, shares, k) => sum + boxLikelihood(shares, laid[k]!), 0)))
+/** How well boxes agree with any number, reckoned once: natural logarithms of how likely each digit is in each, and of an empty box. */
+export type BoxLikelihoods = readonly Readonly<{ digits: readonly number[]; empty: number }>[]
+
+export function boxLikelihoods(boxes: readonly DigitShares[]): BoxLikelihoods {
+  return boxes.map((shares) => {
+    if (!shares) return { digits: Array.from({ length: 10 }, () => silent), empty: 0 }
+    const rest = Math.max(0, 1 - shares.reduce((sum, share) => sum + share, 0))
+    return { digits: shares.map((share) => Math.log((1 - slip) * (share + rest / 10) + slip / 10)), empty: Math.log(slip) }
+  })
 }
 
-/** Whether the boxes say this very number, digit by digit, and how surely: the product of its digits' shares. 0 when a box says nothing. */
-export function numberShare(boxes: readonly DigitShares[], number: string): number {
-  return Math.max(...layings(number, boxes.length).map((laid) => boxes.reduce((product, shares, k) => product * shareOf(shares, laid[k]!), 1)))
+/** How well boxes agree with a number: natural logarithm of its likelihood. One shorter than the boxes stands at their left or at their right. */
+export function numberLikelihood(boxes: BoxLikelihoods, number: string): number {
+  const spare = boxes.length - number.length
+  if (spare < 0) return boxes.length * silent
+  return spare === 0 ? laid(boxes, number, 0) : Math.max(laid(boxes, number, 0), laid(boxes, number, spare))
 }
 
-/** The likeliest number that none of these is, with its likelihood: what a student who is not on the list may have written. */
-export function likeliestOther(boxes: readonly DigitShares[], numbers: ReadonlySet<string>): { number: string; likelihood: number } {
-  const ranked = boxes.map((shares) => (shares ? shares.map((_, digit) => digit).sort((a, b) => shares[b]! - shares[a]!) : [0]).map(String))
-  const best = ranked.map((digits) => digits[0]!)
-  const tries = [best, ...ranked.flatMap((digits, k) => digits.slice(1).map((digit) => best.with(k, digit)))]
-  const others = tries.map((digits) => digits.join('')).filter((number) => !numbers.has(number)).map((number) => ({ number, likelihood: numberLikelihood(boxes, number) }))
-  return others.reduce((a, b) => (b.likelihood > a.likelihood ? b : a), { number: '', likelihood: boxes.length * Math.log(slip) })
+function laid(boxes: BoxLikelihoods, number: string, from: number): number {
+  let sum = 0
+  for (let k = 0; k < boxes.length; k++) {
+    const code = k < from || k >= from + number.length ? -1 : number.charCodeAt(k - from) - 48
+    sum += code === -1 ? boxes[k]!.empty : (boxes[k]!.digits[code] ?? silent)
+  }
+  return sum
+}
+
+/** Whether every box says its digit of a number, none left to guessing. */
+export function saysNumber(boxes: readonly DigitShares[], number: string): boolean {
+  const spare = boxes.length - number.length
+  if (spare < 0) return false
+  return [0, spare].some((from) => boxes.every((shares, k) => {
+    const digit = k < from ? undefined : number[k - from]
+    return digit === undefined ? shares === null : (shares?.[Number(digit)] ?? 0) >= spoken
+  }))
+}
+
+/** The number that boxes plainly show, each digit beyond doubt; null when any is not. */
+export function plainNumber(boxes: readonly DigitShares[]): string | null {
+  const shown = boxes.map((shares) => (shares ? shares.findIndex((share) => share >= 0.9) : -1))
+  return shown.includes(-1) ? null : shown.join('')
 }
 
 /** Whether enough boxes say something for the number to count as evidence. */
 export function isTelling(boxes: readonly DigitShares[]): boolean {
   const saying = boxes.filter((shares) => shares && Math.max(...shares) > 0.5).length
   return saying > 0 && saying >= boxes.length / 2
-}
-
-/** A number shorter than the boxes stands at their left or at their right; null where nothing should stand. */
-function layings(number: string, boxes: number): (string | null)[][] {
-  const spare = boxes - number.length
-  if (spare < 0) return [Array.from({ length: boxes }, () => '?')]
-  const gap = Array.from({ length: spare }, () => null)
-  return spare === 0 ? [[...number]] : [[...number, ...gap], [...gap, ...number]]
-}
-
-function boxLikelihood(shares: DigitShares, digit: string | null): number {
-  if (digit === null) return shares ? Math.log(slip) : 0
-  if (!shares || !/^\d$/.test(digit)) return silent
-  let rest = 1
-  for (const share of shares) rest -= share
-  return Math.log((1 - slip) * (shares[Number(digit)]! + Math.max(0, rest) / 10) + slip / 10)
-}
-
-function shareOf(shares: DigitShares, digit: string | null): number {
-  if (digit === null) return shares ? 0 : 1
-  return shares && /^\d$/.test(digit) ? shares[Number(digit)]! : 0
 }

@@ -12,7 +12,7 @@ type Hand = Readonly<{ turn: number; slant: number; wide: number; high: number; 
 /** A hand of one's own: size, slant and pen as students have them (digits of 3 to 6.5 mm, pens of 0.3 to 0.8 mm; now and then a felt pen). */
 function anyHand(dice: Dice): Hand {
   const high = dice.real(22, 50)
-  return { turn: dice.bell(0.12), slant: dice.bell(0.18), wide: high * dice.real(0.8, 1.22), high, pen: dice.chance(0.12) ? dice.real(5, 8) : dice.real(1.8, 5.2), bend: dice.real(0, 0.035) }
+  return { turn: dice.bell(0.12), slant: dice.bell(0.18), wide: high * dice.real(0.8, 1.22), high, pen: dice.chance(0.12) ? dice.real(5, 8) : dice.real(1.8, 5.2), bend: dice.real(0, 0.06) }
 }
 
 /** Writes pen paths (of one or more strokes) by a random hand onto a scan's box and photographs it badly. Ink: 0 none, 255 full. */

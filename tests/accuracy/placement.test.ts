@@ -31,7 +31,7 @@ function expectWritingRead(name: string, { numbers, ink }: Pick<ScoredSet, 'numb
   expect(numbers).toMatchObject({ wrong: 0, strangersNamed: 0 })
   expect(numbers.digits).toBeGreaterThan(40)
   expect(numbers.digitsRight).toBeGreaterThanOrEqual(0.93 * numbers.digits)
-  expect(numbers.right).toBeGreaterThanOrEqual(0.6 * (numbers.right + numbers.open))
+  expect(numbers.right).toBeGreaterThanOrEqual(0.5 * (numbers.right + numbers.open))
   expect(ink.written).toBeGreaterThan(50)
   expect(ink.misses).toBe(0)
   expect(ink.hits).toBeGreaterThanOrEqual(0.95 * ink.blank)

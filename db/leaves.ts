@@ -31,6 +31,9 @@ function toEvidence(row: Pick<LeafRow, 'finding' | 'position'>): LeafEvidence {
 const light = ['id', 'sheaf_id', 'position', 'half', 'state', 'glance', 'read_at', 'width', 'height', 'turn', 'homography', 'paper_page', 'confidence', 'problem', 'script_page_id', 'decided_by', 'decided_at']
   .map((column) => `leaves.${column}`)
 
+/** A leaf is of its sheaf's paper unless it was found to be of another. */
+const paperOfLeaf = 'coalesce(leaves.paper_id, sheaves.paper_id)'
+
 function toLeaf(row: LeafRow): Leaf {
   return {
     id: row.id, sheafId: row.sheaf_id, position: row.position, half: row.half, state: row.state, glance: row.glance, readAt: row.read_at, width: row.width, height: row.height, turn: row.turn,
@@ -69,13 +72,13 @@ export async function listLeavesOfSheaf(db: Db, sheafId: string): Promise<Leaf[]
 
 /** Every leaf of a paper in order of sheaf and position, without the engine's findings. */
 export async function listLeavesOfPaper(db: Db, paperId: string): Promise<Leaf[]> {
-  const rows = (await db('leaves').join('sheaves', 'sheaves.id', 'leaves.sheaf_id').where('sheaves.paper_id', paperId)
+  const rows = (await db('leaves').join('sheaves', 'sheaves.id', 'leaves.sheaf_id').whereRaw(`${paperOfLeaf} = ?`, [paperId])
     .orderBy(['sheaves.created_at', 'leaves.sheaf_id', 'leaves.position', 'leaves.half']).select(light)) as LeafRow[]
   return rows.map(toLeaf)
 }
 
 export async function getLeaf(db: Db, id: string): Promise<(Leaf & { paperId: string }) | null> {
-  const row = (await db('leaves').join('sheaves', 'sheaves.id', 'leaves.sheaf_id').where('leaves.id', id).select([...light, 'sheaves.paper_id']).first()) as (LeafRow & { paper_id: string }) | undefined
+  const row = (await db('leaves').join('sheaves', 'sheaves.id', 'leaves.sheaf_id').where('leaves.id', id).select([...light, db.raw(`${paperOfLeaf} as paper_id`)]).first()) as (LeafRow & { paper_id: string }) | undefined
   return row ? { ...toLeaf(row), paperId: row.paper_id } : null
 }
 
@@ -92,7 +95,7 @@ export async function getLeafEvidence(db: Db, leafIds: readonly string[]): Promi
 /** What the engine said of the placed leaves of a paper, where it said anything. */
 export async function listPlacedReasons(db: Db, paperId: string): Promise<Map<string, LeafReason[]>> {
   const reasons = "json_extract(leaves.finding, '$.placed.reasons')"
-  const rows = (await db('leaves').join('sheaves', 'sheaves.id', 'leaves.sheaf_id').where({ 'sheaves.paper_id': paperId, 'leaves.state': 'placed' }).whereRaw(`${reasons} <> '[]'`)
+  const rows = (await db('leaves').join('sheaves', 'sheaves.id', 'leaves.sheaf_id').where({ 'leaves.state': 'placed' }).whereRaw(`${paperOfLeaf} = ?`, [paperId]).whereRaw(`${reasons} <> '[]'`)
     .select({ id: 'leaves.id', reasons: db.raw(reasons) })) as { id: string; reasons: string }[]
   return new Map(rows.map(({ id, reasons: said }) => [id, JSON.parse(said) as LeafReason[]]))
 }
@@ -130,6 +133,11 @@ export async function moveLeaf(db: Db, id: string, to: Partial<LeafPlace & { con
   if (to.confidence !== undefined) change.confidence = to.confidence
   if (to.evidence !== undefined) change.finding = JSON.stringify(to.evidence)
   await db<LeafRow>('leaves').where({ id }).update(change)
+}
+
+/** Says that a leaf is of another paper than the one its sheaf was sent to. */
+export async function setLeafPaper(db: Db, id: string, paperId: string): Promise<void> {
+  await db('leaves').where({ id }).update({ paper_id: paperId })
 }
 
 /** The newest other leaf of a script page: the scan that held before a later one took its place. */

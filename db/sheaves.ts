@@ -44,10 +44,17 @@ export async function findSheafOfBytes(db: Db, paperId: string, sha256: string):
   return row ? toSheaf(row) : null
 }
 
-/** The class sets whose scripts may lie in a sheaf, the longest standing first. */
-export async function listSheafClassSets(db: Db, sheafId: string): Promise<string[]> {
-  return (await db('sheaf_class_sets').join('class_sets', 'class_sets.id', 'sheaf_class_sets.class_set_id').where({ sheaf_id: sheafId })
+/** The class sets of one paper whose scripts may lie in a sheaf, the longest standing first. */
+export async function listSheafClassSets(db: Db, sheafId: string, paperId: string): Promise<string[]> {
+  return (await db('sheaf_class_sets').join('class_sets', 'class_sets.id', 'sheaf_class_sets.class_set_id').where({ sheaf_id: sheafId, 'class_sets.paper_id': paperId })
     .orderBy(['class_sets.sat_on', 'class_sets.created_at']).pluck('class_sets.id')) as string[]
+}
+
+/** The papers whose scripts may lie in a sheaf: its own first, others in an order that stays. */
+export async function listSheafPapers(db: Db, sheaf: Pick<Sheaf, 'id' | 'paperId'>): Promise<string[]> {
+  const all = (await db('sheaf_class_sets').join('class_sets', 'class_sets.id', 'sheaf_class_sets.class_set_id').where({ sheaf_id: sheaf.id })
+    .distinct('class_sets.paper_id').orderBy('class_sets.paper_id').pluck('class_sets.paper_id')) as string[]
+  return [sheaf.paperId, ...all.filter((id) => id !== sheaf.paperId)]
 }
 
 export async function startSheaf(db: Db, id: string, leafCount: number): Promise<void> {

@@ -4,16 +4,18 @@ import { join } from 'node:path'
 import { parseArgs } from 'node:util'
 import { z } from 'zod'
 import { AppError, type ErrorCode } from '@/lib/core/errors'
+import type { BlankPage } from '@/lib/core/grey-picture'
 import { readTokensFile } from './read-tokens-file'
 import { certainNumbers } from '@/lib/placing/certain-numbers'
 import { numberBoxesOf } from '@/lib/setting/number-boxes'
 import { readRoster } from '@/lib/setting/read-roster'
 import { ingestSheaf } from '@/lib/tasks/ingest-sheaf'
 
-// npm run -s ingest -- --paper PAPER_DIR --sheaf scan.pdf --out result.json [--threads 1] [--codes tokens.csv]
+// npm run -s ingest -- --paper PAPER_DIR [--paper PAPER_DIR ...] --sheaf scan.pdf --out result.json [--threads 1] [--codes tokens.csv]
+// With several papers each page of the result names its paper, by its place among them from 0; codes are those of the first.
 // Exit 0, or 2 with one line on standard error when the input cannot be used.
 
-const usage = 'usage: ingest --paper PAPER_DIR --sheaf scan.pdf --out result.json [--threads 1] [--codes tokens.csv]'
+const usage = 'usage: ingest --paper PAPER_DIR [--paper PAPER_DIR ...] --sheaf scan.pdf --out result.json [--threads 1] [--codes tokens.csv]'
 const sentences: Partial<Record<ErrorCode, string>> = {
   file_empty: 'is empty; send the file again',
   file_not_pdf: 'is not a PDF',
@@ -67,22 +69,31 @@ async function sheafOf(path: string, folder: string): Promise<string> {
   return (await kindOf(path)) === 'pdf' ? path : (await asSheaf([path], join(folder, 'sheaf.pdf'))).path
 }
 
-async function main(): Promise<void> {
-  const { values } = parseArgs({ options: { paper: { type: 'string' }, sheaf: { type: 'string' }, out: { type: 'string' }, threads: { type: 'string', default: '1' }, codes: { type: 'string' } } })
-  const threads = Number(values.threads)
-  if (!values.paper || !values.sheaf || !values.out || !Number.isInteger(threads) || threads < 1) throw new BadInput(usage)
-  const paperFile = join(values.paper, 'paper.pdf')
-  const file = await paperFileOf(join(values.paper, 'paper.json'))
-  const named = <T>(path: string, work: Promise<T>): Promise<T> =>
-    work.catch((error) => {
-      throw error instanceof AppError ? new BadInput(`${path} ${sentences[error.code] ?? `cannot be used (${error.code})`}`) : error
-    })
+function named<T>(path: string, work: Promise<T>): Promise<T> {
+  return work.catch((error) => {
+    throw error instanceof AppError ? new BadInput(`${path} ${sentences[error.code] ?? `cannot be used (${error.code})`}`) : error
+  })
+}
+
+/** A paper's blank pages and the candidate numbers of its roster. `number` tells it from other papers of the same sheaf. */
+async function readPaper(path: string, number?: number): Promise<{ pages: BlankPage[]; roster: string[] }> {
+  const paperFile = join(path, 'paper.pdf')
+  const file = await paperFileOf(join(path, 'paper.json'))
   const { openBlankPaper } = await import('@/lib/reading/open-blank-paper')
   const blank = await named(paperFile, input(paperFile).then((bytes) => openBlankPaper(bytes)))
   if (file.pages !== undefined && file.pages !== blank.length) throw new BadInput(`${paperFile} has ${blank.length} pages, paper.json says ${file.pages}`)
   const boxes = numberBoxesOf(file)
-  const paper = blank.map((page) => ({ ...page, numberBoxes: boxes.get(page.page) ?? [] }))
-  const roster = boxes.size ? await rosterNumbers(join(values.paper, 'roster.csv')) : []
+  const pages = blank.map((page) => ({ ...page, ...(number === undefined ? {} : { paper: number }), numberBoxes: boxes.get(page.page) ?? [] }))
+  return { pages, roster: boxes.size ? await rosterNumbers(join(path, 'roster.csv')) : [] }
+}
+
+async function main(): Promise<void> {
+  const { values } = parseArgs({ options: { paper: { type: 'string', multiple: true }, sheaf: { type: 'string' }, out: { type: 'string' }, threads: { type: 'string', default: '1' }, codes: { type: 'string' } } })
+  const threads = Number(values.threads)
+  if (!values.paper || !values.sheaf || !values.out || !Number.isInteger(threads) || threads < 1) throw new BadInput(usage)
+  const papers = await Promise.all(values.paper.map((path, k) => readPaper(path, values.paper!.length > 1 ? k : undefined)))
+  const paper = papers.flatMap(({ pages }) => pages)
+  const roster = papers.flatMap(({ roster: numbers }) => numbers)
   const printed = values.codes === undefined ? null : readTokensFile((await input(values.codes)).toString('utf8'))
   if (values.codes !== undefined && !printed) throw new BadInput(`${values.codes} is not a list of printed codes`)
   const called = performance.now()
@@ -91,8 +102,8 @@ async function main(): Promise<void> {
   const reading = sheafOf(values.sheaf, folder).then((sheaf) => ingestSheaf({ sheaf, paper, threads, ...(printed ? { codes: printed.codes } : {}) }))
   const result = await named(values.sheaf, reading).finally(() => rm(folder, { recursive: true }))
   const names = certainNumbers(result.readings, result.findings, roster)
-  const pages = result.findings.map(({ index, half, kind, script, printed: code, paperPage, rotation, homography, confidence, reasons, problem }) => ({
-    index, ...(half === undefined ? {} : { half }), kind, script, candidate_number: printed?.candidates.get(code ?? '') ?? names.get(script ?? 0) ?? null, paper_page: paperPage, rotation, homography, confidence: Number(confidence.toFixed(3)), reasons, ...(problem ? { problem } : {}),
+  const pages = result.findings.map(({ index, half, paper: of, kind, script, printed: code, paperPage, rotation, homography, confidence, reasons, problem }) => ({
+    index, ...(half === undefined ? {} : { half }), ...(of === undefined ? {} : { paper: of }), kind, script, candidate_number: printed?.candidates.get(code ?? '') ?? names.get(script ?? 0) ?? null, paper_page: paperPage, rotation, homography, confidence: Number(confidence.toFixed(3)), reasons, ...(problem ? { problem } : {}),
   }))
   const timings = { startup_s: (called + result.startupSeconds * 1000) / 1000, leaves_s: result.leavesSeconds }
   await writeFile(values.out, `${JSON.stringify({ pages, timings }, null, 1)}\n`).catch(() => {

@@ -6,6 +6,8 @@ export type GreyPicture = Readonly<{ width: number; height: number; data: Uint8A
 /** A page of the blank paper: its size in points, and its picture at `templateDpi` (pixel = point * dpi / 72). */
 export type BlankPage = Readonly<{
   page: number
+  /** Which paper it is a page of, from 0, where a sheaf may hold several. */
+  paper?: number
   widthPoints: number
   heightPoints: number
   picture: GreyPicture

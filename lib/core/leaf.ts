@@ -20,8 +20,8 @@ export type PageImage = Readonly<{
 /** What keeps a leaf from being read at all; `page_incomplete`: a part of its picture is missing in the file. */
 export type LeafProblem = 'page_unreadable' | 'page_too_large' | 'page_incomplete' | 'page_empty'
 
-/** A page of the blank paper that a leaf may be, with how the leaf lies on it. `confidence` runs from 0 to 1, alike for grey, colour and 1-bit scans. */
-export type PageGuess = Readonly<{ paperPage: number; rotation: Turn; homography: Homography; confidence: number }>
+/** A page of the blank paper that a leaf may be, with how the leaf lies on it; `paper` counts from 0 where a sheaf may hold several. `confidence` runs from 0 to 1, alike for grey, colour and 1-bit scans. */
+export type PageGuess = Readonly<{ paper?: number; paperPage: number; rotation: Turn; homography: Homography; confidence: number }>
 
 /** A part of a stored image, in its pixels. */
 export type ImagePart = Readonly<{ x: number; y: number; w: number; h: number }>
@@ -101,6 +101,8 @@ export type LeafFinding = Readonly<{
   half?: 0 | 1
   kind: 'script' | 'blank' | 'loose'
   script: number | null
+  /** The paper it belongs to, from 0, in a sheaf that may hold several; the likeliest for a loose leaf. */
+  paper?: number
   /** The printed script that its code stands for. */
   printed?: string
   paperPage: number | null

@@ -67,6 +67,9 @@ describe('placing leaves in scripts', () => {
     expect(scripts('A1 A2 B1 c2 c1 D1 D2 E1 E2 F1 F2', 2).slice(0, 9)).not.toMatch(/^1 1 2 2/)
     expect(scripts('a1 a2 B1 c2 c1 D1 D2' + more, 2).slice(0, 9)).not.toMatch(/^1 1 2 2/)
   })
+  it('counts an unread leaf after a last page as one in another order', () => {
+    expect(scripts('A1 A2 B1 B2 ? C1 C2', 2)).toBe('1 1 2 2 . 3 3')
+  })
   it('leaves it open whose page 2 lies between a page 1 and another when nothing written tells them apart', () => {
     expect(scripts(`A1 A2 B1 C2 C1 D1 D2${more}`, 2).slice(0, 13)).toBe('1 1 . . . 2 2')
   })

@@ -26,13 +26,21 @@ export function scriptCost(run: readonly Seen[], pages: number, otherOrder: numb
   if (edgeUnknowns(run) > used) return null
   const missing = pages - known.length - used
   const lack = missing > 0 ? costs.missing + costs.eachMore * (missing - 1) : 0
-  return lack + orderCost(known, pages, missing + used, otherOrder) + costs.unread * used + costs.stray * (unknown - used)
+  const order = orderCost(known, pages, missing + used, otherOrder)
+  return lack + (order === 0 && used > 0 && misplaced(run, pages) ? otherOrder : order) + costs.unread * used + costs.stray * (unknown - used)
 }
 
 function edgeUnknowns(run: readonly Seen[]): number {
   const first = run.findIndex((page) => page !== null)
   const last = run.findLastIndex((page) => page !== null)
   return first + (run.length - 1 - last)
+}
+
+/** Whether more unread leaves lie before the first known page, or after the last, than pages can stand there. */
+function misplaced(run: readonly Seen[], pages: number): boolean {
+  const first = run.findIndex((page) => page !== null)
+  const last = run.findLastIndex((page) => page !== null)
+  return first > run[first]! - 1 || run.length - 1 - last > pages - run[last]!
 }
 
 /** Nothing for pages that ascend; one fault for two swapped pages or sheets, or a script laid backwards; more for worse. */

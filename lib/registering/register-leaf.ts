@@ -131,11 +131,11 @@ function fitExactly(cv: Cv, { levelled, half }: Ready, { template, ...place }: C
 
 /** From pixels of 100 dpi on both sides to paper points and pixels of the stored image. */
 function guessOf({ template, map, confidence }: Rival & { confidence: number }, { shrunk }: Ready): PageGuess {
-  const { widthPoints, heightPoints, page } = template.page
+  const { widthPoints, heightPoints, page, paper } = template.page
   const k = 100 / 72
   const by = [shrunk.byX, shrunk.byY, 1]
   const rows = map.map(([a, b, c], row) => [a * k * by[row]!, b * k * by[row]!, c * by[row]!] as const)
   const homography = rows.map((row) => row.map((v) => v / rows[2]![2]!)) as unknown as Homography
   const rotation = turnOf(homography, { x: widthPoints / 2, y: heightPoints / 2 })
-  return { paperPage: page, rotation, homography, confidence }
+  return { ...(paper === undefined ? {} : { paper }), paperPage: page, rotation, homography, confidence }
 }

@@ -55,8 +55,8 @@ function shifted(homography: Homography, { x, y }: ImagePart): Homography {
   return compose([[1, 0, x], [0, 1, y], [0, 0, 1]], homography)
 }
 
-function liesIn({ homography, paperPage }: PageGuess, { x, y, w, h }: ImagePart, paper: readonly Template[]): boolean {
-  const page = paper.find((template) => template.page.page === paperPage)?.page
+function liesIn({ homography, paper: own, paperPage }: PageGuess, { x, y, w, h }: ImagePart, paper: readonly Template[]): boolean {
+  const page = paper.find((template) => template.page.page === paperPage && template.page.paper === own)?.page
   if (!page) return false
   const [across, down] = [outside * w, outside * h]
   return [[0, 0], [page.widthPoints, 0], [page.widthPoints, page.heightPoints], [0, page.heightPoints]].every(([px, py]) => {

@@ -6,13 +6,11 @@ import type { PageImage } from '@/lib/core/leaf'
  * to half as large again; otherwise (photographs, files that lie) the image is taken to show one page from edge to edge.
  */
 export function scanDensity({ width, height, dpiX, dpiY }: PageImage, paper: readonly BlankPage[]): { dpiX: number; dpiY: number } {
-  const page = paper[0]
-  if (!page) return { dpiX, dpiY }
-  const long = Math.max(page.widthPoints, page.heightPoints) / 72
-  const short = Math.min(page.widthPoints, page.heightPoints) / 72
+  const sizes = paper.map(({ widthPoints, heightPoints }) => ({ long: Math.max(widthPoints, heightPoints) / 72, short: Math.min(widthPoints, heightPoints) / 72 }))
   const [w, h] = [width / dpiX, height / dpiY]
   const near = (said: number, should: number) => said > 0.8 * should && said < 1.5 * should
-  if (near(Math.max(w, h), long) && near(Math.min(w, h), short)) return { dpiX, dpiY }
+  if (sizes.length === 0 || sizes.some(({ long, short }) => near(Math.max(w, h), long) && near(Math.min(w, h), short))) return { dpiX, dpiY }
+  const { long, short } = sizes[0]!
   const dpi = Math.max(Math.max(width, height) / long, Math.min(width, height) / short)
   return { dpiX: dpi, dpiY: dpi }
 }

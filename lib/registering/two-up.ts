@@ -14,8 +14,20 @@ const slack = 0.09
  * one. Null when the shape is another, or when the sheet is no larger than one page. Only a guess: the print of each half has to prove it.
  */
 export function halvesOf(image: PageImage, paper: readonly BlankPage[]): Halves | null {
-  const page = paper[0]
-  if (!page) return null
+  const found = paper.map((page) => halvesFor(image, page))
+  // With papers of several sizes a sheet as large as one page of the larger is a single leaf first.
+  const single = paper.some((page) => isSingle(image, page))
+  const first = found.find((halves) => halves?.plain) ?? found.find((halves) => halves !== null) ?? null
+  return first && single ? { ...first, plain: false } : first
+}
+
+function isSingle(image: PageImage, { widthPoints, heightPoints }: BlankPage): boolean {
+  const sides = [image.width / image.dpiX, image.height / image.dpiY].sort((a, b) => a - b) as [number, number]
+  const page = [widthPoints / 72, heightPoints / 72].sort((a, b) => a - b) as [number, number]
+  return near(sides[0], page[0]) && near(sides[1], page[1])
+}
+
+function halvesFor(image: PageImage, page: BlankPage): Halves | null {
   const long = Math.max(page.widthPoints, page.heightPoints) / 72
   const short = Math.min(page.widthPoints, page.heightPoints) / 72
   const across = image.width / image.dpiX >= image.height / image.dpiY

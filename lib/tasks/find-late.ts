@@ -8,7 +8,7 @@ import { joinLate, type EarlierScript, type LateVerdict } from '@/lib/placing/jo
 
 /** Where leaves of a sheaf go that may belong to scripts of earlier sheaves, by their place in `found`; empty when there are none. */
 export async function findLate(trx: Db, sheaf: Sheaf, found: readonly Readonly<{ reading: LeafReading; finding: LeafFinding }>[]): Promise<Map<number, LateVerdict>> {
-  const classSetIds = await listSheafClassSets(trx, sheaf.id)
+  const classSetIds = await listSheafClassSets(trx, sheaf.id, sheaf.paperId)
   const own = new Set((await listLeavesOfPaper(trx, sheaf.paperId)).filter(({ sheafId }) => sheafId === sheaf.id).map(({ id }) => id))
   const pages = (await listScriptPages(trx, sheaf.paperId)).filter(({ leafId }) => leafId !== null)
   const scripts = (await listScripts(trx, sheaf.paperId)).filter(({ classSetId }) => classSetIds.includes(classSetId))

@@ -1,12 +1,13 @@
 import type { BlankPage } from '@/lib/core/grey-picture'
 import type { LeafFinding, LeafReading } from '@/lib/core/leaf'
 import type { PrintedCodes } from '@/lib/core/printed-code'
-import { placePile } from '@/lib/placing/place-pile'
+import { placePapers } from '@/lib/placing/place-papers'
 import { openLeaves, readLeaves } from './read-leaves'
 
 export type SheafInput = Readonly<{
   /** The path of its file. */
   sheaf: string
+  /** The pages of the blank paper, or of several, each page with the number of its paper (from 0). */
   paper: readonly BlankPage[]
   threads?: number
   /** Printed codes that may lie in the sheaf. */
@@ -38,10 +39,16 @@ export async function ingestSheaf({ sheaf, paper, threads = 1, codes, stored = [
     }
     await readLeaves(reader, (index) => readings.has(index), take, threads)
     const inOrder = [...readings.values()].flat().sort((a, b) => a.index - b.index || (a.half ?? 0) - (b.half ?? 0))
-    const findings = placePile(inOrder, paper.length)
+    const findings = placePapers(inOrder, pagesOf(paper))
     const { user, system } = process.cpuUsage(before)
     return { readings: inOrder, findings, startupSeconds: (started - called) / 1000, leavesSeconds: (performance.now() - started) / 1000, leavesCpuSeconds: (user + system) / 1e6 }
   } finally {
     await reader.close()
   }
+}
+
+/** How many pages each paper has. */
+function pagesOf(paper: readonly BlankPage[]): number[] {
+  const papers = 1 + Math.max(0, ...paper.map((page) => page.paper ?? 0))
+  return Array.from({ length: papers }, (_, k) => paper.filter((page) => (page.paper ?? 0) === k).length)
 }

@@ -1,13 +1,13 @@
 import { newId } from '@/lib/core/ids'
-import type { LeafFinding, LeafReading } from '@/lib/core/leaf'
+import type { LeafFinding, LeafReading, PageGuess } from '@/lib/core/leaf'
 import { addAuditLine } from '@/db/audit'
 import type { Db } from '@/db/knex'
-import { getLeaf, getLeafEvidence, listLeavesOfSheaf, listLeavesWithEvidence, moveLeaf, type Leaf } from '@/db/leaves'
+import { getLeaf, getLeafEvidence, listLeavesOfSheaf, listLeavesWithEvidence, moveLeaf, setLeafPaper, type Leaf } from '@/db/leaves'
 import { addScript, addScriptPage, findScriptPage, nextScriptPosition, setCurrentLeaf } from '@/db/scripts'
 import { ensureResponses } from '@/db/responses'
 import { endSheaf, listSheafClassSets, type Sheaf } from '@/db/sheaves'
 import type { LateVerdict } from '@/lib/placing/join-late'
-import { placePile } from '@/lib/placing/place-pile'
+import { placePapers } from '@/lib/placing/place-papers'
 import { codedScript } from './coded-script'
 import { findLate } from './find-late'
 import { askToPrune } from './prune-cuts'
@@ -16,24 +16,38 @@ import { renewSuggestions } from './renew-suggestions'
 
 type Found = Readonly<{ leaf: Leaf; reading: LeafReading; finding: LeafFinding; /** Where it goes when scripts were there before its sheaf. */ late?: LateVerdict | undefined }>
 
+/** Another paper whose scripts may lie in a sheaf, and how many pages it has. */
+export type OtherPaper = Readonly<{ paperId: string; pages: number }>
+
 /**
  * Puts the leaves of a sheaf that is read into scripts, all in the caller's transaction. What is not certain becomes a loose
  * sheet, an empty page stays as a blank one; names are suggested, given only where they were printed on the pages. A page that comes
  * later than its script joins it, in place of an older scan too, and stamps stay where they are on the page. What was placed while the
  * sheaf was still being read, and what a person decided since, stays as it is.
  */
-export async function placeSheaf(trx: Db, sheaf: Sheaf, pages: number): Promise<void> {
+export async function placeSheaf(trx: Db, sheaf: Sheaf, pages: number, others: readonly OtherPaper[] = []): Promise<void> {
   const leaves = await listLeavesWithEvidence(trx, sheaf.id)
-  const findings = placePile(leaves.map(({ evidence }) => evidence.reading), pages)
+  const findings = placePapers(leaves.map(({ evidence }) => evidence.reading), [pages, ...others.map((other) => other.pages)])
   const found = leaves.map(({ leaf, evidence }, k) => ({ leaf, reading: evidence.reading, finding: findings[k]! }))
-  const late = await findLate(trx, sheaf, found)
-  await putFound(trx, sheaf, found.map((one, k) => ({ ...one, late: late.get(k) })))
-  if ([...late.values()].some(({ kind }) => kind === 'join')) await askToPrune(trx, sheaf.paperId)
+  for (const [paper, paperId] of [sheaf.paperId, ...others.map((other) => other.paperId)].entries()) await placeOfPaper(trx, { ...sheaf, paperId }, paper, found)
   await endSheaf(trx, sheaf.id, { state: 'placed' })
   const count = (kind: LeafFinding['kind']) => findings.filter((finding) => finding.kind === kind).length
   const scripts = new Set(findings.flatMap(({ script }) => script ?? [])).size
   const to = `scripts ${scripts}, placed ${count('script')}, loose ${count('loose')}, blank ${count('blank')}`
   await addAuditLine(trx, null, { act: 'sheaf.placed', objectKind: 'sheaf', objectId: sheaf.id, paperId: sheaf.paperId, to })
+}
+
+/** Puts those leaves of a sheaf in place that are of one of its papers (from 0; 0 is the paper it was sent to). From then on they are that paper's alone. */
+async function placeOfPaper(trx: Db, sheaf: Sheaf, paper: number, all: readonly Found[]): Promise<void> {
+  const own = all.filter(({ finding }) => (finding.paper ?? 0) === paper).map(({ leaf, reading, finding }): Found => ({ leaf, reading: { ...reading, guesses: ofPaper(reading.guesses, paper) }, finding: { ...finding, guesses: ofPaper(finding.guesses, paper) } }))
+  if (paper > 0) for (const { leaf } of own) await setLeafPaper(trx, leaf.id, sheaf.paperId)
+  const late = await findLate(trx, sheaf, own)
+  await putFound(trx, sheaf, own.map((one, k) => ({ ...one, late: late.get(k) })))
+  if ([...late.values()].some(({ kind }) => kind === 'join')) await askToPrune(trx, sheaf.paperId)
+}
+
+function ofPaper(guesses: readonly PageGuess[], paper: number): PageGuess[] {
+  return guesses.filter((guess) => (guess.paper ?? 0) === paper).map(({ paperPage, rotation, homography, confidence }) => ({ paperPage, rotation, homography, confidence }))
 }
 
 /** Puts whole scripts at the start of a sheaf in place while the rest is being read, so that they can be marked. Put in place twice it is done once. */
@@ -51,7 +65,7 @@ export async function placeFirst(trx: Db, sheaf: Sheaf, readings: readonly LeafR
 }
 
 async function putFound(trx: Db, sheaf: Sheaf, found: readonly Found[]): Promise<void> {
-  const classSetId = (await listSheafClassSets(trx, sheaf.id))[0]!
+  const classSetId = (await listSheafClassSets(trx, sheaf.id, sheaf.paperId))[0]!
   // A script of which a leaf lies in place already is there, whole: nothing is added to it by itself.
   const there = new Set(found.flatMap(({ leaf, finding }) => (leaf.state === 'read' ? [] : (finding.script ?? []))))
   const scriptIds = new Map<number, string>()

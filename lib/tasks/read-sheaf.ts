@@ -5,7 +5,7 @@ import type { LeafFinding, LeafReading } from '@/lib/core/leaf'
 import { db, transaction } from '@/db/knex'
 import { addLeafReading, listLeavesWithEvidence } from '@/db/leaves'
 import { getPaper } from '@/db/papers'
-import { getSheaf, startSheaf, type Sheaf } from '@/db/sheaves'
+import { getSheaf, listSheafPapers, startSheaf, type Sheaf } from '@/db/sheaves'
 import { getStoredFile } from '@/db/stored-files'
 import { env } from '@/lib/infra/env'
 import { keptPath, readKept } from '@/lib/infra/file-store'
@@ -24,18 +24,29 @@ import { printedCodesOf } from './printed-codes-of'
 export async function readSheaf(sheafId: string, goOn: () => boolean): Promise<boolean> {
   const sheaf = await getSheaf(db(), sheafId)
   if (!sheaf || sheaf.state === 'placed') return true
-  const paper = await getPaper(db(), sheaf.paperId)
-  const reader = await openLeaves(keptPath(sheaf.sha256), await blankPagesOf(paper), env.SHEAFMARK_THREADS, await printedCodesOf(db(), sheaf.paperId))
+  const papers = await papersOf(sheaf)
+  const [paper, ...others] = papers as [Paper, ...Paper[]]
+  const blank = await Promise.all(papers.map(async (one, k) => (await blankPagesOf(one)).map((page) => (others.length > 0 ? { ...page, paper: k } : page))))
+  const reader = await openLeaves(keptPath(sheaf.sha256), blank.flat(), env.SHEAFMARK_THREADS, await printedCodesOf(db(), sheaf.paperId))
   try {
     await transaction((trx) => startSheaf(trx, sheafId, reader.pageCount))
-    if (!(await readMissing(reader, sheaf, paper!.pages.length, goOn))) return false
+    if (!(await readMissing(reader, sheaf, others.length > 0 ? null : paper.pages.length, goOn))) return false
   } finally {
     await reader.close()
   }
   return transaction(async (trx) => {
     if (!goOn()) return false
-    if (await isBeingRead(trx, sheafId)) await placeSheaf(trx, sheaf, paper!.pages.length)
+    if (await isBeingRead(trx, sheafId)) await placeSheaf(trx, sheaf, paper.pages.length, others.map(({ id, pages }) => ({ paperId: id, pages: pages.length })))
     return true
+  })
+}
+
+/** The papers whose scripts may lie in a sheaf, its own first. */
+async function papersOf(sheaf: Sheaf): Promise<Paper[]> {
+  const papers = await Promise.all((await listSheafPapers(db(), sheaf)).map((id) => getPaper(db(), id)))
+  return papers.map((paper) => {
+    if (!paper) throw new AppError('paper_invalid')
+    return paper
   })
 }
 
@@ -53,10 +64,11 @@ async function isBeingRead(db: Parameters<typeof getSheaf>[0], sheafId: string):
   return (await getSheaf(db, sheafId))?.state === 'reading'
 }
 
-async function readMissing(reader: LeafReader, sheaf: Sheaf, pages: number, goOn: () => boolean): Promise<boolean> {
+async function readMissing(reader: LeafReader, sheaf: Sheaf, pages: number | null, goOn: () => boolean): Promise<boolean> {
   const readings = (await listLeavesWithEvidence(db(), sheaf.id)).map(({ evidence }) => evidence.reading)
   const known = new Set(readings.map(({ index }) => index))
-  const placeMore = firstPlacer(pages)
+  // Where several papers may lie in a sheaf, nothing is certain before its end.
+  const placeMore = pages === null ? () => nothingYet : firstPlacer(pages)
   // Once one lane has stopped, the reader is closing and what the other lanes bring is no finding.
   let open = true
   const store = async (leaves: readonly LeafReading[]) => {
@@ -85,6 +97,8 @@ const oftenest = 4
 const part = 0.08
 
 type First = Readonly<{ readings: readonly LeafReading[]; findings: readonly LeafFinding[] }>
+
+const nothingYet: First = { readings: [], findings: [] }
 
 /** Finds scripts that can be put in place, each once. Asked with all readings so far, in any order. */
 function firstPlacer(pages: number): (readings: readonly LeafReading[]) => First {

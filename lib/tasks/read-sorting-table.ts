@@ -8,7 +8,7 @@ import { db } from '@/db/knex'
 import { getLeafEvidence, listLeavesOfPaper, listPlacedReasons, type Leaf, type LeafEvidence } from '@/db/leaves'
 import { getPaper } from '@/db/papers'
 import { listScriptPages, listScripts } from '@/db/scripts'
-import { listSheaves } from '@/db/sheaves'
+import { getSheaf, listSheaves } from '@/db/sheaves'
 import { lastSortingDecision } from '@/db/sorting-decisions'
 import { latePlaces, likelyPlaces, mostPlaces } from '@/lib/placing/likely-places'
 import { gatePaper } from './gate-paper'
@@ -22,6 +22,8 @@ export async function readSortingTable(actor: Actor, paperId: string): Promise<S
   const sheaves = await listSheaves(db(), paperId)
   const names = new Map(sheaves.map((sheaf) => [sheaf.id, sheaf.name]))
   const leaves = await listLeavesOfPaper(db(), paperId)
+  // Leaves may have come in a sheaf that was sent to another paper.
+  for (const id of new Set(leaves.map(({ sheafId }) => sheafId))) if (!names.has(id)) names.set(id, (await getSheaf(db(), id))?.name ?? '')
   const loose = leaves.filter((leaf) => leaf.state === 'loose')
   const evidence = await getLeafEvidence(db(), loose.map(({ id }) => id))
   const classes = await listSittingClasses(db(), paperId)

@@ -4,10 +4,10 @@ import { Alarm } from '@/components/ui/alarm'
 import type { UploadState } from './sheaf-upload'
 import style from './scan.module.css'
 
-type DropPlaceProps = Readonly<{ upload: UploadState; lead: boolean; label: string; brokenOff: readonly string[]; onFile: (file: File) => void; onGoOn: () => void; onStop: () => void }>
+type DropPlaceProps = Readonly<{ upload: UploadState; lead: boolean; label: string; brokenOff: readonly string[]; onFiles: (files: readonly File[]) => void; onGoOn: () => void; onStop: () => void }>
 
 /** The button that chooses a sheaf, and how far it has come on its way. The whole page takes a dropped file. */
-export function DropPlace({ upload, lead, label, brokenOff, onFile, onGoOn, onStop }: DropPlaceProps) {
+export function DropPlace({ upload, lead, label, brokenOff, onFiles, onGoOn, onStop }: DropPlaceProps) {
   const input = useRef<HTMLInputElement>(null)
   if (upload.step === 'sending' || upload.step === 'waiting' || upload.step === 'checking') return <Sending upload={upload} onGoOn={onGoOn} onStop={onStop} />
   return (
@@ -16,10 +16,10 @@ export function DropPlace({ upload, lead, label, brokenOff, onFile, onGoOn, onSt
       {upload.step === 'none' && brokenOff.length > 0 && <p className="mb-3">{brokenOff[0]} did not arrive whole. Choose the same file again: it goes on where it stopped.</p>}
       <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
         <button type="button" className={`btn ${lead ? 'lead' : ''}`} onClick={() => input.current?.click()}>{label}</button>
-        <span className="soft">or drop the PDF (or a JPEG, PNG or TIFF) anywhere on this page</span>
+        <span className="soft">or drop the PDF, or pictures (JPEG, PNG, TIFF), anywhere on this page</span>
       </div>
-      <input ref={input} type="file" accept="application/pdf,image/jpeg,image/png,image/tiff,.pdf,.jpg,.jpeg,.png,.tif,.tiff" className="vh" tabIndex={-1} aria-label="The sheaf, as a PDF or picture"
-        onChange={(event) => { const file = event.target.files?.[0]; event.target.value = ''; if (file) onFile(file) }} />
+      <input ref={input} type="file" multiple accept="application/pdf,image/jpeg,image/png,image/tiff,.pdf,.jpg,.jpeg,.png,.tif,.tiff" className="vh" tabIndex={-1} aria-label="The sheaf, as a PDF or pictures"
+        onChange={(event) => { const files = [...(event.target.files ?? [])]; event.target.value = ''; onFiles(files) }} />
     </div>
   )
 }

@@ -7,6 +7,7 @@ import { ask } from '@/components/ui/ask'
 import type { ScanPageData } from '@/lib/core/sheaf-progress'
 import { ChooseClasses } from './choose-classes'
 import { DropPlace } from './drop-place'
+import { oneFile } from './one-file'
 import { SheafSection } from './sheaf-section'
 import { counted } from './sheaf-words'
 import { useUpload } from './use-upload'
@@ -38,17 +39,19 @@ export function ScanBoard({ paperId, start }: { paperId: string; start: ScanPage
   const ready = data.hasBlankPaper && data.classSets.length > 0
   const busy = upload.state.step !== 'none' && upload.state.step !== 'refused'
 
-  const take = (file: File | undefined) => {
-    if (!file || !ready || busy) return
-    if (data.classSets.length > 1) setAsking(file)
+  const take = async (files: readonly File[]) => {
+    if (files.length === 0 || !ready || busy) return
+    const file = await oneFile(files)
+    if (!file) upload.refuse(files[0]!.name, 'files_mixed')
+    else if (data.classSets.length > 1) setAsking(file)
     else upload.send(file, [])
   }
   const dropping = {
     onDragOver: (event: DragEvent) => { event.preventDefault(); setOver(true) },
     onDragLeave: (event: DragEvent) => { if (event.currentTarget === event.target) setOver(false) },
-    onDrop: (event: DragEvent) => { event.preventDefault(); setOver(false); take(event.dataTransfer.files[0]) },
+    onDrop: (event: DragEvent) => { event.preventDefault(); setOver(false); void take([...event.dataTransfer.files]) },
   }
-  const place = (lead: boolean, label: string) => <DropPlace upload={upload.state} lead={lead} label={label} brokenOff={upload.brokenOff} onFile={take} onGoOn={upload.goOn} onStop={upload.stop} />
+  const place = (lead: boolean, label: string) => <DropPlace upload={upload.state} lead={lead} label={label} brokenOff={upload.brokenOff} onFiles={(files) => void take(files)} onGoOn={upload.goOn} onStop={upload.stop} />
   const readAgain = (sheafId: string) => void ask(`/api/sheaves/${sheafId}/again`, { method: 'POST' }).finally(again)
 
   return (

@@ -1,8 +1,9 @@
 'use client'
 import { useEffect, useRef, useState } from 'react'
+import type { ErrorCode } from '@/lib/core/errors'
 import { brokenOff, sendSheaf, type Running, type UploadState } from './sheaf-upload'
 
-type Upload = Readonly<{ state: UploadState; brokenOff: readonly string[]; send: (file: File, classSetIds: readonly string[]) => void; goOn: () => void; stop: () => void }>
+type Upload = Readonly<{ state: UploadState; brokenOff: readonly string[]; send: (file: File, classSetIds: readonly string[]) => void; refuse: (name: string, code: ErrorCode) => void; goOn: () => void; stop: () => void }>
 
 /** One sheaf at a time on its way to the server. Goes on by itself when the browser finds the line again. */
 export function useUpload(paperId: string, limitMb: number, arrived: () => void): Upload {
@@ -27,6 +28,7 @@ export function useUpload(paperId: string, limitMb: number, arrived: () => void)
   return {
     state, brokenOff: broken,
     send: (file, classSetIds) => { running.current = sendSheaf({ paperId, file, classSetIds, limitMb, say, arrived }) },
+    refuse: (name, code) => say({ step: 'refused', name, code, detail: {} }),
     goOn: () => running.current?.goOn(),
     stop: () => running.current?.stop(),
   }

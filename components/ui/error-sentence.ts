@@ -43,6 +43,7 @@ const sentences: Record<ErrorCode | 'failed', string | ((detail: ErrorDetail) =>
   file_too_large: ({ limitMb }) => `This file is larger than ${limitMb ?? 2048} MB. Scan in grey at 200 dpi, or in two parts.`,
   file_not_pdf: 'This is not a PDF. Set the copier to save as PDF, and choose that file.',
   file_kind_unknown: 'This is neither a PDF nor a picture (JPEG, PNG, TIFF). Set the copier to save as PDF, and choose that file.',
+  files_mixed: 'Choose one PDF at a time, or up to 500 pictures (JPEG, PNG, TIFF) that make one sheaf together.',
   file_heic: 'This is a phone picture (HEIC) that cannot be read here. In the phone’s camera settings choose the most compatible format, or share the photos as JPEG or PDF, and choose those.',
   file_encrypted: 'This PDF asks for a password. Save a copy without one and choose that copy.',
   file_damaged: 'This file is damaged and no page of it can be found. Copy or scan it again.',

@@ -41,6 +41,7 @@ export const errorStatus = {
   file_not_pdf: 422,
   file_kind_unknown: 422,
   file_heic: 422,
+  files_mixed: 422,
   file_encrypted: 422,
   file_damaged: 422,
   file_no_pages: 422,

@@ -1,12 +1,15 @@
 import { closeSync, fstatSync, openSync, readSync } from 'node:fs'
 
-/** A file of which pieces are read where they lie; nothing of it is kept. Close it after use. */
+/** A file, or a part of one, of which pieces are read where they lie; nothing of it is kept. Close it after use. */
 export class FileWindow {
   readonly size: number
   private readonly handle: number
-  constructor(path: string) {
+  private readonly start: number
+  constructor(path: string, part?: Readonly<{ at: number; size: number }>) {
     this.handle = openSync(path, 'r')
-    this.size = fstatSync(this.handle).size
+    const { size } = fstatSync(this.handle)
+    this.start = part?.at ?? 0
+    this.size = part ? Math.max(0, Math.min(part.size, size - part.at)) : size
   }
 
   /** Up to `length` bytes from `at`; fewer at the end of the file. */
@@ -15,7 +18,7 @@ export class FileWindow {
     const bytes = Buffer.allocUnsafeSlow(wanted)
     let got = 0
     while (got < wanted) {
-      const more = readSync(this.handle, bytes, got, wanted - got, at + got)
+      const more = readSync(this.handle, bytes, got, wanted - got, this.start + at + got)
       if (more === 0) return bytes.subarray(0, got)
       got += more
     }

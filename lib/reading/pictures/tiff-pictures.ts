@@ -14,7 +14,7 @@ const reversed = Uint8Array.from({ length: 256 }, (_, byte) => { let out = 0; fo
  * The pages of a TIFF one after the other. Strips in G4 coding go into the page as they are, all else is decoded. A page that cannot be
  * read is given as a broken one, to be reported in its place. Throws file_damaged when not even the first page's head can be read.
  */
-export async function* tiffPictures(file: FileWindow, path: string): AsyncGenerator<PagePicture> {
+export async function* tiffPictures(file: FileWindow, source: string | Uint8Array): AsyncGenerator<PagePicture> {
   const { form, first } = openTiff(file)
   const seen = new Set<number>()
   for (let at = first, page = 0; at !== 0 && !seen.has(at); page++) {
@@ -28,7 +28,7 @@ export async function* tiffPictures(file: FileWindow, path: string): AsyncGenera
       yield brokenPicture(1, 1)
       return
     }
-    if (!isPreview(directory)) yield await pictureOf(file, path, directory, page)
+    if (!isPreview(directory)) yield await pictureOf(file, source, directory, page)
     at = directory.next
   }
   if (seen.size === 0) throw new AppError('file_no_pages')
@@ -41,14 +41,14 @@ function isPreview(directory: TiffDirectory): boolean {
   return (number(directory, 254, 0) & smallPreview) === 1
 }
 
-async function pictureOf(file: FileWindow, path: string, directory: TiffDirectory, page: number): Promise<PagePicture> {
+async function pictureOf(file: FileWindow, source: string | Uint8Array, directory: TiffDirectory, page: number): Promise<PagePicture> {
   const [width, height] = [number(directory, 256, 0), number(directory, 257, 0)]
   const perInch = number(directory, 296, 2) === centimetre ? 2.54 : 1
   const facts = { width, height, dpiX: number(directory, 282, 0) * perInch, dpiY: number(directory, 283, 0) * perInch, orientation: number(directory, 274, 1) }
   if (!(width >= 1 && height >= 1) || width * height > mostPixels) return brokenPicture(width, height)
   const oneBit = number(directory, 258, 1) === 1 && number(directory, 277, 1) === 1
   const parts = oneBit && number(directory, 259, 1) === g4 ? faxStrips(file, directory, width, height) : null
-  return parts ? { ...facts, parts } : decodedPicture(path, page, { ...facts, oneBit })
+  return parts ? { ...facts, parts } : decodedPicture(source, page, { ...facts, oneBit })
 }
 
 /** A page's strips as they are coded; null when they are not to be had. */

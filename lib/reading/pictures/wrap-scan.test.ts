@@ -8,6 +8,7 @@ import { openSheaf } from '@/lib/reading/open-sheaf'
 import { greyDifference } from '@/tests/make/compare-pages'
 import { pagePictures, type PagePictures } from '@/tests/make/page-kinds'
 import { tiffOf } from '@/tests/make/tiff'
+import { oneFile } from '@/components/scan/one-file'
 import { wrapScan } from './wrap-scan'
 
 let folder = ''
@@ -135,5 +136,17 @@ describe('files that are no scan', () => {
     const file = await wrapped(one, two)
     expect(await sheetOf(file)).toMatchObject({ pages: 2, image: { encoding: 'jpeg' } })
     expect(readFileSync(file).equals(readFileSync(await wrapped(one, two)))).toBe(true)
+  })
+
+  it('several pictures chosen at once come as one file, and are the same sheaf', async () => {
+    const files = [['page 10.png', await grey().png().toBuffer()], ['page 9.jpg', await grey().jpeg().toBuffer()], ['page 11.tif', await grey().tiff({ compression: 'lzw' }).toBuffer()]] as const
+    const sent = await oneFile(files.map(([name, bytes]) => new File([new Uint8Array(bytes)], name)))
+    expect(sent!.name).toBe('page 9.jpg and 2 more')
+    const pack = Buffer.from(await sent!.arrayBuffer())
+    const file = await wrapped(pack)
+    expect(readFileSync(file).equals(readFileSync(await wrapped(files[1][1], files[0][1], files[2][1])))).toBe(true)
+    expect(await offPage(file, 2)).toBeLessThan(2.5)
+    await expect(wrapped(pack.subarray(0, pack.length - 10))).rejects.toMatchObject({ code: 'file_damaged' })
+    expect(await oneFile([new File(['%PDF-1.4'], 'a.pdf'), new File([new Uint8Array(files[0][1])], 'b.png')])).toBeNull()
   })
 })

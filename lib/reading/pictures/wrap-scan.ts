@@ -1,5 +1,6 @@
 import { AppError } from '@/lib/core/errors'
 import { fileKind, kindBytes } from '@/lib/core/file-kind'
+import { packHeadBytes, packedPlaces } from '@/lib/core/picture-pack'
 import { FileWindow } from '@/lib/reading/pdf/file-window'
 import { mostPages } from '@/lib/reading/sheaf-page'
 import { jpegPicture } from './jpeg-picture'
@@ -22,23 +23,36 @@ export async function wrapScan(files: readonly string[], to: string): Promise<vo
 }
 
 async function* allPictures(files: readonly string[]): AsyncGenerator<PagePicture> {
-  for (const path of files) {
-    const file = new FileWindow(path)
-    try {
-      yield* picturesOf(file, path)
-    } finally {
-      file.close()
-    }
+  for (const path of files) yield* withFile(path, undefined, (file) => scanOf(file, path))
+}
+
+type Part = Readonly<{ at: number; size: number }>
+async function* withFile(path: string, part: Part | undefined, work: (file: FileWindow) => AsyncGenerator<PagePicture>): AsyncGenerator<PagePicture> {
+  const file = new FileWindow(path, part)
+  try {
+    yield* work(file)
+  } finally {
+    file.close()
   }
 }
 
-async function* picturesOf(file: FileWindow, path: string): AsyncGenerator<PagePicture> {
+async function* scanOf(file: FileWindow, path: string): AsyncGenerator<PagePicture> {
+  if (fileKind(file.read(0, kindBytes)) !== 'pack') return yield* picturesOf(file, path)
+  const places = packedPlaces(file.read(0, packHeadBytes))
+  if (!places || places.some(({ at, size }) => at + size > file.size)) throw new AppError('file_damaged')
+  // a picture within another file is read whole
+  for (const place of places) yield* withFile(path, place, (picture) => picturesOf(picture, null))
+}
+
+/** @param path the file that is nothing but this scan; null for one that lies within another file */
+async function* picturesOf(file: FileWindow, path: string | null): AsyncGenerator<PagePicture> {
   if (file.size === 0) throw new AppError('file_empty')
   const kind = fileKind(file.read(0, kindBytes))
-  if (kind === 'tiff') return yield* tiffPictures(file, path)
   if (kind === 'heic') throw new AppError('file_heic')
-  if (kind !== 'jpeg' && kind !== 'png') throw new AppError('file_kind_unknown')
+  if (kind !== 'jpeg' && kind !== 'png' && kind !== 'tiff') throw new AppError('file_kind_unknown')
+  if (kind === 'tiff' && path !== null) return yield* tiffPictures(file, path)
   if (file.size > mostBytes) throw new AppError('file_too_large', { limitMb: mostBytes >> 20 })
   const bytes = file.read(0, file.size)
-  yield kind === 'jpeg' ? await jpegPicture(bytes) : await pngPicture(bytes)
+  if (kind === 'tiff') yield* tiffPictures(file, bytes)
+  else yield kind === 'jpeg' ? await jpegPicture(bytes) : await pngPicture(bytes)
 }

@@ -2,6 +2,8 @@ import { spawn } from 'node:child_process'
 import { readFile } from 'node:fs/promises'
 import { join } from 'node:path'
 import { parseArgs } from 'node:util'
+import { clearFrom } from '@/lib/registering/register-leaf'
+import { calibrated, derivedThreshold, placedConfidences, printConfidences, sayCalibration } from '@/tests/accuracy/calibration'
 import { classSetFolder, classSets, scoreFolder } from '@/tests/accuracy/class-set'
 import { percentile } from '@/tests/accuracy/score-result'
 
@@ -51,15 +53,23 @@ async function bench(name: string, folder: string): Promise<void> {
   const strangers = numbers.strangersNamed ? `, STRANGERS NAMED ${numbers.strangersNamed}` : ''
   const gap = Number.isFinite(ink.leastWritten) ? `, empty at most ${ink.mostBlank.toFixed(2)} mm², written at least ${ink.leastWritten.toFixed(2)}` : ''
   console.log(`${''.padEnd(10)} digits right ${numbers.digitsRight}/${numbers.digits}  numbers right ${numbers.right} wrong ${numbers.wrong} left open ${numbers.open}${strangers}  |  nothing written found ${ink.hits}/${ink.blank}, written taken for empty ${ink.misses}/${ink.written}${gap}`)
-  const steps = [0, 0.2, 0.4, 0.6, 0.8, 0.95, 1.01]
-  const placed = result.findings.filter((finding) => finding.kind === 'script')
-  const bins = steps.slice(1).map((to, k) => `${steps[k]}-${Math.min(1, to)}: ${placed.filter((f) => f.confidence >= steps[k]! && f.confidence < to).length}`)
-  console.log(`${''.padEnd(10)} placed by confidence  ${bins.join('  ')}`)
+  const [print, placed] = [printConfidences(last!), placedConfidences(last!)]
+  console.log(`${''.padEnd(10)} right of placed at each confidence  ${sayCalibration(calibrated(placed))}`)
+  byPrint.push(...print)
+  byPlace.push(...placed)
 }
+
+/** Confidences of all sets together: of each leaf's likeliest page, and of what was placed. */
+const byPrint: ReturnType<typeof printConfidences> = []
+const byPlace: ReturnType<typeof placedConfidences> = []
 
 async function main(): Promise<void> {
   console.log(`${rounds} rounds, medians; ${threads} thread(s); the peer runs in the same command`)
   const folders = positionals.length ? positionals.map((folder) => [folder.split('/').at(-1)!, folder] as const) : classSets.map((name) => [name, classSetFolder(name)] as const)
   for (const [name, folder] of folders) await bench(name, folder)
+  const steps = calibrated(byPrint)
+  console.log(`all sets   right page by print alone at each confidence  ${sayCalibration(steps)}`)
+  console.log(`${''.padEnd(10)} right of placed at each confidence  ${sayCalibration(calibrated(byPlace))}`)
+  console.log(`${''.padEnd(10)} a print is believed from ${clearFrom}; these sets ask for ${derivedThreshold(steps).toFixed(1)}`)
 }
 main()

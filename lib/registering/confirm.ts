@@ -45,7 +45,8 @@ function likeness({ width, height, data }: GreyPicture, [[a, b, c], [d, e, f], [
 }
 
 function lightAt(data: Uint8Array, width: number, u: number, v: number): number {
-  const [m, n] = [u | 0, v | 0]
+  const m = u | 0
+  const n = v | 0
   const p = u - m
   const at = n * width + m
   const upper = data[at]! + (data[at + 1]! - data[at]!) * p

@@ -1,4 +1,5 @@
-const dark = 165
+import type { DarkRuns } from './dark-runs'
+
 /** Signs of a hand (digits and letters) are between these heights and widths, in pixels of 100 dpi. */
 const lowest = 8
 const highest = 44
@@ -21,14 +22,13 @@ export class HandCounter {
   private lean = 0
   private steps = 0
 
-  /** Adds the next line of a page: its light where it is free of print, white elsewhere. */
-  add(line: Uint8Array, y: number): void {
+  /** Adds the next line of a page by its dark pieces. */
+  add(found: DarkRuns, y: number): void {
+    if (found.count === 0 && this.above.length === 0) return
     const runs: Run[] = []
     let k = 0
-    for (let x = 0; x < line.length; x++) {
-      if (line[x]! >= dark) continue
-      const from = x
-      while (x < line.length && line[x]! < dark) x++
+    for (let n = 0; n < found.count; n++) {
+      const [from, x] = [found.from[n]!, found.to[n]!]
       while (k < this.above.length && this.above[k]!.to < from) k++
       let sign: Sign | null = null
       let touched = 0

@@ -9,7 +9,7 @@ export type Levelled = Readonly<{ white: GreyPicture; ink: GreyPicture }>
 /** Darker than this nothing is paper: the scanner's lid, or what lies beyond the sheet. */
 const darkestPaper = 90
 
-/** What a pixel becomes on paper of a certain brightness, at [brightness * 256 + pixel]: looking up costs a tenth of reckoning here. */
+/** What a pixel becomes on paper of a certain brightness, at [brightness * 256 + pixel]. */
 const whites = table((paper, v) => Math.min(255, paper < darkestPaper ? v * 1000 : Math.round((v * 255) / paper)))
 const inks = table((paper, v) => (paper < darkestPaper ? 0 : Math.max(0, Math.floor(((paper - v) * 255) / paper))))
 
@@ -30,24 +30,29 @@ export function level(picture: GreyPicture, memory: Memory = fresh): Levelled {
 }
 
 function whitened({ width, height, data }: GreyPicture, paper: GreyPicture, out: Uint8Array): GreyPicture {
-  const blocks = paper.width
-  for (let y = 0; y < height; y++) {
-    const row = Math.min(paper.height - 1, y >> 2) * blocks
-    let at = y * width
-    for (let x = 0; x < blocks; x++, at += 4) {
-      const tone = paper.data[row + x]! << 8
-      out[at] = whites[tone | data[at]!]!
-      out[at + 1] = whites[tone | data[at + 1]!]!
-      out[at + 2] = whites[tone | data[at + 2]!]!
-      out[at + 3] = whites[tone | data[at + 3]!]!
-    }
-    const last = paper.data[row + blocks - 1]! << 8
-    for (const end = (y + 1) * width; at < end; at++) out[at] = whites[last | data[at]!]!
-  }
+  for (let y = 0; y < height; y++) whitenLine(data, y * width, width, paper.data, Math.min(paper.height - 1, y >> 2) * paper.width, paper.width, out)
   return { width, height, data: out }
 }
 
+/** One line, from `at` on, by the tones of the blocks of four pixels over it. */
+function whitenLine(data: Uint8Array, at: number, width: number, tones: Uint8Array, row: number, blocks: number, out: Uint8Array): void {
+  const end = at + width
+  let tone = 0
+  for (let x = 0; x < blocks && at + 4 <= end; x++, at += 4) {
+    tone = tones[row + x]! << 8
+    out[at] = whites[tone | data[at]!]!
+    out[at + 1] = whites[tone | data[at + 1]!]!
+    out[at + 2] = whites[tone | data[at + 2]!]!
+    out[at + 3] = whites[tone | data[at + 3]!]!
+  }
+  for (; at < end; at++) out[at] = whites[tone | data[at]!]!
+}
+
 function inkOf(small: GreyPicture, paper: GreyPicture, out: Uint8Array): GreyPicture {
-  for (let k = 0; k < out.length; k++) out[k] = inks[(paper.data[k]! << 8) | small.data[k]!]!
+  for (let y = 0; y < small.height; y++) inkLine(small.data, paper.data, y * small.width, (y + 1) * small.width, out)
   return { ...small, data: out }
+}
+
+function inkLine(small: Uint8Array, paper: Uint8Array, from: number, to: number, out: Uint8Array): void {
+  for (let k = from; k < to; k++) out[k] = inks[(paper[k]! << 8) | small[k]!]!
 }

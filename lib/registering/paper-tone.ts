@@ -16,24 +16,31 @@ export function paperTone({ width, height, data }: GreyPicture): Uint8Array {
     for (let y = 0; y < height; y++) canvas.set(from.subarray(at + y * across, at + y * across + width), (y + edge) * stride + edge)
   }
   lay(data, 0, width, 0)
-  for (const step of [1, stride]) for (const by of doublings) lightest(canvas, step * by)
+  sweep(canvas, stride, lightest)
   lay(canvas.slice(), 0, stride, 255)
-  for (const step of [1, stride]) for (const by of doublings) darkest(canvas, step * by)
+  sweep(canvas, stride, darkest)
   return smoothed(canvas, stride, width, height)
 }
 
 /** Looking 1, 2, 4 and 1 further on, each time at what was found before, looks 8 further on in all. */
 const doublings = [1, 2, 4, 1]
 
-// Every pixel becomes the extreme of itself and those after it, so a window's middle ends up at its first pixel.
-function lightest(data: Uint8Array, by: number): void {
-  for (let k = 0, end = data.length - by; k < end; k++) {
+/**
+ * Makes every pixel the extreme of the square that begins there, so a square's middle ends up at its upper left. Lines run into
+ * each other, but only where there is nothing but edge.
+ */
+function sweep(canvas: Uint8Array, stride: number, extreme: (data: Uint8Array, from: number, to: number, by: number) => void): void {
+  for (const step of [1, stride])
+    for (const by of doublings) for (let from = 0, end = canvas.length - step * by; from < end; from += stride) extreme(canvas, from, Math.min(end, from + stride), step * by)
+}
+function lightest(data: Uint8Array, from: number, to: number, by: number): void {
+  for (let k = from; k < to; k++) {
     const other = data[k + by]!
     if (other > data[k]!) data[k] = other
   }
 }
-function darkest(data: Uint8Array, by: number): void {
-  for (let k = 0, end = data.length - by; k < end; k++) {
+function darkest(data: Uint8Array, from: number, to: number, by: number): void {
+  for (let k = from; k < to; k++) {
     const other = data[k + by]!
     if (other < data[k]!) data[k] = other
   }
@@ -42,16 +49,23 @@ function darkest(data: Uint8Array, by: number): void {
 /** Means of 5 x 5; at the edge the outermost pixels go on. */
 function smoothed(from: Uint8Array, stride: number, width: number, height: number): Uint8Array {
   const lines = new Uint16Array(width * height)
-  for (let y = 0; y < height; y++)
-    for (let x = 0, at = y * stride, to = y * width; x < width; x++, to++) {
-      if (x >= 2 && x + 2 < width) lines[to] = from[at + x - 2]! + from[at + x - 1]! + from[at + x]! + from[at + x + 1]! + from[at + x + 2]!
-      else for (let k = -2; k <= 2; k++) lines[to]! += from[at + Math.min(width - 1, Math.max(0, x + k))]!
-    }
+  for (let y = 0; y < height; y++) sumLine(from, y * stride, width, lines, y * width)
   const out = new Uint8Array(width * height)
-  for (let y = 0, to = 0; y < height; y++) {
-    const [a, b, c, d, e] = [-2, -1, 0, 1, 2].map((k) => Math.min(height - 1, Math.max(0, y + k)) * width) as [number, number, number, number, number]
-    // a 25th, exactly, for sums up to 25 * 255
-    for (let x = 0; x < width; x++, to++) out[to] = ((lines[a + x]! + lines[b + x]! + lines[c + x]! + lines[d + x]! + lines[e + x]! + 12) * 5243) >> 17
-  }
+  const line = (y: number) => Math.min(height - 1, Math.max(0, y)) * width
+  for (let y = 0; y < height; y++) meanLine(lines, line(y - 2), line(y - 1), line(y), line(y + 1), line(y + 2), out, y * width, width)
   return out
+}
+
+function sumLine(from: Uint8Array, at: number, width: number, lines: Uint16Array, to: number): void {
+  for (let x = 2; x < width - 2; x++) lines[to + x] = from[at + x - 2]! + from[at + x - 1]! + from[at + x]! + from[at + x + 1]! + from[at + x + 2]!
+  for (const x of new Set([0, 1, width - 2, width - 1]))
+    if (x >= 0 && x < width) {
+      lines[to + x] = 0
+      for (let k = -2; k <= 2; k++) lines[to + x]! += from[at + Math.min(width - 1, Math.max(0, x + k))]!
+    }
+}
+
+function meanLine(lines: Uint16Array, a: number, b: number, c: number, d: number, e: number, out: Uint8Array, to: number, width: number): void {
+  // a 25th, exactly, for sums up to 25 * 255
+  for (let x = 0; x < width; x++) out[to + x] = ((lines[a + x]! + lines[b + x]! + lines[c + x]! + lines[d + x]! + lines[e + x]! + 12) * 5243) >> 17
 }

@@ -6,18 +6,16 @@ import { coarsePlaces, type Candidate } from './coarse'
 import { printFound, shareFound } from './confirm'
 import { isEmpty } from './is-empty'
 import { fineFit } from './fine-fit'
-import { inkMap } from './ink-map'
 import { level, type Levelled } from './level'
 import { reused } from './memory'
 import type { Cv } from './opencv'
-import { penOf } from './pen-of'
 import { placeByCode, turnedAbout } from './place-by-code'
 import { scanDensity } from './scan-density'
 import { boxShrink, shrinkTo, type Shrunk } from './shrink'
 import { skews } from './skews'
-import { strokeMap } from './stroke-map'
 import type { Template } from './template'
 import { confidences, type Rival } from './weigh'
+import { writingOf } from './writing-of'
 
 /** A leaf made ready for being compared: levelled at 100 dpi. */
 export type Ready = Readonly<{ shrunk: Shrunk; levelled: Levelled; half: GreyPicture; ink12: GreyPicture }>
@@ -49,9 +47,7 @@ export function registerLeaf(cv: Cv, image: PageImage, picture: GreyPicture, pap
   const best = weighed[0]
   return {
     image, empty: empty && !best, guesses, clear: best !== undefined && best.confidence >= clearFrom,
-    pen: best && best.share >= 0.3 ? penOf(ready.levelled.white, best.template, best.map) : null,
-    strokes: best && best.share >= 0.3 ? strokeMap(ready.levelled.white, best.template, best.map) : null,
-    ink: best && best.share >= 0.3 ? inkMap(ready.levelled.white, best.template, best.map) : null,
+    ...(best && best.share >= 0.3 ? writingOf(ready.levelled.white, best.template, best.map, memory) : { ink: null, pen: null, strokes: null }),
   }
 }
 
@@ -77,19 +73,23 @@ export function registerByCode(cv: Cv, image: PageImage, picture: GreyPicture, t
   for (const off of [0, -0.7, 0.7]) {
     const best = fitExactly(cv, ready, turnedAbout(place, template, at, off))
     if (!best || best.share < provenShare) continue
-    const { white } = ready.levelled
     const guess = guessOf({ ...best, confidence: Math.min(1, best.share * 1.6) }, ready)
     // How it was written tells students apart; here the code does.
-    return { image, empty: false, guesses: [guess], clear: true, pen: null, ink: inkMap(white, template, best.map), strokes: strokeMap(white, template, best.map) }
+    return { image, empty: false, guesses: [guess], clear: true, ...writingOf(ready.levelled.white, template, best.map, memory), pen: null }
   }
   return null
 }
 
 function prepare(cv: Cv, image: PageImage, picture: GreyPicture, paper: readonly Template[]): Ready {
   const { dpiX, dpiY } = scanDensity(image, paper.map((t) => t.page))
-  const shrunk = shrinkTo(cv, picture, dpiX, dpiY, 100, memory)
+  const shrunk = shrinkTo(cv, { ...picture, data: plainBytes(picture.data) }, dpiX, dpiY, 100, memory)
   const levelled = level(shrunk.picture, memory)
   return { shrunk, levelled, half: boxShrink(levelled.white, 2, memory, 'half'), ink12: boxShrink(levelled.ink, 2, memory, 'ink12') }
+}
+
+/** The same bytes, never as a Buffer: loops that meet both kinds of array run several times slower on either. */
+function plainBytes({ buffer, byteOffset, length }: Uint8Array): Uint8Array {
+  return new Uint8Array(buffer, byteOffset, length)
 }
 
 function skewsOf({ levelled }: Ready): (sideways: boolean) => number[] {

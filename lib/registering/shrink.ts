@@ -9,60 +9,40 @@ export type Shrunk = Readonly<{ picture: GreyPicture; byX: number; byY: number }
 /** Means of n x n boxes; what is left over at the right and lower edge is dropped. `use` names the memory that it lands in. */
 export function boxShrink(picture: GreyPicture, n: number, memory: Memory = fresh, use = `box ${n}`): GreyPicture {
   if (n === 1) return picture
-  const out = memory(use, Math.max(1, Math.floor(picture.width / n)) * Math.max(1, Math.floor(picture.height / n)))
-  if (Math.min(picture.width, picture.height) < n) return manyBox(picture, n, out)
-  if (n === 2) return twoBox(picture, out)
-  if (n === 3) return threeBox(picture, out)
-  if (n === 4) return fourBox(picture, out)
-  return manyBox(picture, n, out)
+  const w = Math.max(1, Math.floor(picture.width / n))
+  const h = Math.max(1, Math.floor(picture.height / n))
+  const out = memory(use, w * h)
+  const line = lines[n]
+  if (!line || picture.width < n || picture.height < n) return manyBox(picture, n, out)
+  for (let y = 0; y < h; y++) line(picture.data, y * n * picture.width, picture.width, out, y * w, w)
+  return { width: w, height: h, data: out }
 }
+
+/** Fills a line of `w` pixels of `out`, from `to` on, from the lines of `data` that begin at `from`. */
+type Line = (data: Uint8Array, from: number, width: number, out: Uint8Array, to: number, w: number) => void
 
 // The usual sizes are written out: a leaf has millions of pixels, and an inner loop of two or three steps costs more than its work.
+// Loops over pixels are functions of one line everywhere here: called thousands of times, they are compiled well from the first leaf on.
+const lines: Readonly<Record<number, Line>> = { 2: twoLine, 3: threeLine, 4: fourLine }
 
-function twoBox({ width, height, data }: GreyPicture, out: Uint8Array): GreyPicture {
-  const w = width >> 1
-  const h = height >> 1
-  for (let y = 0, to = 0; y < h; y++) {
-    let a = 2 * y * width
-    for (let x = 0; x < w; x++, a += 2) {
-      const b = a + width
-      out[to++] = (data[a]! + data[a + 1]! + data[b]! + data[b + 1]! + 2) >> 2
-    }
-  }
-  return { width: w, height: h, data: out }
+function twoLine(data: Uint8Array, from: number, width: number, out: Uint8Array, to: number, w: number): void {
+  for (let x = 0, a = from, b = from + width; x < w; x++, a += 2, b += 2) out[to + x] = (data[a]! + data[a + 1]! + data[b]! + data[b + 1]! + 2) >> 2
 }
 
-function threeBox({ width, height, data }: GreyPicture, out: Uint8Array): GreyPicture {
-  const w = Math.floor(width / 3)
-  const h = Math.floor(height / 3)
-  for (let y = 0, to = 0; y < h; y++) {
-    let a = 3 * y * width
-    for (let x = 0; x < w; x++, a += 3) {
-      const b = a + width
-      const c = b + width
-      const sum = data[a]! + data[a + 1]! + data[a + 2]! + data[b]! + data[b + 1]! + data[b + 2]! + data[c]! + data[c + 1]! + data[c + 2]!
-      // a ninth, exactly, for sums up to 9 * 255
-      out[to++] = ((sum + 4) * 7282) >> 16
-    }
+function threeLine(data: Uint8Array, from: number, width: number, out: Uint8Array, to: number, w: number): void {
+  for (let x = 0, a = from, b = a + width, c = b + width; x < w; x++, a += 3, b += 3, c += 3) {
+    const sum = data[a]! + data[a + 1]! + data[a + 2]! + data[b]! + data[b + 1]! + data[b + 2]! + data[c]! + data[c + 1]! + data[c + 2]!
+    // a ninth, exactly, for sums up to 9 * 255
+    out[to + x] = ((sum + 4) * 7282) >> 16
   }
-  return { width: w, height: h, data: out }
 }
 
-function fourBox({ width, height, data }: GreyPicture, out: Uint8Array): GreyPicture {
-  const w = width >> 2
-  const h = height >> 2
-  for (let y = 0, to = 0; y < h; y++) {
-    let a = 4 * y * width
-    for (let x = 0; x < w; x++, a += 4) {
-      const b = a + width
-      const c = b + width
-      const d = c + width
-      const upper = data[a]! + data[a + 1]! + data[a + 2]! + data[a + 3]! + data[b]! + data[b + 1]! + data[b + 2]! + data[b + 3]!
-      const lower = data[c]! + data[c + 1]! + data[c + 2]! + data[c + 3]! + data[d]! + data[d + 1]! + data[d + 2]! + data[d + 3]!
-      out[to++] = (upper + lower + 8) >> 4
-    }
+function fourLine(data: Uint8Array, from: number, width: number, out: Uint8Array, to: number, w: number): void {
+  for (let x = 0, a = from, b = a + width, c = b + width, d = c + width; x < w; x++, a += 4, b += 4, c += 4, d += 4) {
+    const upper = data[a]! + data[a + 1]! + data[a + 2]! + data[a + 3]! + data[b]! + data[b + 1]! + data[b + 2]! + data[b + 3]!
+    const lower = data[c]! + data[c + 1]! + data[c + 2]! + data[c + 3]! + data[d]! + data[d + 1]! + data[d + 2]! + data[d + 3]!
+    out[to + x] = (upper + lower + 8) >> 4
   }
-  return { width: w, height: h, data: out }
 }
 
 function manyBox({ width, height, data }: GreyPicture, n: number, out: Uint8Array): GreyPicture {

@@ -35,15 +35,22 @@ function refined(middle: number, sharpness: (degrees: number) => number): number
 
 /** x, y, weight of every inked pixel, from the middle of the picture. */
 function inked({ width, height, data }: GreyPicture, sideways: boolean): Float32Array {
-  const out: number[] = []
-  for (let y = 0, at = 0; y < height; y++)
-    for (let x = 0; x < width; x++, at++) {
-      const v = data[at]!
-      if (v <= 40) continue
-      if (sideways) out.push(y - height / 2, -(x - width / 2), v)
-      else out.push(x - width / 2, y - height / 2, v)
-    }
-  return Float32Array.from(out)
+  const out = new Float32Array(data.length * 3)
+  let count = 0
+  for (let y = 0; y < height; y++) count = inkedLine(data, y * width, width, height, y, sideways, out, count)
+  return out.subarray(0, count)
+}
+
+function inkedLine(data: Uint8Array, at: number, width: number, height: number, y: number, sideways: boolean, out: Float32Array, count: number): number {
+  for (let x = 0; x < width; x++) {
+    const v = data[at + x]!
+    if (v <= 40) continue
+    out[count] = sideways ? y - height / 2 : x - width / 2
+    out[count + 1] = sideways ? width / 2 - x : y - height / 2
+    out[count + 2] = v
+    count += 3
+  }
+  return count
 }
 
 function profile(points: Float32Array, degrees: number, bins: Float64Array, reach: number): number {
@@ -59,6 +66,9 @@ function profile(points: Float32Array, degrees: number, bins: Float64Array, reac
     bins[low + 1]! += points[k + 2]! * part
   }
   let sum = 0
-  for (let k = 1; k < bins.length; k++) sum += (bins[k]! - bins[k - 1]!) ** 2
+  for (let k = 1; k < bins.length; k++) {
+    const step = bins[k]! - bins[k - 1]!
+    sum += step * step
+  }
   return sum
 }

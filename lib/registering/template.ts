@@ -1,7 +1,7 @@
 import type { BlankPage, GreyPicture } from '@/lib/core/grey-picture'
 import { inkedPart, type Inked } from './best-shift'
 import { blocksOf, type Block } from './block-fit'
-import { clearOfPrint } from './ink-map'
+import { clearOfPrint } from './clear-of-print'
 import { level } from './level'
 import { withMats, type Cv } from './opencv'
 import { boxShrink, matOf } from './shrink'

@@ -8,21 +8,25 @@ export function upright(ink: GreyPicture, degrees: number, width: number, height
   const data = new Uint8Array(width * height)
   const angle = (degrees * Math.PI) / 180
   const [c, s] = [Math.cos(angle), Math.sin(angle)]
-  const { width: w, height: h, data: from } = ink
-  for (let y = 0, at = 0; y < height; y++) {
-    let u = c * (0.5 - width / 2 + dx) - s * (y + 0.5 - height / 2 + dy) + w / 2 - 0.5
-    let v = s * (0.5 - width / 2 + dx) + c * (y + 0.5 - height / 2 + dy) + h / 2 - 0.5
-    for (let x = 0; x < width; x++, at++, u += c, v += s) {
-      if (!(u >= 0 && v >= 0 && u < w - 1 && v < h - 1)) continue
-      const [i, j] = [u | 0, v | 0]
-      const p = u - i
-      const k = j * w + i
-      const upper = from[k]! + (from[k + 1]! - from[k]!) * p
-      const lower = from[k + w]! + (from[k + w + 1]! - from[k + w]!) * p
-      data[at] = upper + (lower - upper) * (v - j) + 0.5
-    }
+  for (let y = 0; y < height; y++) {
+    const u = c * (0.5 - width / 2 + dx) - s * (y + 0.5 - height / 2 + dy) + ink.width / 2 - 0.5
+    const v = s * (0.5 - width / 2 + dx) + c * (y + 0.5 - height / 2 + dy) + ink.height / 2 - 0.5
+    turnLine(ink.data, ink.width, ink.height, u, v, c, s, data, y * width, width)
   }
   return summed(data, width, height)
+}
+
+function turnLine(from: Uint8Array, w: number, h: number, u: number, v: number, du: number, dv: number, out: Uint8Array, to: number, width: number): void {
+  for (let x = 0; x < width; x++, u += du, v += dv) {
+    if (!(u >= 0 && v >= 0 && u < w - 1 && v < h - 1)) continue
+    const i = u | 0
+    const j = v | 0
+    const p = u - i
+    const k = j * w + i
+    const upper = from[k]! + (from[k + 1]! - from[k]!) * p
+    const lower = from[k + w]! + (from[k + w + 1]! - from[k + w]!) * p
+    out[to + x] = upper + (lower - upper) * (v - j) + 0.5
+  }
 }
 
 /** The same seen upside down. */
@@ -34,17 +38,20 @@ function summed(data: Uint8Array, width: number, height: number): Upright {
   const stride = width + 1
   const sums = new Float64Array(stride * (height + 1))
   const squares = new Float64Array(stride * (height + 1))
-  for (let y = 0, k = 0; y < height; y++) {
-    let [a, b] = [0, 0]
-    for (let x = 0, at = (y + 1) * stride + 1; x < width; x++, k++, at++) {
-      const v = data[k]!
-      a += v
-      b += v * v
-      sums[at] = sums[at - stride]! + a
-      squares[at] = squares[at - stride]! + b
-    }
-  }
+  for (let y = 0; y < height; y++) sumLine(data, y * width, width, sums, squares, (y + 1) * stride + 1, stride)
   return { width, height, data, sums, squares }
+}
+
+function sumLine(data: Uint8Array, from: number, width: number, sums: Float64Array, squares: Float64Array, to: number, stride: number): void {
+  let a = 0
+  let b = 0
+  for (let x = 0; x < width; x++) {
+    const v = data[from + x]!
+    a += v
+    b += v * v
+    sums[to + x] = sums[to + x - stride]! + a
+    squares[to + x] = squares[to + x - stride]! + b
+  }
 }
 
 /** The sum over a box by running sums. */

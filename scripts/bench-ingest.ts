@@ -4,6 +4,7 @@ import { join } from 'node:path'
 import { parseArgs } from 'node:util'
 import { clearFrom } from '@/lib/registering/register-leaf'
 import { calibrated, derivedThreshold, placedConfidences, printConfidences, sayCalibration } from '@/tests/accuracy/calibration'
+import { collectAtOnce } from '@/lib/infra/collect-at-once'
 import { classSetFolder, classSets, scoreFolder } from '@/tests/accuracy/class-set'
 import { percentile } from '@/tests/accuracy/score-result'
 
@@ -72,4 +73,5 @@ async function main(): Promise<void> {
   console.log(`${''.padEnd(10)} right of placed at each confidence  ${sayCalibration(calibrated(byPlace))}`)
   console.log(`${''.padEnd(10)} a print is believed from ${clearFrom}; these sets ask for ${derivedThreshold(steps).toFixed(1)}`)
 }
+collectAtOnce()
 main()

@@ -9,6 +9,7 @@ import { readTokensFile } from './read-tokens-file'
 import { certainNumbers } from '@/lib/placing/certain-numbers'
 import { numberBoxesOf } from '@/lib/setting/number-boxes'
 import { readRoster } from '@/lib/setting/read-roster'
+import { collectAtOnce } from '@/lib/infra/collect-at-once'
 import { ingestSheaf } from '@/lib/tasks/ingest-sheaf'
 
 // npm run -s ingest -- --paper PAPER_DIR [--paper PAPER_DIR ...] --sheaf scan.pdf --out result.json [--threads 1] [--codes tokens.csv]
@@ -113,6 +114,7 @@ async function main(): Promise<void> {
 
 // the PDF library speaks of each oddity it reads past; standard error is for the one line about bad input
 console.warn = () => {}
+collectAtOnce()
 main().catch((error: unknown) => {
   const known = error instanceof BadInput || (error instanceof TypeError && 'code' in error && String(error.code).startsWith('ERR_PARSE_ARGS'))
   console.error(known ? `ingest: ${(error as Error).message.split('\n')[0]}` : error)

@@ -1,6 +1,7 @@
 import { hostname } from 'node:os'
 import { setTimeout as wait } from 'node:timers/promises'
 import { putDb, transaction } from '@/db/knex'
+import { collectAtOnce } from '@/lib/infra/collect-at-once'
 import { env } from '@/lib/infra/env'
 import { log } from '@/lib/infra/log'
 import { askToPrune, everyPaper } from '@/lib/tasks/prune-cuts'
@@ -12,6 +13,7 @@ import { startFakeMailServer } from './start-fake-mail-server'
 const worker = `${hostname()}-${process.pid}-${Date.now()}`
 const pollMs = 500
 const stop = new AbortController()
+collectAtOnce()
 for (const signal of ['SIGTERM', 'SIGINT'] as const) process.on(signal, () => stop.abort())
 
 /** Does one thing over and over until the signal; when there was nothing to do it waits. A fault is logged and does not end the loop. */

@@ -3,6 +3,7 @@ import type { Homography } from '@/lib/core/paper-space'
 import { bestShift, inkedPart, type Inked } from './best-shift'
 import type { CoarsePlace } from './coarse'
 import { fitAffine, type Pair } from './fit-affine'
+import type { Memory } from './memory'
 import { upright } from './upright'
 
 const columns = 4
@@ -30,8 +31,8 @@ export function blocksOf(ink: GreyPicture): Block[] {
  * Betters a coarse place by looking for the page's parts one by one at 25 dpi and fitting one affine map through them, which takes up
  * scale, aspect and skew. Maps template to leaf pixels, both of 100 dpi.
  */
-export function blockFit(ink: GreyPicture, template: GreyPicture, blocks: readonly Block[], place: CoarsePlace): Homography {
-  const canvas = upright(ink, place.degrees, template.width + 2 * reach, template.height + 2 * reach, place.dx * 2, place.dy * 2)
+export function blockFit(ink: GreyPicture, template: GreyPicture, blocks: readonly Block[], place: CoarsePlace, memory: Memory): Homography {
+  const canvas = upright(ink, place.degrees, template.width + 2 * reach, template.height + 2 * reach, memory, 'blocks', place.dx * 2, place.dy * 2)
   const pairs: Pair[] = []
   for (const { x, y, piece } of blocks) {
     const found = bestShift(canvas, piece, { x: reach, y: reach }, x, y)

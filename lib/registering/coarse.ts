@@ -1,6 +1,7 @@
 import type { GreyPicture } from '@/lib/core/grey-picture'
 import type { Turn } from '@/lib/core/paper-space'
 import { bestShift } from './best-shift'
+import type { Memory } from './memory'
 import type { Template } from './template'
 import { upright, upsideDown, type Upright } from './upright'
 
@@ -12,15 +13,15 @@ export type Candidate = CoarsePlace & Readonly<{ template: Template }>
 const reach12 = 6
 
 /** The best place of every page in either turn, with lines that slope by one of `skewed` degrees; `sideways`: the page lies on its side. */
-export function coarsePlaces(ink12: GreyPicture, paper: readonly Template[], sideways: boolean, skewed: readonly number[]): Candidate[] {
+export function coarsePlaces(ink12: GreyPicture, paper: readonly Template[], sideways: boolean, skewed: readonly number[], memory: Memory): Candidate[] {
   const turns: readonly [Turn, Turn] = sideways ? [90, 270] : [0, 180]
   const canvases = new Map<string, readonly [Upright, Upright]>()
   const canvasesFor = (width: number, height: number, skew: number) => {
     const key = `${width} ${height} ${skew}`
     const there = canvases.get(key)
     if (there) return there
-    const first = upright(ink12, skew - turns[0], width, height)
-    const both = [first, upsideDown(first)] as const
+    const first = upright(ink12, skew - turns[0], width, height, memory, `upright ${canvases.size}`)
+    const both = [first, upsideDown(first, memory, `upside down ${canvases.size}`)] as const
     canvases.set(key, both)
     return both
   }

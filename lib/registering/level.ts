@@ -25,7 +25,7 @@ function table(of: (paper: number, v: number) => number): Uint8Array {
  */
 export function level(picture: GreyPicture, memory: Memory = fresh): Levelled {
   const small = boxShrink(picture, 4, memory, 'small')
-  const paper = { ...small, data: paperTone(small) }
+  const paper = { ...small, data: paperTone(small, memory) }
   return { white: whitened(picture, paper, memory('white', picture.data.length)), ink: inkOf(small, paper, memory('ink', small.data.length)) }
 }
 

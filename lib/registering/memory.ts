@@ -18,3 +18,9 @@ export function reused(): Memory {
     return made
   }
 }
+
+/** Numbers of 32 bits from such memory. */
+export function words(memory: Memory, use: string, count: number): Uint32Array {
+  const { buffer, byteOffset } = memory(use, count * 4)
+  return new Uint32Array(buffer, byteOffset, count)
+}

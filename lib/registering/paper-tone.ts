@@ -1,4 +1,5 @@
 import type { GreyPicture } from '@/lib/core/grey-picture'
+import type { Memory } from './memory'
 
 /** Strokes narrower than this vanish: 9 mm at 25 dpi. */
 const side = 9
@@ -8,18 +9,20 @@ const edge = side >> 1
  * The brightness of the paper behind what is on it, at 25 dpi: a closing by a square of 9 mm (the lightest within it, then the
  * darkest of those), smoothed. Beyond the picture's edge nothing counts.
  */
-export function paperTone({ width, height, data }: GreyPicture): Uint8Array {
+export function paperTone({ width, height, data }: GreyPicture, memory: Memory): Uint8Array {
   const stride = width + 2 * edge
-  const canvas = new Uint8Array(stride * (height + 2 * edge))
+  const canvas = memory('tone canvas', stride * (height + 2 * edge))
   const lay = (from: Uint8Array, at: number, across: number, beyond: number) => {
     canvas.fill(beyond)
     for (let y = 0; y < height; y++) canvas.set(from.subarray(at + y * across, at + y * across + width), (y + edge) * stride + edge)
   }
   lay(data, 0, width, 0)
   sweep(canvas, stride, lightest)
-  lay(canvas.slice(), 0, stride, 255)
+  const lightestOf = memory('tone lightest', canvas.length)
+  lightestOf.set(canvas)
+  lay(lightestOf, 0, stride, 255)
   sweep(canvas, stride, darkest)
-  return smoothed(canvas, stride, width, height)
+  return smoothed(canvas, stride, width, height, memory('tone', width * height))
 }
 
 /** Looking 1, 2, 4 and 1 further on, each time at what was found before, looks 8 further on in all. */
@@ -47,10 +50,9 @@ function darkest(data: Uint8Array, from: number, to: number, by: number): void {
 }
 
 /** Means of 5 x 5; at the edge the outermost pixels go on. */
-function smoothed(from: Uint8Array, stride: number, width: number, height: number): Uint8Array {
+function smoothed(from: Uint8Array, stride: number, width: number, height: number, out: Uint8Array): Uint8Array {
   const lines = new Uint16Array(width * height)
   for (let y = 0; y < height; y++) sumLine(from, y * stride, width, lines, y * width)
-  const out = new Uint8Array(width * height)
   const line = (y: number) => Math.min(height - 1, Math.max(0, y)) * width
   for (let y = 0; y < height; y++) meanLine(lines, line(y - 2), line(y - 1), line(y), line(y + 1), line(y + 2), out, y * width, width)
   return out

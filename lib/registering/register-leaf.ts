@@ -93,14 +93,14 @@ function plainBytes({ buffer, byteOffset, length }: Uint8Array): Uint8Array {
 }
 
 function skewsOf({ levelled }: Ready): (sideways: boolean) => number[] {
-  return (sideways) => skews(levelled.ink, sideways)
+  return (sideways) => skews(levelled.ink, sideways, memory)
 }
 
 /** Looks for every page in every likely turn, then fits the likeliest exactly. Best first. */
 function tryCandidates(cv: Cv, ready: Ready, paper: readonly Template[], degrees: (sideways: boolean) => readonly number[]): Rival[] {
   const candidates = [false, true].flatMap((sideways) => {
     const fitting = paper.filter((template) => fits(ready.ink12, template, sideways))
-    return fitting.length ? coarsePlaces(ready.ink12, fitting, sideways, degrees(sideways)) : []
+    return fitting.length ? coarsePlaces(ready.ink12, fitting, sideways, degrees(sideways), memory) : []
   })
   candidates.sort((a, b) => b.likeness - a.likeness)
   const rivals: Rival[] = []
@@ -123,7 +123,7 @@ function fits(ink: GreyPicture, { ink12 }: Template, sideways: boolean): boolean
 }
 
 function fitExactly(cv: Cv, { levelled, half }: Ready, { template, ...place }: Candidate): Rival | null {
-  const near = blockFit(levelled.ink, template.ink25, template.blocks25, place)
+  const near = blockFit(levelled.ink, template.ink25, template.blocks25, place, memory)
   const map = fineFit(cv, levelled.white, half, template, near)
   if (!map) return null
   const found = printFound(levelled.white, template, map)

@@ -1,4 +1,5 @@
 import type { GreyPicture } from '@/lib/core/grey-picture'
+import type { Memory } from './memory'
 
 const widest = 5
 const rough = 0.5
@@ -8,8 +9,8 @@ const exact = 0.1
  * How far printed lines slope, in degrees, clockwise positive, within five either way; `sideways` looks for lines that run
  * down the picture. The likeliest first, then the best of the other peaks: what maximises the sharpness of the profile.
  */
-export function skews(ink: GreyPicture, sideways: boolean): number[] {
-  const points = inked(ink, sideways)
+export function skews(ink: GreyPicture, sideways: boolean, memory: Memory): number[] {
+  const points = inked(ink, sideways, memory)
   const reach = Math.ceil(Math.hypot(ink.width, ink.height)) + 2
   const bins = new Float64Array(reach * 2)
   const sharpness = (degrees: number): number => profile(points, degrees, bins, reach)
@@ -34,8 +35,9 @@ function refined(middle: number, sharpness: (degrees: number) => number): number
 }
 
 /** x, y, weight of every inked pixel, from the middle of the picture. */
-function inked({ width, height, data }: GreyPicture, sideways: boolean): Float32Array {
-  const out = new Float32Array(data.length * 3)
+function inked({ width, height, data }: GreyPicture, sideways: boolean, memory: Memory): Float32Array {
+  const { buffer, byteOffset } = memory('inked', data.length * 3 * 4)
+  const out = new Float32Array(buffer, byteOffset, data.length * 3)
   let count = 0
   for (let y = 0; y < height; y++) count = inkedLine(data, y * width, width, height, y, sideways, out, count)
   return out.subarray(0, count)

@@ -11,6 +11,7 @@ import { openSheaf, type OpenSheaf } from '@/lib/reading/open-sheaf'
 import { opencv, type Cv } from '@/lib/registering/opencv'
 import { mayBeTwoUp, registerPartToPage, registerSheet } from '@/lib/registering/register-sheet'
 import { makeTemplate, type Template } from '@/lib/registering/template'
+import { warmUp } from '@/lib/registering/warm-up'
 import { codeWindows, readByCode } from './read-by-code'
 import askSheaf, { type SheafAnswer } from './sheaf-thread'
 

@@ -40,7 +40,10 @@ async function readLeaf(job: LeafJob): Promise<LeafAnswer> {
   const { templates, windows } = kept
   const index = job.index ?? 0
   try {
-    if (job.index === null) return { readings: [unread(index, 'page_empty')], onto: null }
+    if (job.index === null) {
+      warmUp(cv, templates)
+      return { readings: [unread(index, 'page_empty')], onto: null }
+    }
     const { image, picture } = await decodePage(sheaf, index)
     const { onto } = job
     if (onto === undefined) {

@@ -5,7 +5,7 @@ import { parseArgs } from 'node:util'
 import { clearFrom } from '@/lib/registering/register-leaf'
 import { calibrated, derivedThreshold, placedConfidences, printConfidences, sayCalibration } from '@/tests/accuracy/calibration'
 import { collectAtOnce } from '@/lib/infra/collect-at-once'
-import { classSetFolder, classSets, scoreFolder } from '@/tests/accuracy/class-set'
+import { classSetFolder, classSets, codedSetFolder, scoreFolder } from '@/tests/accuracy/class-set'
 import { percentile } from '@/tests/accuracy/score-result'
 
 // npm run bench:ingest [-- --rounds 5 --threads 1 FOLDER ...]
@@ -66,7 +66,7 @@ const byPlace: ReturnType<typeof placedConfidences> = []
 
 async function main(): Promise<void> {
   console.log(`${rounds} rounds, medians; ${threads} thread(s); the peer runs in the same command`)
-  const folders = positionals.length ? positionals.map((folder) => [folder.split('/').at(-1)!, folder] as const) : classSets.map((name) => [name, classSetFolder(name)] as const)
+  const folders = positionals.length ? positionals.map((folder) => [folder.split('/').at(-1)!, folder] as const) : [...classSets.map((name) => [name, classSetFolder(name)] as const), ['coded', codedSetFolder] as const]
   for (const [name, folder] of folders) await bench(name, folder)
   const steps = calibrated(byPrint)
   console.log(`all sets   right page by print alone at each confidence  ${sayCalibration(steps)}`)

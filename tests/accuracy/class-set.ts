@@ -17,6 +17,9 @@ export function classSetFolder(name: string): string {
   return join(process.cwd(), 'seeds/class-sets', name)
 }
 
+/** A few scripts of the everyday paper printed with codes, their pages shuffled. */
+export const codedSetFolder = join(process.cwd(), 'tests/fixtures/coded-set')
+
 /** Ingests a folder's scan.pdf against its paper.pdf, by the printed codes of its tokens.csv if it has one, and scores it by its truth.json. */
 export async function scoreFolder(folder: string, threads = 1): Promise<ScoredSet> {
   const boxes = numberBoxesOf(JSON.parse(await readFile(join(folder, 'paper.json'), 'utf8').catch(() => '{}')))

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { classSetFolder, scoreFolder, type ScoredSet } from './class-set'
+import { classSetFolder, codedSetFolder, scoreFolder, type ScoredSet } from './class-set'
 import { percentile } from './score-result'
 
 // The bars of everyday scans: no page in a wrong place, 97 % of script pages placed, 95 % of region corners within a millimetre.
@@ -36,3 +36,14 @@ function expectWritingRead(name: string, { numbers, ink }: Pick<ScoredSet, 'numb
   expect(ink.misses).toBe(0)
   expect(ink.hits).toBeGreaterThanOrEqual(0.95 * ink.blank)
 }
+
+describe('a class set printed with codes', () => {
+  it('is placed by its codes in whatever order it lies, checked by its print', async () => {
+    const { score, codes } = await scoreFolder(codedSetFolder)
+    console.log(`coded: ${codes!.read} of ${codes!.printed} codes read, ${score.scripts - score.loose} of ${score.scripts} placed, ${score.wrong} wrong, corners off ${percentile(score.errors, 95).toFixed(3)} mm p95`)
+    expect(codes!.read).toBeGreaterThanOrEqual(0.995 * codes!.printed)
+    expect(score).toMatchObject({ wrong: 0, loose: 0, split: 0, rightKind: score.pages })
+    expect(percentile(score.errors, 95)).toBeLessThanOrEqual(0.25)
+    expect(score.errors.length).toBeGreaterThan(100)
+  })
+})

@@ -17,6 +17,7 @@ import { countScannedPages } from '@/db/scripts'
 import { touchedByMarking } from '@/db/touched-by-marking'
 import { askToPrune } from './prune-cuts'
 import { renewInk } from './renew-ink'
+import { renewSuggestions } from './renew-suggestions'
 
 /**
  * Puts a checked setting in place of the stored one, inside the caller's transaction and after its gate: keeps the scheme's next
@@ -39,6 +40,7 @@ export async function storeSetting(trx: Db, actor: Actor, paper: Paper, next: Se
   await ensureResponses(trx, paper.id)
   if (answersCutAgain(settingOf(paper), next, await countScannedPages(trx, paper.id)) > 0) await askToPrune(trx, paper.id)
   if (spacesOf(paper) !== spacesOf(next)) await renewInk(trx, paper.id)
+  if (JSON.stringify(paper.boxes) !== JSON.stringify(next.boxes)) await renewSuggestions(trx, paper.id)
   return markSchemeChanged(trx, actor, paper.id, 'scheme.saved')
 }
 

@@ -4,10 +4,12 @@ import { addLeafReading } from '@/db/leaves'
 import { getPaper } from '@/db/papers'
 import { getSheaf, startSheaf } from '@/db/sheaves'
 import type { Actor } from '@/lib/core/actor'
+import { settingOf } from '@/lib/core/setting'
 import { certainName } from '@/lib/core/sorting'
 import { confirmCertainNames } from '@/lib/tasks/confirm-certain-names'
 import { confirmName } from '@/lib/tasks/confirm-name'
 import { placeSheaf } from '@/lib/tasks/place-sheaf'
+import { saveSetting } from '@/lib/tasks/save-setting'
 import { readSortingTable } from '@/lib/tasks/read-sorting-table'
 import { undoSorting } from '@/lib/tasks/undo-sorting'
 import { aClassSetPaper, classSetFile } from '@/tests/make/class-set'
@@ -81,6 +83,16 @@ describe('names that the number boxes say', () => {
     const third = (await table()).scripts[2]!
     await expect(confirmCertainNames(teacher, paperId, [{ scriptId: third.id, classSetId, studentId: students[numbers[7]!]! }])).rejects.toMatchObject({ code: 'out_of_date' })
     expect((await table()).scripts.map(({ studentId }) => studentId)).toEqual([null, students[numbers[0]!], null])
+  })
+
+  it('are not certain any more once the boxes are moved: nobody has read the new ones', async () => {
+    await read(Object.keys(students)[3]!)
+    expect(await certain()).toHaveLength(1)
+    const paper = (await getPaper(db(), paperId))!
+    const setting = settingOf(paper)
+    const boxes = setting.boxes.map((box) => (box.kind === 'number' ? { ...box, rect: { ...box.rect, y: box.rect.y + 20 } } : box))
+    await saveSetting(teacher, { paperId, version: paper.schemeVersion, setting: { ...setting, boxes } })
+    expect(await certain()).toEqual([])
   })
 
   it('are no business of somebody else, nor of another paper', async () => {

@@ -21,8 +21,8 @@ export const sayNoAdjustment: Readonly<Record<WhyNoAdjustment, string>> = {
   unread: 'not everything sampled has been second-marked yet',
   all_inside: 'everything lies inside the tolerance, so the first marks stand',
   too_few: 'fewer than seven answers: too few to judge the marker',
-  not_one_sided: 'the differences go both ways, so no shift mends them; a re-mark by someone else would',
-  not_steady: 'the differences lean one way but are scattered, so no shift mends them; a re-mark by someone else would',
+  not_one_sided: 'the differences have no clear lean, so no shift mends them: decide on single answers, or have the question marked again by someone else',
+  not_steady: 'the differences lean one way but are scattered, so no shift mends them: have the question marked again by someone else',
   too_small: 'the lean is smaller than half a marking step',
 }
 

@@ -27,7 +27,7 @@ export function AdjustmentsSection({ paperId, sample, owner, undo }: Adjustments
           {outside.map((one) => (
             <tr key={`${one.questionId} ${one.markerId}`}>
               <th scope="row"><b className="book font-medium text-[length:var(--t-2)]">{one.label}</b></th>
-              <td>{one.marker}</td><td>{sayRests(one)}</td>
+              <td className="whitespace-nowrap">{one.marker}</td><td>{sayRests(one)}</td>
               <td>{one.pattern.shift === null ? `No adjustment: ${sayNoAdjustment[one.pattern.why]}.` : holds(one.markerId, one.questionId) ? 'Adjusted, see below.' : `One-sided and steady: ${sayShift(one.pattern.shift)} would mend it.`}</td>
               <td className="text-right whitespace-nowrap">
                 {owner && closedAt === null && one.pattern.shift !== null && !holds(one.markerId, one.questionId) && <Link className="btn" href={`/papers/${paperId}/second-mark/adjust/${id}/${one.questionId}/${one.markerId}`} aria-label={`See the effect of an adjustment for ${one.marker} in ${one.label}`}>See the effect</Link>}

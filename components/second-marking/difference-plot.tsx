@@ -21,7 +21,7 @@ export function DifferencePlot({ name, pairs, figures, maximum, tolerance }: Dif
       <line className={styles.nought} x1={left} x2={right} y1={y(0)} y2={y(0)} />
       {up.map((value) => <text key={value} x={left - 8} y={y(value) + 4} textAnchor="end">{sayDifference(value)}</text>)}
       {across.map((value) => <text key={value} x={x(value)} y={bottom + 18} textAnchor="middle">{sayMark(value as HalfMarks)}</text>)}
-      <text x={(left + right) / 2} y={height - 4} textAnchor="middle" className={styles.name}>middle of both marks</text>
+      <text x={(left + right) / 2} y={bottom + 38} textAnchor="middle" className={styles.name}>middle of both marks</text>
       <text x={left - 38} y={top - 8} className={styles.name}>first minus second</text>
       {lines.map(({ says, at, label }) => (
         <g key={says}>

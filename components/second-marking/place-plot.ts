@@ -7,7 +7,7 @@ export type Plotted = Readonly<{ key: string; says: string; first: HalfMarks; se
 type Spot = Readonly<{ middle: number; difference: number; times: number; inside: boolean }>
 type Line = Readonly<{ says: string; at: number; /** Where its words stand, clear of the others. */ label: number }>
 
-const size = { width: 600, height: 330, left: 46, right: 468, top: 28, bottom: 278 }
+const size = { width: 600, height: 322, left: 46, right: 468, top: 28, bottom: 278 }
 
 /** Steps of whole halves, at most about `most` of them, from `low` to `high`. */
 function steps(low: number, high: number, most: number): number[] {

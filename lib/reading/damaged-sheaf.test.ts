@@ -48,7 +48,11 @@ describe('a damaged sheaf keeps its good pages', () => {
     const [first, second] = [whole.indexOf('\n8 0 obj'), whole.indexOf('\n11 0 obj')]
     // inside the third page's picture: that of the second is whole, the third page's lies open
     expect(first).toBeGreaterThan(0)
-    expect(await readAll(whole.subarray(0, second + 2000))).toEqual(['read', 'read', 'page_incomplete'])
+    expect(await readAll(whole.subarray(0, second + 2000))).toEqual(['read', 'read', 'page_incomplete', 'page_unreadable', 'page_unreadable', 'page_unreadable'])
+    // the tree lies at the end and is lost; and of the last page only a part of its picture is left
+    const objects = whole.toString('latin1').split('endobj\n').slice(0, -1)
+    const treeLast = Buffer.from(`%PDF-1.4\n${objects.slice(2, 4).join('endobj\n')}endobj\n${objects[4]}endobj\n${objects[7]}endobj\n`, 'latin1')
+    expect(await readAll(treeLast.subarray(0, treeLast.length - 3000))).toEqual(['read', 'page_unreadable'])
     expect(await readAll(whole.subarray(0, whole.length - 300))).toEqual(Array(6).fill('read'))
   })
   it('when its tables are wrong', async () => {

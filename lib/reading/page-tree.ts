@@ -1,5 +1,5 @@
 import type { PdfFile } from './pdf/pdf-file'
-import { PdfRef, isDict, type PdfDict, type PdfValue } from './pdf/value'
+import { PdfRef, PdfStream, isDict, type PdfDict, type PdfValue } from './pdf/value'
 
 /** A page of the file: its dictionary (looked up when its turn comes) and what the tree above gives it. */
 export type PageEntry = Readonly<{ page: PdfRef | PdfDict; inherited: PdfDict }>
@@ -27,7 +27,7 @@ export function listPages(pdf: PdfFile): PageEntry[] | null {
 type Walked = { pages: PageEntry[]; /** Every branch could be followed to a page. */ whole: boolean }
 
 function walk(pdf: PdfFile): Walked | null {
-  const root = pdf.dict(pdf.trailer.get('Root'))
+  const root = pdf.dict(pdf.trailer.get('Root')) ?? lostRoot(pdf)
   const top = root?.get('Pages')
   if (!pdf.dict(top)) return null
   const walked: Walked = { pages: [], whole: true }
@@ -57,6 +57,16 @@ function walk(pdf: PdfFile): Walked | null {
   return walked
 }
 
+/** The catalog of a file whose trailer is lost: the last one in it. */
+function lostRoot(pdf: PdfFile): PdfDict | null {
+  let found: PdfDict | null = null
+  for (const number of pdf.numbers()) {
+    const value = pdf.get(new PdfRef(number, 0))
+    if (isDict(value) && value.get('Type') === 'Catalog') found = value
+  }
+  return found
+}
+
 function readable(pdf: PdfFile, pages: readonly PageEntry[]): number {
   return pages.filter(({ page }) => pdf.dict(page) !== null).length
 }
@@ -70,7 +80,20 @@ function loosePages(pdf: PdfFile): PageEntry[] | null {
     pages.push({ page: ref, inherited: fromParents(pdf, value) })
     if (pages.length >= mostCounted) break
   }
+  if (pages.length > 0 && breaksOffBeyond(pdf, pages.at(-1)!)) pages.push({ page: lostPage, inherited: new Map() })
   return pages.length > 0 ? pages : null
+}
+
+/** Stands for a page of which only a part of a picture is left. */
+const lostPage = new PdfRef(0, 65535)
+
+/** Whether the file ends within a picture that its last page does not draw: one page more was there. */
+function breaksOffBeyond(pdf: PdfFile, { page, inherited }: PageEntry): boolean {
+  const last = pdf.get(new PdfRef([...pdf.numbers()].at(-1) ?? 0, 0))
+  if (!(last instanceof PdfStream) || !last.broken || last.dict.get('Subtype') !== 'Image') return false
+  const resources = pdf.dict(pdf.dict(page)?.get('Resources') ?? inherited.get('Resources'))
+  const drawn = [...(pdf.dict(resources?.get('XObject')) ?? new Map<string, PdfValue>()).values()]
+  return !drawn.some((value) => value instanceof PdfRef && value.number === last.number)
 }
 
 /** What a page gets from above, by its own way up. */

@@ -1,29 +1,37 @@
-import type { Homography } from '@/lib/core/paper-space'
+import type { ImagePart } from '@/lib/core/leaf'
+import { compose, type Homography } from '@/lib/core/paper-space'
 import type { Round, Stamp } from '@/lib/core/stamp'
 import type { Db } from './knex'
 import { listStamps } from './stamps'
 
-/** A page of a script as the sheaf holds it. Sizes in pixels of the stored image; no homography for a page that was never registered. */
+/** A page of a script as the sheaf holds it. Sizes in pixels of the stored image (of the page's own `part` of one that shows two); no homography for a page that was never registered. */
 export type PageToReturn = Readonly<{
   id: string; scriptId: string; paperPage: number | null
-  leaf: Readonly<{ sheafId: string; position: number; half: 0 | 1 | null; width: number; height: number; homography: Homography | null }> | null
+  leaf: Readonly<{ sheafId: string; position: number; half: 0 | 1 | null; part?: ImagePart | null; width: number; height: number; homography: Homography | null }> | null
 }>
 type PageRow = {
-  id: string; script_id: string; paper_page: number | null; sheaf_id: string | null; position: number | null; half: 0 | 1 | null; width: number | null; height: number | null; homography: string | null
+  id: string; script_id: string; paper_page: number | null; sheaf_id: string | null; position: number | null; half: 0 | 1 | null; width: number | null; height: number | null; homography: string | null; part: string | null
 }
 
 /** The pages of every script of a class set, in order within each. */
 export async function listPagesToReturn(db: Db, classSetId: string): Promise<PageToReturn[]> {
   const rows = (await db('script_pages').join('scripts', 'scripts.id', 'script_pages.script_id').leftJoin('leaves', 'leaves.id', 'script_pages.leaf_id')
     .where('scripts.class_set_id', classSetId).orderBy(['script_pages.script_id', 'script_pages.position'])
-    .select('script_pages.id', 'script_pages.script_id', 'script_pages.paper_page', 'leaves.sheaf_id', { position: 'leaves.position' }, 'leaves.half', 'leaves.width', 'leaves.height', 'leaves.homography')) as PageRow[]
+    .select('script_pages.id', 'script_pages.script_id', 'script_pages.paper_page', 'leaves.sheaf_id', { position: 'leaves.position' }, 'leaves.half', 'leaves.width', 'leaves.height', 'leaves.homography',
+      db.raw(`case when leaves.half is not null then json_extract(leaves.finding, '$.reading.part') end as part`))) as PageRow[]
   return rows.map((row) => ({
     id: row.id, scriptId: row.script_id, paperPage: row.paper_page,
-    leaf: row.sheaf_id === null || row.width === null || row.height === null ? null : {
+    leaf: row.sheaf_id === null || row.width === null || row.height === null ? null : ownPart({
       sheafId: row.sheaf_id, position: row.position!, half: row.half, width: row.width, height: row.height,
       homography: row.homography === null ? null : (JSON.parse(row.homography) as Homography),
-    },
+    }, row.part === null ? null : (JSON.parse(row.part) as ImagePart)),
   }))
+}
+
+/** A leaf that is a part of an image of two pages, spoken of as if that part were all. */
+function ownPart<Leaf extends NonNullable<PageToReturn['leaf']>>(leaf: Leaf, part: ImagePart | null): NonNullable<PageToReturn['leaf']> {
+  if (leaf.half === null || part === null) return leaf
+  return { ...leaf, part, width: part.w, height: part.h, homography: leaf.homography && compose([[1, 0, -part.x], [0, 1, -part.y], [0, 0, 1]], leaf.homography) }
 }
 
 /** The settled marking that counts for a response. */

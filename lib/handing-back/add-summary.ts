@@ -67,7 +67,7 @@ function drawWho(sheets: SummarySheets, { student, candidateNumber, about }: Sum
 function drawFoot(sheet: Sheet, summary: Summary, k: number, pages: number): void {
   const y = sheetSize.height - 27
   sheet.rule(frame.left, y - 17, frame.right, y - 17, ink.rule)
-  const says = k === 0 ? 'The pages that follow are your own pages, unchanged, with the marking drawn over them.' : summary.student
+  const says = k === 0 ? (summary.copies ?? 'The pages that follow are your own pages, unchanged, with the marking drawn over them.') : summary.student
   const [first = ''] = sheet.type.lines(says, 'sans', small.size, frame.right - frame.left - 60)
   sheet.aside(first, frame.left, y - 3, small)
   sheet.aside(`${k + 1} of ${pages}`, frame.right, y - 3, small, 'end')

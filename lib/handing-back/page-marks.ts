@@ -36,7 +36,7 @@ export function pageToReturn(script: GatheredScript, page: GatheredPage, number:
   const image = { width: leaf.width, height: leaf.height }
   const total = withSum && marks.length > 1 ? { mark: sum(marks.map(({ mark }) => mark)), pen: marks[0]!.pen } : null
   return {
-    sheaf: leaf.sheafId, index: leaf.position, ...(leaf.half === null ? {} : { half: leaf.half }), homography: leaf.homography, image,
+    sheaf: leaf.sheafId, index: leaf.position, ...(leaf.half === null ? {} : { half: leaf.half, part: leaf.part ?? null }), homography: leaf.homography, image,
     drawings: leaf.homography ? drawMarkedPage({ paper: paperSize(script.paper, page), image, homography: leaf.homography, stamps, marks, total }) : [],
     words: sayMarkedPage({ stamps, marks }, number),
   }

@@ -1,9 +1,10 @@
-import { PDFArray, PDFDict, PDFName, PDFNumber, type PDFDocument, type PDFObject, type PDFPage } from 'pdf-lib'
+import { PDFArray, PDFContext, PDFDict, PDFName, PDFNumber, type PDFDocument, type PDFObject, type PDFPage } from 'pdf-lib'
 import { AppError } from '@/lib/core/errors'
+import type { ImagePart } from '@/lib/core/leaf'
 import { compose, turnOf, type Homography } from '@/lib/core/paper-space'
 import { addAnnotations, type Signing } from './add-annotations'
 import { readContent } from './content-reader'
-import type { ObjectCopier } from './object-copier'
+import { ObjectCopier } from './object-copier'
 import { packed } from '@/lib/typesetting/operators'
 import { pageContent } from './own-resources'
 import { paintInk, type Drawing } from './paint-ink'
@@ -18,7 +19,9 @@ export type ScriptPage = Readonly<{
   sheaf: string
   index: number
   /** Set where two paper pages share one picture of the sheaf. */
-  half?: 0 | 1
+  half?: 0 | 1 | undefined
+  /** The page's own part of such a picture, in pixels; homography and image size speak of this part. Null where it is not known. */
+  part?: ImagePart | null
   /** Paper points to pixels of the stored image; null for a page that carries no marks and reads as it lies. */
   homography: Homography | null
   image: ImageSize
@@ -55,6 +58,18 @@ export function addReturnedPage({ pdf, type, shapes, structure, signing }: FileI
     resources.set(PDFName.of(kind), withOwn(own, added))
   }
   to.node.set(PDFName.of('Resources'), resources)
+}
+
+/** Whether a page of a loaded sheaf can be taken over as it is, with all that it draws. */
+export function canTakeOver(source: PDFDocument, index: number): boolean {
+  try {
+    const page = source.getPage(index)
+    const scratch = PDFContext.create()
+    new ObjectCopier(source.context, scratch).copyResources(pageContent(page.node.Contents()), page.node.Resources())
+    return true
+  } catch {
+    return false
+  }
 }
 
 function readable(page: PDFPage, index: number): Uint8Array {

@@ -30,4 +30,6 @@ export type Summary = ScriptScore & Readonly<{
   /** Text codes drawn on the pages, each with its meaning. */
   codes: readonly Readonly<{ code: string; means: string }>[]
   asking: string
+  /** What is to be said of pages that are not the scan's own but copies. */
+  copies?: string | null
 }>

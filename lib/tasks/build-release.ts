@@ -65,7 +65,8 @@ async function buildOne(release: Release, gathered: GatheredSet, script: ScriptT
   try {
     const result = scriptResult(source)
     const summary = summaryOf(source, result, { day: new Date(release.createdAt).toISOString().slice(0, 10), revision: script.revision })
-    const kept = await keepBytes(await buildReturnedScript(await sheaves.fetch(result.pages), { summary, pages: result.pages, builtAt: new Date(release.createdAt) }))
+    const { sheaves: sources, pages, says } = await sheaves.fetch(result.pages)
+    const kept = await keepBytes(await buildReturnedScript(sources, { summary: { ...summary, copies: says }, pages, builtAt: new Date(release.createdAt) }))
     await store(script, result, kept, release)
   } catch (error) {
     if (!(error instanceof AppError) || !stayBehind.includes(error.code)) throw error

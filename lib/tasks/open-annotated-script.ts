@@ -71,7 +71,8 @@ async function open(script: GatheredScript, whole: boolean, signed: readonly Sig
   const summary = result && { ...summaryOf(script, result, { day: at.toISOString().slice(0, 10), revision: 1 }), about: result.markers.length > 0 ? `copy for staff, marked by ${result.markers.join(' and ')}` : 'copy for staff' }
   const sheaves = new SheavesAtHand()
   try {
-    return await buildReturnedScript(await sheaves.fetch(pages), { summary, title: script.paper.title, pages, builtAt: at, signing: signingOf(script, signed) })
+    const { sheaves: sources, says, ...ready } = await sheaves.fetch(pages)
+    return await buildReturnedScript(sources, { summary: summary && { ...summary, copies: says }, title: script.paper.title, pages: ready.pages, builtAt: at, signing: signingOf(script, signed) })
   } finally {
     sheaves.close()
   }

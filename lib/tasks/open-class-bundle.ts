@@ -83,7 +83,8 @@ async function* bundled(gathered: GatheredSet, files: readonly Listed[]): AsyncG
       const result = source && scriptResult(source)
       if (source && result && result.key === file.contentKey) {
         const summary = summaryOf(source, result, { day: new Date(file.askedAt).toISOString().slice(0, 10), revision: file.revision })
-        yield { name, summary, pages: result.pages, sheaves: await sheaves.fetch(result.pages) }
+        const { says, ...ready } = await sheaves.fetch(result.pages)
+        yield { name, summary: { ...summary, copies: says }, ...ready }
       } else yield* asHandedBack(name, file.sha256!)
     }
   } finally {

@@ -31,6 +31,13 @@ export function imageCount(file: string): number {
   return objectsOf(file).filter((object) => object.includes('"/Subtype":"/Image"')).length
 }
 
+/** The pictures of a file, each as a JPEG file where it is coded so and as PNG otherwise. */
+export function picturesOf(file: string, first = 1, last = 1000): Buffer[] {
+  const folder = mkdtempSync(join(tmpdir(), 'sheafmark-images-'))
+  run('pdfimages', '-j', '-png', '-f', String(first), '-l', String(last), file, join(folder, 'image'))
+  return readdirSync(folder).sort().map((name) => readFileSync(join(folder, name)))
+}
+
 /** The image streams as they are coded in the file, page by page, each by its SHA-256. */
 export function codedImages(file: string, first = 1, last = 1000): string[] {
   const folder = mkdtempSync(join(tmpdir(), 'sheafmark-images-'))

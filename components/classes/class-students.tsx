@@ -27,7 +27,7 @@ export function ClassStudents({ classId, className, students, address, school, g
     setSaid(mailed > 0 ? `${mailed} ${mailed === 1 ? 'link is' : 'links are'} on the way by e-mail.` : made.length === 0 ? 'Nothing was given: these accounts are disabled.' : '')
   }
   if (slips.length > 0) {
-    return <>{said && <p role="status" className="line mt-4">{said}</p>}<SlipList slips={slips} school={school} className={className} address={address} onDone={() => setSlips([])} /></>
+    return <>{said && <p role="status" className="line mt-4">{said}</p>}<SlipList classId={classId} slips={slips} school={school} className={className} address={address} onDone={() => setSlips([])} /></>
   }
   return (
     <>

@@ -1,5 +1,6 @@
 import type { Face } from '@/lib/typesetting/font-files'
 import { actualText, num } from '@/lib/typesetting/operators'
+import { setLine } from '@/lib/typesetting/set-line'
 import type { Typesetter } from '@/lib/typesetting/typesetter'
 import type { CodePlace } from './code-place'
 
@@ -18,7 +19,7 @@ export function drawNameLine(
   ] as const
   return rows.map(({ words, size, face, baseline }) => {
     const x = align === 'right' ? line.x + line.w - type.width(words, face, size) : line.x
-    return typed(words, face, size, x, pageHeight - baseline, type)
+    return setLine(words, face, size, x, pageHeight - baseline, type)
   }).join('\n')
 }
 
@@ -29,14 +30,4 @@ function fitted(words: string, face: Face, sizes: readonly number[], room: numbe
   const letters = [...words]
   while (letters.length > 1 && type.width(letters.join('') + cut, face, least) > room) letters.pop()
   return { words: letters.join('').trimEnd() + cut, size: least }
-}
-
-function typed(words: string, face: Face, size: number, x: number, y: number, type: Typesetter): string {
-  let left = x
-  const parts = type.runs(words, face).map(({ font, codes, width, means }) => {
-    const shown = `/${font} ${num(size)} Tf 1 0 0 1 ${num(left)} ${num(y)} Tm <${codes}> Tj`
-    left += width * size
-    return actualText(means, shown)
-  })
-  return `0 g BT ${parts.join(' ')} ET`
 }

@@ -53,6 +53,12 @@ export function fontLines(file: string): string[] {
   return run('pdffonts', file).split('\n').slice(2).filter((line) => line !== '')
 }
 
+/** Width and height of a file's first page in whole points. */
+export function pageSizeOf(file: string): string {
+  const [, width, height] = /Page size:\s+([\d.]+) x ([\d.]+)/.exec(run('pdfinfo', file))!
+  return `${Math.round(Number(width))} x ${Math.round(Number(height))}`
+}
+
 /** The bookmarks of a file, outermost ones only. */
 export function bookmarksOf(file: string): string[] {
   const { outlines } = JSON.parse(run('qpdf', '--json', '--json-key=outlines', file)) as { outlines: { title: string }[] }

@@ -76,6 +76,7 @@ export const routeRows: readonly RouteRow[] = [
       route(door, 'no class', () => `/api/class-sets/${nothing}/${what}`, '                                                    401    404   404   404    404    404   404   404'),
     ]
   }),
+  change('POST /api/classes/[classId]/slips', 'the class of the other', (o) => `/api/classes/${o.others.class}/slips`, json(() => ({ sheet: 'a4', slips: [{ name: 'Sam', userName: '1', code: 'K' }] })), ' 401 404 200 403 403 200 403 403'),
   // With the marks on it: markers get those of their questions, a moderator those they need not read blind.
   route('GET /api/scripts/[scriptId]/annotated-pdf', 'a script the marker marks', (o) => `/api/scripts/${o.half.theirs.script}/annotated-pdf`, ' 401 200 404 200 404 404 404 404'),
   route('GET /api/scripts/[scriptId]/annotated-pdf', 'a script of the sample', (o) => `/api/scripts/${o.sampled.unread.script}/annotated-pdf`, ' 401 200 404 404 200 404 404 404'),

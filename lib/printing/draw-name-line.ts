@@ -1,5 +1,4 @@
 import type { Face } from '@/lib/typesetting/font-files'
-import { actualText, num } from '@/lib/typesetting/operators'
 import { setLine } from '@/lib/typesetting/set-line'
 import type { Typesetter } from '@/lib/typesetting/typesetter'
 import type { CodePlace } from './code-place'

@@ -65,9 +65,9 @@ export async function addressedStudents(db: Db, classSetId: string): Promise<Set
 export type Standing = Readonly<{ id: string; scriptId: string; revision: number; releasedAt: number; firstReadAt: number | null; contentKey: string }>
 
 /** The returned scripts that hold: of every script of released releases the highest revision. */
-const newest = (db: Db) => db('returned_scripts').join('releases', 'releases.id', 'returned_scripts.release_id').where('releases.state', 'released').whereNotNull('returned_scripts.built_at')
+const newest = (db: Db) => db('returned_scripts').join('releases', 'releases.id', 'returned_scripts.release_id').where('releases.state', 'released').whereNotNull('returned_scripts.built_at').whereNull('returned_scripts.withdrawn_at')
   .whereNotExists((later) => later.select(db.raw('1')).from('returned_scripts as later').join('releases as its', 'its.id', 'later.release_id')
-    .whereRaw(`later.script_id = returned_scripts.script_id and its.state = 'released' and later.built_at is not null and later.revision > returned_scripts.revision`))
+    .whereRaw(`later.script_id = returned_scripts.script_id and its.state = 'released' and later.built_at is not null and later.withdrawn_at is null and later.revision > returned_scripts.revision`))
 
 /** What stands handed back of a class set. */
 export async function listStanding(db: Db, classSetId: string): Promise<Standing[]> {
@@ -137,6 +137,14 @@ export async function listReturnedTo(db: Db, studentId: string): Promise<Returne
     const { title, className, satOn, total, maximum, grade, pen } = JSON.parse(row.detail) as ReturnedDetail
     return { id: row.id, revision: row.revision, handedBackAt: row.at, read: row.read !== null, title, className, satOn, total, maximum, grade, pen }
   })
+}
+
+/** Takes back every revision of a script that is out. Returns what it changed. */
+export async function withdrawReturned(db: Db, scriptId: string, by: string, at: number): Promise<string[]> {
+  const released = db('releases').where({ state: 'released' }).select('id')
+  const rows = (await db('returned_scripts').where({ script_id: scriptId }).whereNull('withdrawn_at').whereNotNull('built_at').whereIn('release_id', released)
+    .update({ withdrawn_at: at, withdrawn_by: by }).returning('id')) as { id: string }[]
+  return rows.map(({ id }) => id)
 }
 
 /** Notes the first time a student read it. */

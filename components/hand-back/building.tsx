@@ -1,8 +1,33 @@
+'use client'
+import { Alarm } from '@/components/ui/alarm'
+import { sayTime } from '@/components/ui/say-time'
+import { useOutcome } from '@/components/ui/use-outcome'
+import { counted } from '@/components/paper/stage-words'
 import type { ReleaseLine } from '@/lib/core/hand-back'
+import type { HandBackActs } from './hand-back-screen'
 import styles from './hand-back.module.css'
 
-/** Scripts as they are built, one drawn leaf each. */
-export function Building({ release: { scripts, built }, classSetId }: { release: ReleaseLine; classSetId: string | null }) {
+type BuildingProps = Readonly<{ release: ReleaseLine; classSetId: string | null; callOff: HandBackActs['callOff']; again: () => Promise<void> }>
+
+/** Scripts as they are built, one drawn leaf each; or the day that they wait for. */
+export function Building(props: BuildingProps) {
+  const { dueAt, built } = props.release
+  return dueAt !== null && built === 0 ? <Waiting {...props} dueAt={dueAt} /> : <InWork {...props} />
+}
+
+function Waiting({ release: { scripts }, classSetId, callOff, again, dueAt }: BuildingProps & { dueAt: number }) {
+  const { busy, trouble, run } = useOutcome()
+  return (
+    <section aria-label="Waiting" className="mt-4 mb-8">
+      <p className={styles.count}>{counted(scripts, 'script goes', 'scripts go')} to the students on {sayTime(dueAt)}.</p>
+      <p className="soft mt-2 mb-4">They are built then, with the marks as they are then. A script that lacks a mark or a name by then stays here.</p>
+      {trouble && <Alarm {...trouble} />}
+      <button type="button" className="btn" disabled={busy} onClick={() => void run(callOff(classSetId!), again)}>Call it off</button>
+    </section>
+  )
+}
+
+function InWork({ release: { scripts, built }, classSetId }: BuildingProps) {
   return (
     <section aria-label="Progress" className="mt-4">
       <div className={styles.leaves} aria-hidden>

@@ -1,6 +1,7 @@
 'use client'
 import { useState } from 'react'
 import { Alarm } from '@/components/ui/alarm'
+import { Field } from '@/components/ui/field'
 import { Dialog } from '@/components/ui/dialog'
 import { useOutcome } from '@/components/ui/use-outcome'
 import { counted } from '@/components/paper/stage-words'
@@ -17,7 +18,9 @@ export function HandBackAct({ view, className, acts, again }: HandBackActProps) 
   const { busy, trouble, run } = useOutcome()
   const { ready, classSetId } = view
   const open = openLines(view.checks).length
-  const go = () => void run(acts.handBack(classSetId!), async () => { await again(); setAsking(false) })
+  const [day, setDay] = useState('')
+  const dueAt = day === '' ? undefined : new Date(day).getTime()
+  const go = () => void run(acts.handBack(classSetId!, dueAt === undefined ? {} : { dueAt }), async () => { await again(); setAsking(false) })
   if (ready.scripts === 0 && open === 0 && view.students.some(({ returned }) => returned)) return <p className={`${styles.act} soft`}>Students read their scripts under “My scripts”. A mark that changes can be handed back again from here.</p>
   const can = open === 0 && ready.scripts > 0
   return (
@@ -26,6 +29,7 @@ export function HandBackAct({ view, className, acts, again }: HandBackActProps) 
       <p className="soft">{open > 0 ? `See to ${open === 1 ? 'the open line' : `the ${open} open lines`} below first: ${open === 1 ? 'mend it, or sign it' : 'mend each, or sign it'} by your name.` : ready.scripts === 0 ? 'Every script is kept back.' : sayReady(view)}</p>
       <Dialog title={`${actWords(ready.scripts)}?`} open={asking} onClose={() => setAsking(false)} role="alertdialog">
         <WhatHappens view={view} className={className} />
+        <Field label="On a later day instead" type="datetime-local" value={day} onChange={(event) => setDay(event.target.value)} className="mt-4 w-64" />
         {trouble && <Alarm {...trouble} />}
         <div className="mt-4 flex gap-3">
           <button type="button" className="btn lead" disabled={busy} onClick={go}>{busy ? 'One moment' : actWords(ready.scripts)}</button>

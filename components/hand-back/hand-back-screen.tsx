@@ -14,7 +14,9 @@ import { ReleaseHistory } from './release-history'
 import { StudentTable } from './student-table'
 
 export type HandBackActs = Readonly<{
-  handBack: (classSetId: string) => Promise<Outcome<string>>
+  handBack: (classSetId: string, how?: { scriptIds?: readonly string[]; dueAt?: number }) => Promise<Outcome<string>>
+  withdrawOne: (scriptId: string) => Promise<Outcome<void>>
+  callOff: (classSetId: string) => Promise<Outcome<void>>
   withdraw: (classSetId: string) => Promise<Outcome<void>>
   signOff: (form: { classSetId: string; check: string; subjects: readonly string[]; reason: string }) => Promise<Outcome<void>>
   takeBackSign: (form: { classSetId: string; check: string; subject: string }) => Promise<Outcome<void>>
@@ -44,11 +46,11 @@ export function HandBackScreen({ first, acts }: { first: HandBackView; acts: Han
         {view.classSets.length > 1 && <ClassSetChoice classSets={view.classSets} value={view.classSetId} onChange={setClassSetId} />}
       </div>
       {error && <Alarm code={error instanceof RefusedError ? error.code : 'failed'} />}
-      {view.building ? <Building release={view.building} classSetId={view.classSetId} /> : scripts === 0 ? <NothingHere paperId={view.paperId} hasClass={set !== undefined} /> : (
+      {view.building ? <Building release={view.building} classSetId={view.classSetId} callOff={acts.callOff} again={again} /> : scripts === 0 ? <NothingHere paperId={view.paperId} hasClass={set !== undefined} /> : (
         <>
           <HandBackAct view={view} className={set?.className ?? ''} acts={acts} again={again} />
           <CheckList view={view} acts={acts} again={again} />
-          <StudentTable view={view} />
+          <StudentTable view={view} acts={acts} again={again} />
         </>
       )}
       <ReleaseHistory view={view} acts={acts} again={again} />
@@ -57,7 +59,7 @@ export function HandBackScreen({ first, acts }: { first: HandBackView; acts: Han
 }
 
 function titleOf({ building, students, checks, ready, releases }: HandBackView): string {
-  if (building) return 'Building the scripts'
+  if (building) return building.dueAt !== null && building.built === 0 ? 'To be handed back' : 'Building the scripts'
   const returned = students.filter((one) => one.returned !== null).length
   if (returned > 0) return ready.scripts > 0 ? 'Handed back, and changed since' : `${returned} of ${students.filter(({ scriptNumber }) => scriptNumber !== null).length} scripts handed back`
   if (releases[0]?.state === 'withdrawn') return 'Taken back'

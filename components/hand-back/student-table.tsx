@@ -1,13 +1,18 @@
+'use client'
 import { Download, FolderDown, MessageSquareText, Printer } from 'lucide-react'
+import { Alarm } from '@/components/ui/alarm'
 import { MarkFigure } from '@/components/ui/mark-figure'
 import { sayTime } from '@/components/ui/say-time'
+import { useOutcome } from '@/components/ui/use-outcome'
 import { sayMark } from '@/lib/core/marks'
 import type { HandBackView } from '@/lib/core/hand-back'
+import type { HandBackActs } from './hand-back-screen'
 import { stateWords } from './hand-back-words'
 import styles from './hand-back.module.css'
 
 /** Every student of the class set: what was handed back, whether they have read it, and their file. */
-export function StudentTable({ view: { students, maximum, classSetId } }: { view: HandBackView }) {
+export function StudentTable({ view: { students, maximum, classSetId }, acts, again }: { view: HandBackView; acts: HandBackActs; again: () => Promise<void> }) {
+  const { busy, trouble, run } = useOutcome()
   const out = students.some(({ returned }) => returned !== null)
   return (
     <section aria-label="Students" className="mb-10">
@@ -20,12 +25,13 @@ export function StudentTable({ view: { students, maximum, classSetId } }: { view
           </p>
         )}
       </div>
+      {trouble && <Alarm {...trouble} />}
       <div className={styles.scroll} tabIndex={0} role="region" aria-label="Students and their scripts">
         <table className={`tbl ${styles.students}`}>
-          <thead><tr><th scope="col">student</th><th scope="col">total of {sayMark(maximum)}</th><th scope="col">grade</th><th scope="col">state</th>{out && <th scope="col">read by the student</th>}<th scope="col">files</th></tr></thead>
+          <thead><tr><th scope="col">student</th><th scope="col">total of {sayMark(maximum)}</th><th scope="col">grade</th><th scope="col">state</th>{out && <th scope="col">read by the student</th>}<th scope="col">files</th><th scope="col"><span className="vh">this one alone</span></th></tr></thead>
           <tbody>
             {students.map((student) => {
-              const { key, name, candidateNumber, scriptNumber, total, grade, returned, changed } = student
+              const { key, name, candidateNumber, scriptNumber, total, grade, returned, changed, keptBack } = student
               return (
                 <tr key={key}>
                   <th scope="row" className={styles.name}>{name} <span className="soft">{candidateNumber}</span></th>
@@ -36,6 +42,10 @@ export function StudentTable({ view: { students, maximum, classSetId } }: { view
                   <td>
                     {returned && <a className="inline-flex min-h-6 items-center gap-1" href={`/api/returned/${returned.id}/pdf`} download><Download className="ic" aria-hidden />PDF<span className="vh"> of {name}</span></a>}
                     {scriptNumber !== null && <a className="ml-3 inline-flex min-h-6 items-center gap-1" href={`/api/scripts/${key}/annotated-pdf`} download title="For staff: the marking as annotations, each with who gave it and when"><MessageSquareText className="ic" aria-hidden />annotated<span className="vh"> copy of {name}, for staff</span></a>}
+                  </td>
+                  <td className="text-right">
+                    {(!returned || changed) && keptBack === null && scriptNumber !== null && <button type="button" className="btn plain dense" disabled={busy} onClick={() => void run(acts.handBack(classSetId!, { scriptIds: [key] }), again)}>Hand back<span className="vh"> the script of {name} alone</span></button>}
+                    {returned && <button type="button" className="btn plain dense" disabled={busy} onClick={() => void run(acts.withdrawOne(key), again)}>Take back<span className="vh"> the script of {name} alone</span></button>}
                   </td>
                 </tr>
               )

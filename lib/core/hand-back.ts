@@ -37,7 +37,7 @@ export type HandBackStudent = Readonly<{
   keptBack: KeptBackReason | null
 }>
 
-export type ReleaseLine = Readonly<{ id: string; state: 'building' | 'released' | 'withdrawn' | 'failed'; by: string; createdAt: number; releasedAt: number | null; withdrawnAt: number | null; withdrawnBy: string | null; scripts: number; built: number; revision: number; problem: string | null }>
+export type ReleaseLine = Readonly<{ id: string; state: 'building' | 'released' | 'withdrawn' | 'failed'; by: string; createdAt: number; releasedAt: number | null; dueAt: number | null; withdrawnAt: number | null; withdrawnBy: string | null; scripts: number; built: number; revision: number; problem: string | null }>
 
 /** The hand-back page of one class set. */
 export type HandBackView = Readonly<{

@@ -64,6 +64,8 @@ export const actionRows: readonly ActionRow[] = [
 
   ...ofPaper('hand-back handBack', (o) => [o.half.classSet], 'checks_open'),
   ...ofPaper('hand-back withdraw', (o) => [o.half.classSet], 'not_released'),
+  ...ofPaper('hand-back withdrawOne', (o) => [o.half.hers.script], 'not_released'),
+  ...ofPaper('hand-back callOff', (o) => [o.half.classSet], 'not_released'),
   ...ofPaper('hand-back signOff', (o) => [{ classSetId: o.half.classSet, check: 'names', subjects: ['none'], reason: 'The hand is plain.' }], 'out_of_date'),
   ...ofPaper('hand-back takeBackSign', (o) => [{ classSetId: o.half.classSet, check: 'names', subject: 'none' }], 'out_of_date'),
 

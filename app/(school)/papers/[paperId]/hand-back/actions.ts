@@ -3,14 +3,24 @@ import { z } from 'zod'
 import { requireActor } from '@/app/_door/require-actor'
 import { outcome } from '@/lib/infra/outcome'
 import { SignatureForm, signOffCheck, SignOffForm, takeBackSignature } from '@/lib/tasks/sign-off-check'
-import { startRelease } from '@/lib/tasks/start-release'
+import { callOffRelease } from '@/lib/tasks/call-off-release'
+import { ReleaseForm, startRelease } from '@/lib/tasks/start-release'
 import { withdrawRelease } from '@/lib/tasks/withdraw-release'
+import { withdrawScript } from '@/lib/tasks/withdraw-script'
 import type { Outcome } from '@/lib/core/outcome'
 
 const Id = z.string().min(1).max(80)
 
-export async function handBack(classSetId: unknown): Promise<Outcome<string>> {
-  return outcome(async () => startRelease(await requireActor(), Id.parse(classSetId)))
+export async function handBack(classSetId: unknown, how: unknown = {}): Promise<Outcome<string>> {
+  return outcome(async () => startRelease(await requireActor(), Id.parse(classSetId), ReleaseForm.parse(how)))
+}
+
+export async function withdrawOne(scriptId: unknown): Promise<Outcome<void>> {
+  return outcome(async () => withdrawScript(await requireActor(), Id.parse(scriptId)))
+}
+
+export async function callOff(classSetId: unknown): Promise<Outcome<void>> {
+  return outcome(async () => callOffRelease(await requireActor(), Id.parse(classSetId)))
 }
 
 export async function withdraw(classSetId: unknown): Promise<Outcome<void>> {

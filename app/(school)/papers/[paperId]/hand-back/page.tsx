@@ -3,7 +3,7 @@ import { PaperPage } from '@/app/_door/paper-page'
 import { actorOrSignIn } from '@/app/_door/require-actor'
 import { HandBackScreen } from '@/components/hand-back/hand-back-screen'
 import { readHandBack } from '@/lib/tasks/read-hand-back'
-import { handBack, signOff, takeBackSign, withdraw } from './actions'
+import { callOff, handBack, signOff, takeBackSign, withdraw, withdrawOne } from './actions'
 
 export const metadata = { title: 'Hand back' }
 
@@ -11,5 +11,5 @@ export const metadata = { title: 'Hand back' }
 export default async function HandBackPage({ params }: { params: Promise<{ paperId: string }> }) {
   const { paperId } = await params
   const first = await pageOf(readHandBack(await actorOrSignIn(), paperId))
-  return <PaperPage paperId={paperId} now="Hand back"><HandBackScreen first={first} acts={{ handBack, withdraw, signOff, takeBackSign }} /></PaperPage>
+  return <PaperPage paperId={paperId} now="Hand back"><HandBackScreen first={first} acts={{ handBack, withdraw, withdrawOne, callOff, signOff, takeBackSign }} /></PaperPage>
 }

@@ -42,7 +42,7 @@ export function registerLeaf(cv: Cv, image: PageImage, picture: GreyPicture, pap
   const empty = isEmpty(ready.levelled.ink)
   let rivals = empty ? [] : tryCandidates(cv, ready, paper, skewsOf(ready))
   if (!empty && (rivals[0]?.share ?? 0) < 0.35) rivals = [...rivals, ...tryCandidates(cv, ready, paper, () => [-3, -1.5, 0, 1.5, 3])].sort((a, b) => b.share - a.share)
-  const weighed = confidences(rivals)
+  const weighed = confidences(rivals, ready.levelled.white)
   const guesses = weighed.slice(0, 3).map((rival) => guessOf(rival, ready))
   const best = weighed[0]
   return {

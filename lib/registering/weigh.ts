@@ -1,20 +1,23 @@
+import type { GreyPicture } from '@/lib/core/grey-picture'
 import type { Homography } from '@/lib/core/paper-space'
 import { printFound, shareFound } from './confirm'
+import { tellApart } from './tell-apart'
 import type { Template } from './template'
 
 /** A page that a leaf may be, exactly fitted: how well each of its patches of print was found, and the share that was. */
 export type Rival = Readonly<{ template: Template; map: Homography; found: Float32Array; share: number }>
 
 const unchanged: Homography = [[1, 0, 0], [0, 1, 0], [0, 0, 1]]
-const fewestTelling = 5
+/** Fewer patches than this in which two pages differ say too little: then every printed pixel in which they do is looked at. */
+const fewestTelling = 16
 
 /**
  * How sure each rival is, best first: its print must be there, and it must explain the leaf better than any other page or turn.
- * Pages that look alike are judged by the print in which they differ alone.
+ * Pages that look alike are judged by the print in which they differ alone. `leaf` is the levelled leaf at 100 dpi.
  */
-export function confidences(rivals: readonly Rival[]): (Rival & { confidence: number })[] {
+export function confidences(rivals: readonly Rival[], leaf: GreyPicture): (Rival & { confidence: number })[] {
   const judged = rivals.map((rival) => {
-    const lead = Math.min(1, ...rivals.filter((other) => different(rival, other)).map((other) => leadOver(rival, other)))
+    const lead = Math.min(1, ...rivals.filter((other) => different(rival, other)).map((other) => leadOver(rival, other, leaf)))
     return { ...rival, confidence: Math.min(part(rival.share, 0.1, 0.6), part(lead, 0, 0.4)) }
   })
   judged.sort((a, b) => b.confidence - a.confidence || b.share - a.share)
@@ -28,11 +31,11 @@ function different(a: Rival, b: Rival): boolean {
 }
 
 /** By how much more of its own print a rival finds than another, from -1 to 1. */
-function leadOver(one: Rival, other: Rival): number {
+function leadOver(one: Rival, other: Rival, leaf: GreyPicture): number {
   if (other.share < 0.5 * one.share || one.template === other.template) return one.share - other.share
   const mine = telling(one.template, other.template)
   const theirs = telling(other.template, one.template)
-  if (mine.length + theirs.length < fewestTelling) return 0
+  if (mine.length + theirs.length < fewestTelling) return tellApart(leaf, one.template.white, other.template.white, one.map, other.map) ?? 0
   const has = mine.length >= 3 ? shareFound(one.found, mine) : 1
   const lacks = theirs.length >= 3 ? shareFound(other.found, theirs) : 0
   return has - lacks

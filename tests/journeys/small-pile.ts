@@ -61,14 +61,13 @@ export async function twoUpSheaf(name: string, leaves: readonly number[]): Promi
 /** A class of the pile's students and a paper that it sits; nothing scanned. Gives the paper's address. */
 export async function aSmallPaper(page: Page, className: string, students: readonly string[] = pile.map(({ number }) => number)): Promise<string> {
   const [head, ...lines] = readFileSync(classSetPath(set, 'roster.csv'), 'utf8').trim().split(/\r?\n/)
-  const list = lines.filter((line) => students.includes(line.split(',')[0]!)).map((line) => line.replace(/,[^,]*$/, ','))
+  const list = lines.filter((line) => students.includes(line.split(',')[0]!))
   const roster = path.join(folder, `${className}.csv`)
   writeFileSync(roster, [head, ...list].join('\n'))
   await page.goto('/classes')
   await page.getByRole('button', { name: 'Add a class' }).click()
   await page.getByRole('dialog').getByLabel('Name').fill(className)
   await page.getByRole('dialog').getByRole('button', { name: 'Add' }).click()
-  await page.getByRole('link', { name: className, exact: true }).click()
   await page.getByRole('link', { name: 'Bring in a class list' }).click()
   await page.locator('input[type=file]').setInputFiles(roster)
   await page.getByRole('button', { name: new RegExp(`Bring in ${list.length} lines`) }).click()
@@ -77,6 +76,7 @@ export async function aSmallPaper(page: Page, className: string, students: reado
   await page.getByLabel('Class').selectOption({ label: `${className}, ${list.length} students` })
   await page.getByLabel('PDF of the test as it is printed').setInputFiles(classSetPath(set, 'paper.pdf'))
   await page.getByLabel('paper.json, if the paper was set before').setInputFiles(classSetPath(set, 'paper.json'))
+  await page.getByLabel('Title').fill(`Small pile of ${className}`)
   await page.getByRole('button', { name: 'Make the paper' }).click()
   await page.waitForURL(/\/papers\/[^/]+\/set/)
   return new URL(page.url()).pathname.replace(/\/set$/, '')
@@ -86,5 +86,5 @@ export async function aSmallPaper(page: Page, className: string, students: reado
 export async function scan(page: Page, paper: string, file: string): Promise<void> {
   await page.goto(`${paper}/scan`)
   await page.locator('input[type=file]').setInputFiles(file)
-  await expect(page.getByRole('heading', { name: `${path.basename(file)} is read` })).toBeVisible({ timeout: 90_000 })
+  await expect(page.getByRole('heading', { name: `${path.basename(file)} is read` })).toBeVisible({ timeout: 300_000 })
 }

@@ -5,7 +5,7 @@ import { aSmallPaper, pile, scan, sheafOf } from './small-pile'
 // The sorting table without a pointer: a loose sheet put where it belongs, one aside, all names given, one taken back.
 
 test('a pile is sorted by keyboard alone', async ({ page }) => {
-  await signInAs(page, 'h.moss', demoPassword)
+  await signInAs(page, 'r.adeyemi', demoPassword)
   const paper = await aSmallPaper(page, '10K')
   // The last page is scanned twice.
   await scan(page, paper, await sheafOf('keys.pdf', [...pile.flatMap(({ leaves }) => leaves), pile[4]!.leaves[1]]))

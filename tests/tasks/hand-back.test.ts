@@ -5,6 +5,7 @@ import type { Actor } from '@/lib/core/actor'
 import { newId } from '@/lib/core/ids'
 import { buildRelease } from '@/lib/tasks/build-release'
 import { openReturnedPdf, readMyScripts, readReturnedScript } from '@/lib/tasks/read-returned-script'
+import { readHandBack } from '@/lib/tasks/read-hand-back'
 import { runNextJob } from '@/lib/tasks/run-next-job'
 import { signOffCheck } from '@/lib/tasks/sign-off-check'
 import { startRelease } from '@/lib/tasks/start-release'
@@ -126,6 +127,21 @@ describe('handing back', () => {
 
 describe('the clerical check', () => {
   const unsettle = (scriptId: string) => db()('markings').whereIn('response_id', db()('responses').where({ script_id: scriptId }).limit(1).select('id')).update({ state: 'open', settled_at: null })
+
+  it('notices a page that was scanned again since', async () => {
+    const { teacher, classSetId, paperId, first } = await aSchool(2)
+    await handBack(teacher, classSetId)
+    const changed = async () => (await readHandBack(teacher, paperId, classSetId)).students.filter((student) => student.changed).map(({ key }) => key)
+    expect(await changed()).toEqual([])
+    const page = await db()('script_pages').where({ script_id: first.scriptId, paper_page: 1 }).first<{ id: string; leaf_id: string }>()
+    const leaf = (await db()('leaves').where({ id: page.leaf_id }).first())!
+    const [sheafId, leafId] = [newId(), newId()]
+    const sheaf = (await db()('sheaves').where({ id: leaf.sheaf_id }).first())!
+    await db()('sheaves').insert({ ...sheaf, id: sheafId })
+    await db()('leaves').insert({ ...leaf, id: leafId, sheaf_id: sheafId })
+    await db()('script_pages').where({ id: page.id }).update({ leaf_id: leafId })
+    expect(await changed()).toEqual([first.scriptId])
+  })
 
   it('lets nothing go while marks are missing, and nobody sign that away: the script stays behind by name', async () => {
     const { teacher, classSetId, student, first, scripts } = await aSchool()

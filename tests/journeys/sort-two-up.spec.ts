@@ -5,7 +5,7 @@ import { aSmallPaper, pile, scan, twoUpSheaf } from './small-pile'
 // A folded paper laid open on the copier: each picture shows two pages.
 
 test('a sheaf of A3 sheets is cut into its pages', async ({ page }) => {
-  await signInAs(page, 'h.moss', demoPassword)
+  await signInAs(page, 'r.adeyemi', demoPassword)
   const paper = await aSmallPaper(page, '10T')
   await scan(page, paper, await twoUpSheaf('open.pdf', pile.flatMap(({ leaves }) => leaves)))
   await expect(page.getByText('5 leaves read, 10 pages on them')).toBeVisible()

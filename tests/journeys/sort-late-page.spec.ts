@@ -5,7 +5,7 @@ import { aSmallPaper, pile, scan, sheafOf } from './small-pile'
 // One sheet stayed behind in the classroom: it comes when the others are being marked.
 
 test('a late page joins its script, and what was marked stays', async ({ page }) => {
-  await signInAs(page, 'h.moss', demoPassword)
+  await signInAs(page, 'r.adeyemi', demoPassword)
   const paper = await aSmallPaper(page, '10L')
   const late = pile[3]!.leaves[1]
   await scan(page, paper, await sheafOf('without.pdf', pile.flatMap(({ leaves }) => leaves).filter((leaf) => leaf !== late)))

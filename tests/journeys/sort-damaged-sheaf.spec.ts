@@ -5,7 +5,7 @@ import { aSmallPaper, pile, scan, sheafOf } from './small-pile'
 // A page of the file is broken: it is named, the others are kept, and its sheet can be scanned again.
 
 test('a damaged page is named, and the good pages are kept', async ({ page }) => {
-  await signInAs(page, 'h.moss', demoPassword)
+  await signInAs(page, 'r.adeyemi', demoPassword)
   const paper = await aSmallPaper(page, '10D')
   const leaves = pile.flatMap(({ leaves: own }) => own)
   await scan(page, paper, await sheafOf('damaged.pdf', leaves, { spoilt: 5 }))

@@ -5,7 +5,7 @@ import { aSmallPaper, pile, scan, sheafOf } from './small-pile'
 // A page came out badly and is put on the copier again after it was marked.
 
 test('a new scan takes the place of the old one under the ticks', async ({ page }) => {
-  await signInAs(page, 'h.moss', demoPassword)
+  await signInAs(page, 'r.adeyemi', demoPassword)
   const paper = await aSmallPaper(page, '10R')
   await scan(page, paper, await sheafOf('first.pdf', pile.flatMap(({ leaves }) => leaves)))
   const openRun = async () => {

@@ -13,8 +13,8 @@ export const leastCodeSide = 18 / mmPerPoint
 export const usualCodeSide = 20 / mmPerPoint
 export const mostCodeSide = 40 / mmPerPoint
 
-/** The page that a code stands for. `script` is one printed script, whoever writes on it; `rect` is where the code was printed. */
-export type PrintedPage = Readonly<{ script: string; paperPage: number; rect: PaperRect }>
+/** The page that a code stands for. `script` is one printed script, whoever writes on it; `rect` is where the code was printed; `paper` counts the papers of a sheaf from 0, its own. */
+export type PrintedPage = Readonly<{ script: string; paperPage: number; rect: PaperRect; paper?: number }>
 /** All codes that may be met in a sheaf, by the token that each holds. */
 export type PrintedCodes = ReadonlyMap<string, PrintedPage>
 

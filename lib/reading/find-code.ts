@@ -3,8 +3,8 @@ import type { PageImage } from '@/lib/core/leaf'
 import type { PaperRect, PixelPoint } from '@/lib/core/paper-space'
 import { codesIn, type Box, type FoundCode } from './code-engine'
 
-/** A place where a code was printed: its page (from 1) and that page's size in points. */
-export type CodeWindow = Readonly<{ page: number; rect: PaperRect; pageWidth: number; pageHeight: number }>
+/** A place where a code was printed: its page (from 1), which paper of the sheaf, and that page's size in points. */
+export type CodeWindow = Readonly<{ page: number; paper: number; rect: PaperRect; pageWidth: number; pageHeight: number }>
 type Density = Pick<PageImage, 'dpiX' | 'dpiY'>
 
 /** A skewed and shifted page carries its code so far from where it should be: 15 mm, in points. */

@@ -3,12 +3,16 @@ import type { Db } from '@/db/knex'
 import { listPrintedPages, type PrintedFor } from '@/db/print-runs'
 
 /**
- * All codes that may lie in a sheaf of a paper. Pages printed for one student are one script, whichever print run they come from: a lost
+ * All codes that may lie in a sheaf of these papers, its own first. Pages printed for one student are one script, whichever print run they come from: a lost
  * page printed anew joins the others. A spare script is its own.
  */
-export async function printedCodesOf(db: Db, paperId: string): Promise<PrintedCodes> {
-  const pages = await listPrintedPages(db, paperId)
-  return new Map(pages.map(({ token, paperPage, rect, ...whose }): [string, PrintedPage] => [token, { script: keyOf(whose), paperPage, rect }]))
+export async function printedCodesOf(db: Db, paperIds: readonly string[]): Promise<PrintedCodes> {
+  const codes = new Map<string, PrintedPage>()
+  for (const [paper, paperId] of paperIds.entries()) {
+    const pages = await listPrintedPages(db, paperId)
+    for (const { token, paperPage, rect, ...whose } of pages) codes.set(token, { script: keyOf(whose), paperPage, rect, paper })
+  }
+  return codes
 }
 
 function keyOf({ printedScriptId, classSetId, studentId }: PrintedFor): string {

@@ -14,11 +14,17 @@ export type Coded = Readonly<{ templates: readonly Template[]; codes: PrintedCod
 /** Places where codes were printed, each once. */
 export function codeWindows(codes: PrintedCodes, templates: readonly Template[]): CodeWindow[] {
   const windows = new Map<string, CodeWindow>()
-  for (const { rect, paperPage } of codes.values()) {
-    const page = templates.find((template) => template.page.page === paperPage)?.page
-    if (page) windows.set(`${paperPage} ${rect.x} ${rect.y} ${rect.w}`, { page: paperPage, rect, pageWidth: page.widthPoints, pageHeight: page.heightPoints })
+  for (const printed of codes.values()) {
+    const page = templates.find((template) => isOf(template.page, printed))?.page
+    const { rect, paperPage, paper = 0 } = printed
+    if (page) windows.set(`${paper} ${paperPage} ${rect.x} ${rect.y} ${rect.w}`, { page: paperPage, paper, rect, pageWidth: page.widthPoints, pageHeight: page.heightPoints })
   }
   return [...windows.values()]
+}
+
+/** Whether a page of a paper, or one that a leaf is taken for, is the one that a code stands for. */
+function isOf(one: Readonly<{ page: number; paper?: number }> | Readonly<{ paperPage: number; paper?: number }>, printed: Readonly<{ paperPage: number; paper?: number }> | undefined): boolean {
+  return printed !== undefined && ('page' in one ? one.page : one.paperPage) === printed.paperPage && (one.paper ?? 0) === (printed.paper ?? 0)
 }
 
 type Leaf = Readonly<{ image: PageImage; picture: GreyPicture }>
@@ -46,9 +52,9 @@ export async function readByCode(cv: Cv, leaf: Leaf, coded: Coded, register: () 
 async function withCodeByPrint(picture: GreyPicture, seen: Seen, { codes, windows }: Coded): Promise<Seen> {
   const [guess] = seen.guesses
   if (!seen.clear || !guess) return seen
-  for (const { rect, page } of windows) {
-    const found = page === guess.paperPage ? await codeAt(picture, corners(rect).map((point) => toPixels(guess.homography, point)), isToken) : null
-    if (found) return { ...seen, code: codeOf(found.text, codes, codes.get(found.text)?.paperPage === guess.paperPage) }
+  for (const { rect, page, paper } of windows) {
+    const found = isOf(guess, { paperPage: page, paper }) ? await codeAt(picture, corners(rect).map((point) => toPixels(guess.homography, point)), isToken) : null
+    if (found) return { ...seen, code: codeOf(found.text, codes, isOf(guess, codes.get(found.text))) }
   }
   return seen
 }
@@ -56,7 +62,7 @@ async function withCodeByPrint(picture: GreyPicture, seen: Seen, { codes, window
 /** The leaf registered to the page that its code stands for; null for a code of another paper, or where the print is not that page's. */
 function registered(cv: Cv, { image, picture }: Leaf, { templates, codes }: Coded, { text, corners: symbol }: FoundCode): Seen | null {
   const printed = codes.get(text)
-  const template = printed && templates.find(({ page }) => page.page === printed.paperPage)
+  const template = templates.find(({ page }) => isOf(page, printed))
   if (!printed || !template) return null
   const { rect } = printed
   const map = homographyFrom(symbolCorners(rect), symbol)

@@ -27,7 +27,7 @@ export async function readSheaf(sheafId: string, goOn: () => boolean): Promise<b
   const papers = await papersOf(sheaf)
   const [paper, ...others] = papers as [Paper, ...Paper[]]
   const blank = await Promise.all(papers.map(async (one, k) => (await blankPagesOf(one)).map((page) => (others.length > 0 ? { ...page, paper: k } : page))))
-  const reader = await openLeaves(keptPath(sheaf.sha256), blank.flat(), env.SHEAFMARK_THREADS, await printedCodesOf(db(), sheaf.paperId))
+  const reader = await openLeaves(keptPath(sheaf.sha256), blank.flat(), env.SHEAFMARK_THREADS, await printedCodesOf(db(), papers.map(({ id }) => id)))
   try {
     await transaction((trx) => startSheaf(trx, sheafId, reader.pageCount))
     if (!(await readMissing(reader, sheaf, others.length > 0 ? null : paper.pages.length, goOn))) return false

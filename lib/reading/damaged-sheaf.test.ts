@@ -90,7 +90,7 @@ describe('pages made to exhaust their reader', () => {
   const expected: Readonly<Record<string, readonly string[]>> = {
     'g4 of ten thousand million pixels': ['page_too_large'], 'bitmap of thousands of million pixels': ['page_too_large'], 'jpeg larger than it says': ['page_too_large'],
     'jpeg 2000 larger than it says': ['page_too_large'], 'content that swells': ['page_too_large'], 'content that swells twice': ['page_too_large'], 'picture that swells twice': ['page_too_large'],
-    'forms in forms in forms': ['page_too_large'], 'a form inside itself': ['read'], 'a mask that is its own mask': ['read'], 'a page as large as a field': ['page_too_large'], 'tiles without end': ['page_too_large'],
+    'forms in forms in forms': ['page_too_large'], 'a form inside itself': ['read'], 'a mask that is its own mask': ['read'], 'a page as large as a field': ['page_too_large'], 'tiles without end': ['page_too_large'], 'tiles without a step': ['page_too_large'],
     'resources in a circle': ['read'], 'a length that is itself': ['read'], 'a tree in a circle': ['read'], 'a tree that doubles': ['read', 'read'], 'a million brackets': ['page_unreadable'], 'a string without end': ['page_unreadable'],
     'a million saved states': ['read'], 'a function in a circle': ['read'], 'one dot for a page': ['page_unreadable'], 'a picture of one line': ['page_unreadable'], 'jbig2 of noise': ['page_unreadable'], 'a script, a file and a note': ['read'],
   }

@@ -149,10 +149,10 @@ class PageCopier {
     return [writeValue(new Map(entries)), streamWord, bytes, endWord]
   }
 
-  /** How often a pattern may have to be laid to cover the page. */
+  /** How often a pattern may have to be laid to cover the page. One that says no step is without end to the engine. */
   private tiles(pattern: PdfDict): number {
     const [a = 1, b = 0, c = 0, d = 1] = this.pdf.list(pattern.get('Matrix')).map((value) => this.pdf.number(value) ?? 0)
-    const step = ['XStep', 'YStep'].map((key) => this.pdf.number(pattern.get(key)) ?? 1)
+    const step = ['XStep', 'YStep'].map((key) => this.pdf.number(pattern.get(key)) ?? 0)
     const { width, height } = this.source.box
     return (width * height) / Math.max(1e-9, Math.abs(step[0]! * step[1]! * (a * d - b * c)))
   }

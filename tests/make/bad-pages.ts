@@ -52,6 +52,7 @@ export async function bombs(): Promise<Readonly<Record<string, Buffer>>> {
     'a mask that is its own mask': onePage(oneImage, whole, [image(`${dct}/SMask 5 0 R`, jpeg)]),
     'a page as large as a field': onePage(`/MediaBox[0 0 900000 900000]`, '0 0 9 9 re f'),
     'tiles without end': onePage(`${box}/Resources<</Pattern<</P 5 0 R>>>>`, '/Pattern cs /P scn 0 0 595 842 re f', [{ dict: '/Type/Pattern/PatternType 1/PaintType 1/TilingType 1/BBox[0 0 1 1]/XStep 0.001/YStep 0.001/Resources<<>>', data: Buffer.from('0 0 1 1 re f') }]),
+    'tiles without a step': onePage(`${box}/Resources<</Pattern<</P 5 0 R>>>>`, '/Pattern cs /P scn 0 0 595 842 re f', [{ dict: '/Type/Pattern/PatternType 1/PaintType 1/TilingType 1/BBox[0 0 5 5]/YStep 5/Resources<<>>', data: Buffer.from('0 0 1 1 re f') }]),
     'resources in a circle': onePage(`${box}/Resources 5 0 R`, '/I Do', ['<</XObject 6 0 R>>', '<</I 5 0 R/J 6 0 R>>']),
     'a length that is itself': rawPdf(['<</Type/Catalog/Pages 2 0 R>>', '<</Type/Pages/Count 1/Kids[3 0 R]>>', `<</Type/Page/Parent 2 0 R/Contents 4 0 R ${box}>>`, '<</Length 4 0 R>>\nstream\n0 0 9 9 re f\nendstream']),
     'a tree in a circle': rawPdf(['<</Type/Catalog/Pages 2 0 R>>', '<</Type/Pages/Count 9/Kids[2 0 R 3 0 R 2 0 R]>>', `<</Type/Pages/Kids[2 0 R 4 0 R 3 0 R]>>`, `<</Type/Page/Parent 2 0 R ${box}>>`]),

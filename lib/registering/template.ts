@@ -4,6 +4,7 @@ import { blocksOf, type Block } from './block-fit'
 import { clearOfPrint } from './clear-of-print'
 import { level } from './level'
 import { withMats, type Cv } from './opencv'
+import { repeats } from './repeats'
 import { boxShrink, matOf } from './shrink'
 import { makeTracks, type Tracks } from './track'
 
@@ -43,11 +44,12 @@ export function makeTemplate(cv: Cv, page: BlankPage): Template {
     corners.push(found[k]!, found[k + 1]!)
     patches.push(patch)
   }
+  const sure = corners.flatMap((x, k) => (k % 2 || repeats(white, Math.round(x), Math.round(corners[k + 1]!)) ? [] : [x, corners[k + 1]!]))
   const ink12 = boxShrink(ink, 2)
   return {
     page, white, ink25: ink, ink12, inked12: inkedPart(ink12), blocks25: blocksOf(ink), clear: clearOfPrint(white), free: clearOfPrint(white, 2), corners: Float32Array.from(corners), patches,
-    tracks: makeTracks(white, corners),
-    tracks50: makeTracks(boxShrink(white, 2), everyOther(corners)),
+    tracks: makeTracks(white, sure),
+    tracks50: makeTracks(boxShrink(white, 2), everyOther(sure)),
   }
 }
 

@@ -12,9 +12,10 @@ export class FileWindow {
     this.size = part ? Math.max(0, Math.min(part.size, size - part.at)) : size
   }
 
-  /** Up to `length` bytes from `at`; fewer at the end of the file. */
-  read(at: number, length: number): Buffer {
-    const wanted = Math.max(0, Math.min(length, this.size - at))
+  /** Up to `length` bytes from `place`; fewer at the end of the file. A broken file may ask for a place between two bytes. */
+  read(place: number, length: number): Buffer {
+    const at = Math.floor(place)
+    const wanted = Math.max(0, Math.min(Math.floor(length), this.size - at))
     const bytes = Buffer.allocUnsafeSlow(wanted)
     let got = 0
     while (got < wanted) {

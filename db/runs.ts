@@ -1,4 +1,5 @@
 import { newId } from '@/lib/core/ids'
+import type { ImagePart } from '@/lib/core/leaf'
 import type { Homography } from '@/lib/core/paper-space'
 import type { Round } from '@/lib/core/stamp'
 import type { Db } from './knex'
@@ -18,23 +19,24 @@ export async function listRunResponses(db: Db, questionId: string): Promise<RunR
   return rows.map((row) => ({ id: row.id, scriptId: row.script, classSetId: row.set, className: row.class, studentName: row.family === null ? null : `${row.given} ${row.family}` }))
 }
 
-/** A page of a script with the leaf that shows it now, and since when (ms). Sizes of the leaf in pixels of its stored image. */
+/** A page of a script with the leaf that shows it now, and since when (ms). Sizes of the leaf in pixels of its stored image; `part` is the leaf's own part of an image that shows two pages. */
 export type ScriptPage = Readonly<{
   id: string; scriptId: string; paperPage: number | null; position: number
-  leaf: Readonly<{ id: string; width: number; height: number; homography: Homography; since: number }> | null
+  leaf: Readonly<{ id: string; width: number; height: number; part: ImagePart | null; homography: Homography; since: number }> | null
 }>
 type PageRow = {
-  id: string; script_id: string; paper_page: number | null; position: number; leaf_id: string | null; width: number | null; height: number | null; homography: string | null; since: number
+  id: string; script_id: string; paper_page: number | null; position: number; leaf_id: string | null; width: number | null; height: number | null; homography: string | null; part: string | null; since: number
 }
 
 const pagesWithLeaves = (db: Db) => db('script_pages').leftJoin('leaves', 'leaves.id', 'script_pages.leaf_id').orderBy('script_pages.position')
-  .select('script_pages.id', 'script_pages.script_id', 'script_pages.paper_page', 'script_pages.position', { leaf_id: 'leaves.id' }, 'leaves.width', 'leaves.height', 'leaves.homography', db.raw('max(leaves.read_at, coalesce(leaves.decided_at, 0)) as since'))
+  .select('script_pages.id', 'script_pages.script_id', 'script_pages.paper_page', 'script_pages.position', { leaf_id: 'leaves.id' }, 'leaves.width', 'leaves.height', 'leaves.homography', db.raw('max(leaves.read_at, coalesce(leaves.decided_at, 0)) as since'),
+    db.raw(`case when leaves.half is not null then json_extract(leaves.finding, '$.reading.part') end as part`))
 
 function toScriptPage(row: PageRow): ScriptPage {
   const whole = row.leaf_id !== null && row.homography !== null && row.width !== null && row.height !== null
   return {
     id: row.id, scriptId: row.script_id, paperPage: row.paper_page, position: row.position,
-    leaf: whole ? { id: row.leaf_id!, width: row.width!, height: row.height!, homography: JSON.parse(row.homography!) as Homography, since: row.since } : null,
+    leaf: whole ? { id: row.leaf_id!, width: row.width!, height: row.height!, part: row.part === null ? null : (JSON.parse(row.part) as ImagePart), homography: JSON.parse(row.homography!) as Homography, since: row.since } : null,
   }
 }
 

@@ -1,6 +1,6 @@
 import type { PaperStanding } from '@/lib/core/actor'
 import type { Paper } from '@/lib/core/paper'
-import { toPaper, type PaperRect } from '@/lib/core/paper-space'
+import { corners, toPaper, type PaperRect } from '@/lib/core/paper-space'
 import type { PagePicture } from '@/lib/core/run'
 import { cutKey, type Cut } from '@/lib/cutting/cut-key'
 import type { ScriptPage } from '@/db/runs'
@@ -23,13 +23,13 @@ export function cutOf(page: ScriptPage, rect: PaperRect, masks: readonly PaperRe
   return page.leaf && { leafId: page.leaf.id, homography: page.leaf.homography, rect, masks }
 }
 
-/** The whole page in paper space: of the blank paper, or the sheet itself for an extra page. Null without a leaf. */
+/** The whole page in paper space: of the blank paper, or the sheet itself for an extra page (never the other page on its image, which may be another student's). Null without a leaf. */
 export function wholePage(page: ScriptPage, paper: Pick<Paper, 'pages'>): PaperRect | null {
   const blank = paper.pages.find((candidate) => candidate.page === page.paperPage)
   if (blank) return { x: 0, y: 0, w: blank.width, h: blank.height }
   if (!page.leaf) return null
-  const { homography, width, height } = page.leaf
-  const at = [{ x: 0, y: 0 }, { x: width, y: 0 }, { x: width, y: height }, { x: 0, y: height }].map((corner) => toPaper(homography, corner))
+  const { homography, part, width, height } = page.leaf
+  const at = corners(part ?? { x: 0, y: 0, w: width, h: height }).map(({ x, y }) => toPaper(homography, { x, y }))
   return { x: 0, y: 0, w: Math.max(...at.map(({ x }) => x)), h: Math.max(...at.map(({ y }) => y)) }
 }
 

@@ -95,7 +95,7 @@ describe('placing a loose sheet', () => {
     await expect(placeLeaf(teacher, place)).rejects.toMatchObject({ code: 'place_taken' })
     await placeLeaf(teacher, { ...place, instead: true })
     const page = (await table()).scripts[0]!.pages[1]!
-    expect(page).toEqual({ ...taken, leafId: spare })
+    expect(page).toEqual({ ...taken, leafId: spare, older: 1 })
     expect(await db()('leaves').where({ id: taken.leafId! }).first('state', 'script_page_id')).toEqual({ state: 'placed', script_page_id: taken.id })
     // taken out again, the older scan holds as before
     await layLeaf(teacher, { leafId: spare, to: 'loose' })

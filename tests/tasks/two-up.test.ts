@@ -2,13 +2,16 @@ import path from 'node:path'
 import sharp from 'sharp'
 import { afterAll, beforeAll, expect, it } from 'vitest'
 import { db } from '@/db/knex'
+import { listScriptPages } from '@/db/runs'
 import type { Actor } from '@/lib/core/actor'
 import { newId } from '@/lib/core/ids'
 import { env } from '@/lib/infra/env'
+import { addExtraPage } from '@/lib/tasks/add-extra-page'
 import { layLeaf } from '@/lib/tasks/lay-leaf'
 import { placeLeaf } from '@/lib/tasks/place-leaf'
 import { readLeafCrop } from '@/lib/tasks/read-leaf-crop'
 import { readLeafPicture } from '@/lib/tasks/read-leaf-picture'
+import { readScriptPagePicture } from '@/lib/tasks/read-strip-picture'
 import { readSheaf } from '@/lib/tasks/read-sheaf'
 import { readSortingTable } from '@/lib/tasks/read-sorting-table'
 import { aClassSetPaper } from '@/tests/make/class-set'
@@ -66,4 +69,14 @@ it('a leaf that a person takes out and puts back lies on its own half again', as
   expect(loose[0]!.width! / loose[0]!.height!).toBeLessThan(0.8)
   await placeLeaf(teacher, { leafId: right.id, target: { scriptId: script_id }, paperPage: 2 })
   expect((await db()('leaves').where({ id: right.id }).first<{ homography: string }>()).homography).toBe(before.homography)
+})
+
+it('a leaf put in as an extra page shows its own half alone, not the student beside it', async () => {
+  const [left] = await leaves()
+  const scripts = (await readSortingTable(teacher, paperId)).scripts
+  await addExtraPage(teacher, { leafId: left!.id, target: { scriptId: scripts[1]!.id } })
+  const extra = (await listScriptPages(db(), scripts[1]!.id)).at(-1)!
+  const { width, height } = await sharp((await readScriptPagePicture(teacher, { scriptPageId: extra.id, dpi: 72, key: null })).bytes).metadata()
+  expect(extra.paperPage).toBeNull()
+  expect(width / height).toBeLessThan(0.8)
 })

@@ -10,7 +10,7 @@ test('a pile is sorted by keyboard alone', async ({ page }) => {
   // The last page is scanned twice.
   await scan(page, paper, await sheafOf('keys.pdf', [...pile.flatMap(({ leaves }) => leaves), pile[4]!.leaves[1]]))
   const name = await test.step('the scan page leads to the table', async () => {
-    await page.getByRole('link', { name: /Sort 1 loose sheet/ }).press('Enter')
+    await page.getByRole('link', { name: 'Sort 1 loose sheet and the names' }).press('Enter')
     await expect(page.getByRole('heading', { name: 'Leaf 11' })).toBeVisible()
     await expect(page.getByText('perhaps scanned twice')).toBeVisible()
     await expectAccessible(page)

@@ -13,7 +13,7 @@ test('a damaged page is named, and the good pages are kept', async ({ page }) =>
   await expectAccessible(page)
   await page.goto(`${paper}/sort`)
   await expect(page.getByRole('heading', { name: 'Leaf 6' })).toBeVisible()
-  await expect(page.getByText('its picture cannot be read')).toBeVisible()
+  await expect(page.getByText('page 6 of the file cannot be read: scan that sheet again')).toBeVisible()
   await expectAccessible(page)
   await page.keyboard.press('d')
   await expect(page.getByRole('heading', { name: 'Leaf 6' })).toBeHidden()

@@ -84,7 +84,7 @@ async function offerFaulty(page: Page): Promise<void> {
   writeFileSync(words, 'Dear parents and carers, the boat leaves at nine.\n')
   const locked = path.join(folder, 'locked.pdf')
   execFileSync('qpdf', ['--encrypt', 'heron', 'slow heron', '256', '--', classSetPath(set, 'paper.pdf'), locked])
-  for (const [file, sentence] of [[words, 'This is not a PDF.'], [locked, 'This PDF asks for a password. Save a copy without one and choose that copy.']] as const) {
+  for (const [file, sentence] of [[words, 'This is neither a PDF nor a picture (JPEG, PNG, TIFF).'], [locked, 'This PDF asks for a password. Save a copy without one and choose that copy.']] as const) {
     await choose(page, file)
     await expect(page.getByRole('alert').filter({ hasText: sentence })).toBeVisible({ timeout: 60_000 })
   }

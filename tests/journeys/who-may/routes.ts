@@ -70,7 +70,7 @@ export const routeRows: readonly RouteRow[] = [
   ...['returned-zip', 'returned-pdf'].flatMap((what) => {
     const door = `GET /api/class-sets/[classSetId]/${what}`
     return [
-      route(door, 'the class that is handed back', (o) => `/api/class-sets/${o.back.classSet}/${what}`, '                      401    200   404   404    404    404   404   404'),
+      route(door, 'the class that is handed back', (o) => `/api/class-sets/${o.back.classSet}/${what}`, '                      401    200   404   403    404    404   404   404'),
       route(door, 'a class that is not', (o) => `/api/class-sets/${o.half.classSet}/${what}`, '                                401    404   404   403    404    404   404   404'),
       route(door, 'the class of the other', (o) => `/api/class-sets/${o.others.classSet}/${what}`, '                           401    404   404   404    404    404   404   404'),
       route(door, 'no class', () => `/api/class-sets/${nothing}/${what}`, '                                                    401    404   404   404    404    404   404   404'),

@@ -1,8 +1,8 @@
 import { PDFDocument } from 'pdf-lib'
 import type { ModerationRecord, RecordSection, RecordTable } from '@/lib/core/moderation-record'
 import { Typesetter } from '@/lib/typesetting/typesetter'
+import { describeFile } from '@/lib/typesetting/describe-file'
 import { columnWidths } from './column-widths'
-import { describe } from './returned-script'
 import { Shapes } from './shapes'
 import { ink, sheetSize, type Sheet, type Style } from './sheet'
 import { Structure } from './structure'
@@ -19,7 +19,7 @@ const [leastGap, mostGap] = [8, 24]
 /** A moderation record as a PDF, A4, tagged, with the same words as its page. `builtAt` is written into the file. */
 export async function buildRecord(record: ModerationRecord, builtAt: Date): Promise<Uint8Array> {
   const pdf = await PDFDocument.create({ updateMetadata: false })
-  describe(pdf, record.title, builtAt)
+  describeFile(pdf, record.title, builtAt)
   const type = await Typesetter.for(pdf.context)
   const structure = new Structure()
   const sheets = new SummarySheets({ pdf, type, structure, shapes: new Shapes(pdf.context) })

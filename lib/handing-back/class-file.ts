@@ -1,6 +1,7 @@
 import { PDFDocument, type PDFPage } from 'pdf-lib'
+import { describeFile } from '@/lib/typesetting/describe-file'
 import { addOutline, type Bookmark } from './add-outline'
-import { addScript, describe, type LoadedSheaves, type ScriptToReturn } from './returned-script'
+import { addScript, type LoadedSheaves, type ScriptToReturn } from './returned-script'
 import type { ScriptPage } from './returned-page'
 import { Shapes } from './shapes'
 import { StreamedFile } from './streamed-file'
@@ -16,7 +17,7 @@ export type BundledScript = Readonly<{ name: string; sheaves: LoadedSheaves }> &
  */
 export async function* classFile(title: string, builtAt: Date, scripts: AsyncIterable<BundledScript>): AsyncGenerator<Uint8Array> {
   const pdf = await PDFDocument.create({ updateMetadata: false })
-  describe(pdf, title, builtAt)
+  describeFile(pdf, title, builtAt)
   const type = await Typesetter.for(pdf.context)
   const shapes = new Shapes(pdf.context)
   const file = new StreamedFile(pdf)

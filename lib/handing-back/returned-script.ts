@@ -10,6 +10,7 @@ import { Structure } from './structure'
 import type { Summary } from './summary'
 import { addSummary } from './add-summary'
 import { Typesetter } from '@/lib/typesetting/typesetter'
+import { describeFile } from '@/lib/typesetting/describe-file'
 
 /** One student's script to hand back. `builtAt` is written into the file, so that the same script built again is the same file. */
 export type ScriptToReturn = Readonly<{
@@ -36,7 +37,7 @@ export async function loadSheaf(bytes: Uint8Array): Promise<PDFDocument> {
  */
 export async function buildReturnedScript(sheaves: LoadedSheaves, { summary, title, pages, builtAt, signing = null }: ScriptToReturn): Promise<Uint8Array> {
   const pdf = await PDFDocument.create({ updateMetadata: false })
-  describe(pdf, title ?? (summary ? `${summary.title}, ${summary.student}` : ''), builtAt)
+  describeFile(pdf, title ?? (summary ? `${summary.title}, ${summary.student}` : ''), builtAt)
   const type = await Typesetter.for(pdf.context)
   const structure = new Structure()
   addScript({ pdf, type, shapes: new Shapes(pdf.context), structure, signing }, sheaves, { summary, pages })
@@ -68,14 +69,4 @@ function sheafOf(sheaves: LoadedSheaves, { sheaf, index }: ScriptPage): PDFDocum
   if (!source) throw new AppError('sheaf_missing')
   if (index < 0 || index >= source.getPageCount()) throw new AppError('not_found', { page: index + 1 })
   return source
-}
-
-/** Names a file, its language and its maker. */
-export function describe(pdf: PDFDocument, title: string, builtAt: Date): void {
-  pdf.setTitle(title, { showInWindowTitleBar: true })
-  pdf.setLanguage('en-GB')
-  pdf.setCreator('Sheafmark')
-  pdf.setProducer('Sheafmark')
-  pdf.setCreationDate(builtAt)
-  pdf.setModificationDate(builtAt)
 }

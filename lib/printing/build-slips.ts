@@ -3,6 +3,7 @@ import type { Face } from '@/lib/typesetting/font-files'
 import { num, packed } from '@/lib/typesetting/operators'
 import { setLine } from '@/lib/typesetting/set-line'
 import { Typesetter } from '@/lib/typesetting/typesetter'
+import { describeFile } from '@/lib/typesetting/describe-file'
 
 /** What a student needs to sign in for the first time. */
 export type PrintedSlip = Readonly<{ name: string; userName: string; code: string }>
@@ -18,7 +19,7 @@ const figures = 300
 /** Slips to print and cut: a strip a student across the sheet, a dashed line between two, as many as a sheet holds. */
 export async function buildSlips({ slips, sheet, className, school, address, builtAt }: SlipSheets): Promise<Uint8Array> {
   const pdf = await PDFDocument.create({ updateMetadata: false })
-  describe(pdf, `Sign-in slips, ${className}`, builtAt)
+  describeFile(pdf, `Sign-in slips, ${className}`, builtAt)
   const type = await Typesetter.for(pdf.context)
   const { width, height } = sheetSizes[sheet]
   const onSheet = Math.floor((height - 2 * margin) / stripHeight)
@@ -58,13 +59,4 @@ function fitted(words: string, x: number, down: number, width: number, line: (wo
 function cuts(strips: number, width: number, height: number): string {
   const at = Array.from({ length: strips }, (_, k) => num(height - margin - (k + 1) * stripHeight))
   return `q 0.5 G 0.6 w [4 3] 0 d ${at.map((y) => `0 ${y} m ${num(width)} ${y} l`).join(' ')} S Q`
-}
-
-function describe(pdf: PDFDocument, title: string, builtAt: Date): void {
-  pdf.setTitle(title, { showInWindowTitleBar: true })
-  pdf.setLanguage('en-GB')
-  pdf.setCreator('Sheafmark')
-  pdf.setProducer('Sheafmark')
-  pdf.setCreationDate(builtAt)
-  pdf.setModificationDate(builtAt)
 }

@@ -1,5 +1,6 @@
 import { PDFDocument, PDFName, type PDFRef } from 'pdf-lib'
 import type { PaperPage } from '@/lib/core/paper'
+import { describeFile } from '@/lib/typesetting/describe-file'
 import { packed } from '@/lib/typesetting/operators'
 import { Typesetter } from '@/lib/typesetting/typesetter'
 import { blankForms } from './blank-forms'
@@ -30,7 +31,7 @@ export type PackPage = Readonly<{ script: number; paperPage: number }> | null
  */
 export async function buildPrintPack({ blank, pages, places, scripts, twoSided, title, builtAt }: PrintPack): Promise<Uint8Array> {
   const pdf = await PDFDocument.create({ updateMetadata: false })
-  describe(pdf, title, builtAt)
+  describeFile(pdf, title, builtAt, null)
   const forms = await blankForms(pdf, blank, pages)
   const type = await Typesetter.for(pdf.context)
   for (const page of packPages(scripts.length, pages.length, twoSided)) {
@@ -58,12 +59,4 @@ function addPage(pdf: PDFDocument, { width, height }: PaperPage, form: PDFRef | 
   const page = pdf.addPage([width, height])
   page.node.set(PDFName.of('Contents'), packed(pdf.context, `${form ? 'q /Blank Do Q\n' : ''}${ink}`))
   page.node.set(PDFName.of('Resources'), pdf.context.obj({ ...(form ? { XObject: { Blank: form } } : {}), Font: type.resources() }))
-}
-
-function describe(pdf: PDFDocument, title: string, builtAt: Date): void {
-  pdf.setTitle(title, { showInWindowTitleBar: true })
-  pdf.setCreator('Sheafmark')
-  pdf.setProducer('Sheafmark')
-  pdf.setCreationDate(builtAt)
-  pdf.setModificationDate(builtAt)
 }
